@@ -1,0 +1,1 @@
+"""What every stage stands on: places in text, findings, typed quantities, YAML with positions."""

@@ -1,0 +1,152 @@
+"""The one registry of findings.
+
+A number is a letter for the subject and three digits; it is never given to another fault. A name
+states the fault and reads well after "accept". Each code has an explanation page in
+`explanations/` beside this module, whose wrong and mended examples run as tests.
+
+Letters: N notation, Q quantities, K catalogue, S stoichiometry, B bench and vessels, X acid–base
+and partition, H hazards, W waste, E editions, P prep and print.
+"""
+
+from __future__ import annotations
+
+from watchglass.base.findings import Code, Severity
+
+_ERROR, _WARNING, _NOTE = Severity.ERROR, Severity.WARNING, Severity.NOTE
+
+# -- N: notation -------------------------------------------------------------------------------
+TEXT_NOT_UTF8 = Code("N101", "text-not-utf8", _ERROR, "the file is not UTF-8 text")
+SOURCE_TOO_LARGE = Code("N102", "source-too-large", _ERROR, "the file is beyond the size read")
+NESTED_TOO_DEEPLY = Code("N103", "nested-too-deeply", _ERROR, "blocks or brackets nest too deeply")
+TOO_MANY_MARKS = Code("N104", "too-many-marks", _ERROR, "the file holds more marks than are read")
+MARK_NOT_CLOSED = Code("N110", "mark-not-closed", _ERROR, "a brace opens and never closes")
+MARK_NOT_READ = Code("N111", "mark-not-read", _ERROR, "a mark cannot be read")
+MARK_EMPTY = Code("N112", "mark-empty", _ERROR, "a mark has nothing in it")
+MARK_LOST = Code("N113", "mark-lost", _ERROR, "a brace stands where no mark can be")
+BRACE_ALONE = Code("N114", "brace-alone", _ERROR, "a brace closes what was not opened")
+ACT_UNKNOWN = Code("N115", "act-unknown", _ERROR, "a word is no act of the bench")
+CLAUSE_UNFIT = Code("N116", "clause-unfit", _ERROR, "a clause does not belong to its act")
+CLAUSE_TWICE = Code("N117", "clause-twice", _ERROR, "a clause stands twice in one act")
+CLAUSE_MISSING = Code("N118", "clause-missing", _ERROR, "an act lacks a clause it needs")
+EXPRESSION_NOT_READ = Code("N119", "expression-not-read", _ERROR, "an expression cannot be read")
+BLOCK_UNKNOWN = Code("N120", "block-unknown", _ERROR, "a `:::` block is of no known kind")
+BLOCK_NOT_CLOSED = Code("N121", "block-not-closed", _ERROR, "a `:::` block is never closed")
+BLOCK_END_ALONE = Code("N122", "block-end-alone", _ERROR, "a `:::` closes nothing")
+BLOCK_ARGUMENT = Code("N123", "block-argument", _ERROR, "a `:::` line says what is not understood")
+ANSWER_ALONE = Code("N124", "answer-alone", _ERROR, "an answer stands outside a question")
+FRONT_MATTER_MISSING = Code("N130", "front-matter-missing", _ERROR, "there is no front matter")
+FRONT_MATTER_OPEN = Code("N131", "front-matter-open", _ERROR, "the front matter is not closed")
+YAML_NOT_READ = Code("N140", "yaml-not-read", _ERROR, "the YAML cannot be read")
+KEY_TWICE = Code("N141", "key-twice", _ERROR, "a key stands twice")
+YAML_REFUSED = Code("N142", "yaml-refused", _ERROR, "an anchor, alias, tag or merge is used")
+FIELD_UNKNOWN = Code("N143", "field-unknown", _ERROR, "a field is not known here")
+FIELD_MISSING = Code("N144", "field-missing", _ERROR, "a field that is needed is missing")
+FIELD_UNFIT = Code("N145", "field-unfit", _ERROR, "a field holds another kind of value")
+MARK_IN_YAML = Code("N146", "mark-in-yaml", _ERROR, "a mark stands in YAML without quotes")
+STEP_NUMBER_DIFFERS = Code(
+    "N150", "step-number-differs", _WARNING, "a typed step number differs from the counted one"
+)
+NAME_UNFIT = Code("N160", "name-unfit", _ERROR, "a name cannot be told from a number or unit")
+NAME_RESERVED = Code("N161", "name-reserved", _ERROR, "a name is an act, a clause word or a unit")
+NAME_TWICE = Code("N162", "name-twice", _ERROR, "a name is declared twice")
+NAME_UNKNOWN = Code("N163", "name-unknown", _ERROR, "a name is declared nowhere")
+NAME_OF_OTHER_KIND = Code("N164", "name-of-other-kind", _ERROR, "a name is of another kind")
+STEP_UNKNOWN = Code("N165", "step-unknown", _ERROR, "a step is named that does not exist yet")
+FUNCTION_UNKNOWN = Code("N166", "function-unknown", _ERROR, "an expression calls no known function")
+FUNCTION_UNFIT = Code("N167", "function-unfit", _ERROR, "a function is given what it cannot take")
+PLACES_DIFFER = Code("N168", "places-differ", _ERROR, "a sentence names two places for one charge")
+MATERIAL_UNUSED = Code("N180", "material-unused", _WARNING, "a material is declared and never used")
+VESSEL_UNUSED = Code("N181", "vessel-unused", _WARNING, "a vessel is declared and never used")
+NOT_YET_RUN = Code("N190", "not-yet-run", _NOTE, "acts are read and checked, not yet run")
+CODE_TWICE = Code("N191", "code-twice", _ERROR, "two procedures have one code")
+ACCEPT_WITHOUT_REASON = Code(
+    "N192", "accept-without-reason", _ERROR, "a finding is accepted without a reason"
+)
+ACCEPT_WITHOUT_EFFECT = Code(
+    "N193", "accept-without-effect", _WARNING, "what is accepted is not found"
+)
+ACCEPT_UNKNOWN = Code("N194", "accept-unknown", _ERROR, "what is accepted is no finding's name")
+TIME_OVER_PERIOD = Code("N195", "time-over-period", _WARNING, "the steps take more than the period")
+LINK_BROKEN = Code("N196", "link-broken", _ERROR, "a link leads nowhere")
+PROCEDURE_UNKNOWN = Code("N197", "procedure-unknown", _ERROR, "a procedure is named that is not there")
+ACT_WITHOUT_PLACE = Code(
+    "N198", "act-out-of-place", _ERROR, "an act stands where nothing happens at the bench"
+)
+ADDRESS_UNFIT = Code("N199", "address-unfit", _ERROR, "a code cannot serve as an address")
+
+# -- Q: quantities -----------------------------------------------------------------------------
+NUMBER_NOT_READ = Code("Q101", "number-not-read", _ERROR, "a number cannot be read")
+DECIMAL_COMMA = Code("Q102", "decimal-comma", _ERROR, "a number is written with a comma")
+DIGITS_APART = Code("Q103", "digits-apart", _ERROR, "a number is written in groups")
+UNIT_MISSING = Code("Q104", "unit-missing", _ERROR, "a number has no unit")
+UNIT_UNKNOWN = Code("Q105", "unit-unknown", _ERROR, "a unit is not in the list")
+NORMALITY = Code("Q106", "normality", _ERROR, "a strength is given as normality")
+PERCENT_WITHOUT_BASIS = Code(
+    "Q107", "percent-without-basis", _ERROR, "a percentage does not say of what"
+)
+UNIT_AMBIGUOUS = Code("Q108", "unit-ambiguous", _ERROR, "a unit can be read in two ways")
+DIMENSION_WRONG = Code("Q109", "dimension-wrong", _ERROR, "a quantity has another dimension")
+QUANTITY_NEGATIVE = Code("Q110", "quantity-negative", _ERROR, "a quantity cannot be negative")
+BELOW_ABSOLUTE_ZERO = Code("Q111", "below-absolute-zero", _ERROR, "nothing is that cold")
+DIMENSIONS_CLASH = Code("Q112", "dimensions-clash", _ERROR, "two dimensions do not go together")
+SIZE_IMPLAUSIBLE = Code(
+    "Q113", "size-implausible", _WARNING, "a quantity is beyond a teaching laboratory"
+)
+QUANTITY_UNTYPED = Code("Q114", "quantity-untyped", _WARNING, "a quantity stands outside a mark")
+WORDS_DISAGREE = Code("Q115", "words-disagree", _ERROR, "words and their mark say different things")
+RANGE_REVERSED = Code("Q116", "range-reversed", _ERROR, "a range ends below its start")
+SHARE_ABOVE_ONE = Code("Q117", "share-above-one", _ERROR, "a share is more than the whole")
+
+# -- K: catalogue ------------------------------------------------------------------------------
+SUBSTANCE_UNKNOWN = Code("K101", "substance-unknown", _ERROR, "a substance is not in the catalogue")
+CAS_WRONG = Code("K102", "cas-wrong", _ERROR, "a CAS number has a wrong check digit")
+FORMULA_NOT_READ = Code("K103", "formula-not-read", _ERROR, "a formula cannot be read")
+FORMULA_AND_SMILES_DIFFER = Code(
+    "K104", "formula-and-smiles-differ", _ERROR, "formula and SMILES have other atoms"
+)
+SUBSTANCE_NAME_TWICE = Code("K105", "substance-name-twice", _ERROR, "two substances share a name")
+GLASSWARE_UNKNOWN = Code("K106", "glassware-unknown", _ERROR, "a vessel is of no known type")
+SIZE_UNUSUAL = Code("K107", "size-unusual", _WARNING, "a vessel is of a size not made")
+SOURCE_MISSING = Code("K108", "source-missing", _WARNING, "a value does not say where it is from")
+VALUE_IMPLAUSIBLE = Code("K109", "value-implausible", _WARNING, "a value cannot well be true")
+SMILES_NOT_READ = Code("K110", "smiles-not-read", _ERROR, "a SMILES cannot be read")
+MATERIAL_NOT_READ = Code("K111", "material-not-read", _ERROR, "a material cannot be read")
+
+# -- S: stoichiometry --------------------------------------------------------------------------
+EQUATION_NOT_READ = Code("S101", "equation-not-read", _ERROR, "an equation cannot be read")
+EQUATION_UNBALANCED = Code("S102", "equation-unbalanced", _ERROR, "an equation does not balance")
+SPECIES_UNKNOWN = Code("S103", "species-unknown", _ERROR, "an equation names no known substance")
+SPECIES_AMBIGUOUS = Code("S104", "species-ambiguous", _ERROR, "a formula fits two materials")
+DENSITY_UNKNOWN = Code("S110", "density-unknown", _ERROR, "a density is needed and not known")
+PROVIDED_EXCEEDED = Code("S111", "provided-exceeded", _ERROR, "the steps use more than is provided")
+ALL_OF_NOTHING = Code("S112", "all-of-nothing", _ERROR, "all of a material is used, none is provided")
+LIMITING_UNFIT = Code("S113", "limiting-unfit", _ERROR, "the limiting reactant does not react")
+
+# -- E: editions -------------------------------------------------------------------------------
+ACT_IN_HIDDEN_BLOCK = Code(
+    "E110", "act-in-hidden-block", _ERROR, "an act stands where students do not see it"
+)
+
+
+def _collect() -> tuple[Code, ...]:
+    return tuple(
+        sorted((value for value in globals().values() if isinstance(value, Code)), key=_number)
+    )
+
+
+def _number(code: Code) -> str:
+    return code.number
+
+
+ALL: tuple[Code, ...] = _collect()
+_BY_WORD = {word: code for code in ALL for word in (code.number, code.name)}
+
+
+def find(word: str) -> Code | None:
+    """Find a code by number (in either case) or name; None where there is none."""
+    return _BY_WORD.get(word) or _BY_WORD.get(word.upper())
+
+
+def words() -> tuple[str, ...]:
+    """Give every number and name, for near misses."""
+    return tuple(_BY_WORD)

@@ -1,0 +1,269 @@
+"""YAML as written: every scalar stays text, every node knows its place.
+
+PyYAML's `compose` with the C loader does the reading; its values are never converted, since `0.50`
+must keep its nought, `NO` is nitric oxide and `12:30` a time. Anchors, aliases, tags and merges
+are refused: they make a file mean what it does not show. PyYAML counts other line ends than
+editors do, so only its offsets are used.
+"""
+
+from __future__ import annotations
+
+import re
+from dataclasses import dataclass
+from typing import TYPE_CHECKING, Any
+
+from watchglass.base import codes
+from watchglass.base.findings import Finding, Related
+from watchglass.base.scalars import offsets
+
+if TYPE_CHECKING:
+    from collections.abc import Iterator
+
+    from watchglass.base.spans import Source, Span
+
+MOST_CHARACTERS = 1_000_000
+DEEPEST = 32
+_INDENT = re.compile(r"^ {128}", re.M)
+_DASHES = re.compile(r"(?:[-?] +){%d}" % DEEPEST)
+_SPECIAL = re.compile(r"(?:^|[\s\[{,:-])[&*!]\S|^\s*<<\s*:", re.M)
+_UNPRINTABLE = re.compile(r"[^\t\n\x20-\x7e\x85\xa0-\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
+
+
+@dataclass(frozen=True, slots=True)
+class YamlText:
+    """A scalar.
+
+    Attributes:
+        text: Its value as text; an empty value (`key:`) is the empty string.
+        span: Where it stands, quotes included.
+        style: Quote or block character, or empty for a plain scalar.
+    """
+
+    text: str
+    span: Span
+    style: str = ""
+
+    def part(self, start: int, end: int) -> Span:
+        """Give the place in the file of characters `start` to `end` of the value.
+
+        Where folding hides the exact place the whole scalar is given.
+        """
+        raw = self.span.text
+        if not self.style and raw == self.text:
+            return self.span.part(start, end)
+        table = offsets(raw, self.style, self.text)
+        if table is None or start >= len(table):
+            return self.span
+        last = table[end - 1] + 1 if end > start else table[start]
+        return self.span.part(table[start], max(last, table[start]))
+
+
+@dataclass(frozen=True, slots=True)
+class YamlList:
+    """A sequence."""
+
+    items: tuple[YamlNode, ...]
+    span: Span
+
+
+@dataclass(frozen=True, slots=True)
+class YamlEntry:
+    """One key with its value."""
+
+    key: YamlText
+    value: YamlNode
+
+
+@dataclass(frozen=True, slots=True)
+class YamlMapping:
+    """A mapping, its entries in the order written; no key stands twice."""
+
+    entries: tuple[YamlEntry, ...]
+    span: Span
+
+    def get(self, key: str) -> YamlNode | None:
+        """Give the value of a key, or None."""
+        for entry in self.entries:
+            if entry.key.text == key:
+                return entry.value
+        return None
+
+    def __iter__(self) -> Iterator[YamlEntry]:
+        """Go through the entries."""
+        return iter(self.entries)
+
+
+YamlNode = YamlText | YamlList | YamlMapping
+
+
+def read_yaml(
+    source: Source, start: int = 0, end: int | None = None
+) -> tuple[YamlNode | None, tuple[Finding, ...]]:
+    """Read the YAML in part of a source.
+
+    Args:
+        source: The file.
+        start: Offset at which the YAML begins (after the `---` of a front matter).
+        end: Offset at which it ends; the end of the file by default.
+
+    Returns:
+        The document's one node, or None where it is empty or cannot be read; and the findings.
+    """
+    text = source.text[start:end]
+    if fault := _beyond_bounds(source, text, start):
+        return None, (fault,)
+    import yaml  # noqa: PLC0415 - 20 ms, wanted only where there is something to read
+
+    loader: Any = getattr(yaml, "CSafeLoader", yaml.SafeLoader)
+    try:
+        if _SPECIAL.search(text) and (refused := _refused(source, text, start, loader)):
+            return None, refused
+        node = yaml.compose(text, Loader=loader)
+    except yaml.YAMLError as error:
+        return None, (_syntax(source, text, start, error),)
+    if node is None:
+        return None, ()
+    builder = _Builder(source, start)
+    return builder.build(node), tuple(builder.findings)
+
+
+def _beyond_bounds(source: Source, text: str, start: int) -> Finding | None:
+    if len(text) > MOST_CHARACTERS:
+        return Finding(
+            code=codes.SOURCE_TOO_LARGE, span=source.span(start, start + 1),
+            message=f"the YAML has {len(text)} characters; {MOST_CHARACTERS} are read",
+            help="divide the file",
+        )  # fmt: skip
+    if found := _UNPRINTABLE.search(text):
+        return Finding(
+            code=codes.YAML_NOT_READ, span=source.span(start + found.start(), start + found.end()),
+            message=f"the character U+{ord(found[0]):04X} cannot stand in YAML",
+            help="take it out",
+        )  # fmt: skip
+    deep = _INDENT.search(text) or _DASHES.search(text)
+    at = deep.start() if deep else _flow_depth(text)
+    if at is not None:
+        return Finding(
+            code=codes.NESTED_TOO_DEEPLY, span=source.span(start + at, start + at + 1),
+            message=f"the YAML nests deeper than {DEEPEST} levels",
+            help="divide it into simpler values",
+        )  # fmt: skip
+    return None
+
+
+def _flow_depth(text: str) -> int | None:
+    """Find where brackets nest too deeply; brackets in quotes are counted too, on the safe side."""
+    if text.count("[") + text.count("{") <= DEEPEST:
+        return None
+    depth = 0
+    for found in re.finditer(r"[\[\]{}]", text):
+        depth = depth + 1 if found[0] in "[{" else max(0, depth - 1)
+        if depth > DEEPEST:
+            return found.start()
+    return None
+
+
+def _refused(source: Source, text: str, start: int, loader: Any) -> tuple[Finding, ...]:
+    """Find anchors, aliases, tags and merges by PyYAML's own events."""
+    import yaml  # noqa: PLC0415 - as above
+
+    findings = []
+    for event in yaml.parse(text, Loader=loader):
+        what = None
+        if isinstance(event, yaml.AliasEvent):
+            what = "an alias"
+        elif getattr(event, "anchor", None):
+            what = "an anchor"
+        elif getattr(event, "tag", None):
+            what = "a tag"
+        elif isinstance(event, yaml.ScalarEvent) and event.value == "<<" and not event.style:
+            what = "a merge"
+        if what:
+            at, after = start + event.start_mark.index, start + event.end_mark.index
+            after = min(after, source.text.find("\n", at) % (len(source.text) + 1))
+            findings.append(
+                Finding(
+                    code=codes.YAML_REFUSED, span=source.span(at, max(after, at + 1)),
+                    message=f"{what} of YAML is not read here",
+                    help="write the value out; put quotes round text that begins with `&`, `*` or `!`",
+                )  # fmt: skip
+            )
+    return tuple(findings)
+
+
+def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
+    """Turn PyYAML's error into a finding at its place, in words for an instructor."""
+    mark = getattr(error, "problem_mark", None) or getattr(error, "context_mark", None)
+    at = min(mark.index if mark else 0, len(text))
+    while at > 0 and (at >= len(text) or text[at] == "\n"):
+        at -= 1
+    problem = str(getattr(error, "problem", None) or "it cannot be read").rstrip(".")
+    line_start = text.rfind("\n", 0, at) + 1
+    line = text[line_start : text.find("\n", at) if "\n" in text[at:] else len(text)]
+    help_ = "see that lists and values are set in by blanks alike"
+    if "\t" in line:
+        help_ = "set lines in by blanks, not by tabs"
+    elif "mapping values are not allowed" in problem or re.search(r":\s\S.*:\s", line):
+        help_ = "put quotes round a value that holds `: `"
+    elif re.search(r"[:\s][%@`]", line):
+        help_ = "put quotes round a value that begins with a sign such as `%`, `@` or a backtick"
+    elif "expected" in problem or "while scanning" in problem:
+        help_ = "see whether a quote, a bracket or a `:` is missing here or in the line before"
+    return Finding(
+        code=codes.YAML_NOT_READ, span=source.span(start + at, start + min(at + 1, len(text))),
+        message=f"the YAML cannot be read: {problem}", help=help_,
+    )  # fmt: skip
+
+
+class _Builder:
+    """Turns PyYAML's nodes into ours; the depth is bounded before it begins."""
+
+    def __init__(self, source: Source, start: int) -> None:
+        self.source = source
+        self.start = start
+        self.findings: list[Finding] = []
+
+    def span(self, node: Any) -> Span:
+        at, after = self.start + node.start_mark.index, self.start + node.end_mark.index
+        text = self.source.text
+        while after > at and text[after - 1] in " \n\t":
+            after -= 1
+        return self.source.span(at, after)
+
+    def build(self, node: Any) -> YamlNode:
+        kind = node.id
+        if kind == "scalar":
+            return YamlText(node.value, self.span(node), node.style or "")
+        if kind == "sequence":
+            return YamlList(tuple(self.build(item) for item in node.value), self.span(node))
+        entries: dict[str, YamlEntry] = {}
+        for key_node, value_node in node.value:
+            self.entry(key_node, value_node, entries)
+        return YamlMapping(tuple(entries.values()), self.span(node))
+
+    def entry(self, key_node: Any, value_node: Any, entries: dict[str, YamlEntry]) -> None:
+        key = self.build(key_node)
+        if not isinstance(key, YamlText):
+            self.findings.append(_mark_as_key(key.span))
+            return
+        before = entries.get(key.text)
+        if before is not None:
+            self.findings.append(
+                Finding(
+                    code=codes.KEY_TWICE, span=key.span, message=f"`{key.text}` stands twice here",
+                    related=(Related(before.key.span, "it stood here first"),),
+                    help="keep one of the two, or give one another name",
+                )  # fmt: skip
+            )
+            return
+        if re.search(r"->\s*\S", key.text) and value_node.start_mark.index == value_node.end_mark.index:
+            self.findings.append(_mark_as_key(key.span))
+        entries[key.text] = YamlEntry(key, self.build(value_node))
+
+
+def _mark_as_key(span: Span) -> Finding:
+    return Finding(
+        code=codes.MARK_IN_YAML, span=span,
+        message="YAML takes what stands in braces for a mapping of its own",
+        help="put quotes round the whole value, or move the mark into a step",
+    )  # fmt: skip

@@ -1,0 +1,1 @@
+"""Substances, stock solutions, glassware, indicators: types, decoding, look-up."""

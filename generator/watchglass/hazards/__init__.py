@@ -1,0 +1,1 @@
+"""Hazards of substances and mixtures: the place of the classification engine."""

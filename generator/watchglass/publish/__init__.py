@@ -1,0 +1,1 @@
+"""Publishing: what an edition shows, as models only. No markup, no files."""

@@ -1,0 +1,393 @@
+"""What an edition shows, as models: no markup, no templates, no files.
+
+There are two families of everything that differs by edition. A student type has no field that
+could hold an answer, an expected value, a finding or an instructor's block: what is not there
+cannot leak. Templates and the HTML writer take these models and add nothing to them.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, field
+
+
+# ---------------------------------------------------------------- words
+
+
+@dataclass(frozen=True, slots=True)
+class Run:
+    """Plain words."""
+
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class Raised:
+    """Superscript."""
+
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class Lowered:
+    """Subscript."""
+
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class LineEnd:
+    """A forced line end."""
+
+
+@dataclass(frozen=True, slots=True)
+class CodeRun:
+    """Words as typed."""
+
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class Stress:
+    """Emphasis; `strong` for the stronger kind."""
+
+    strong: bool
+    children: tuple[Words, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class LinkTo:
+    """A link. `target` is relative to the edition's root for pages of the set, else absolute."""
+
+    target: str
+    local: bool
+    children: tuple[Words, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Picture:
+    """A picture, with its text alternative."""
+
+    source: str
+    alt: str
+
+
+@dataclass(frozen=True, slots=True)
+class Said:
+    """A mark in words.
+
+    `kind` is `quantity`, `vessel`, `material`, `act`, `figure` or `step`: set apart by weight only.
+    """
+
+    kind: str
+    children: tuple[Words, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Blank:
+    """A blank to fill in: a label, a unit, and an id that is one of its own on the page.
+
+    `count` blanks are ruled side by side (two for a range, one a run of a repeated step).
+    """
+
+    id: str
+    label: str
+    unit: tuple[Words, ...]
+    count: int = 1
+
+
+@dataclass(frozen=True, slots=True)
+class ExpectedBlank:
+    """A blank with what is expected there; instructor edition only. `expected` None: not assessed."""
+
+    blank: Blank
+    expected: tuple[Words, ...] | None
+
+
+Words = (
+    Run | Raised | Lowered | LineEnd | CodeRun | Stress | LinkTo | Picture | Said | Blank | ExpectedBlank
+)
+
+
+# ---------------------------------------------------------------- blocks
+
+
+@dataclass(frozen=True, slots=True)
+class Para:
+    """A paragraph."""
+
+    children: tuple[Words, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Title:
+    """A heading with its address on the page; `level` 2 to 6."""
+
+    level: int
+    id: str
+    children: tuple[Words, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class StepItem:
+    """One step: its number as printed, its address `step-N`, its blocks."""
+
+    number: int
+    id: str
+    children: tuple[Blocks, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class StepList:
+    """Steps in a row."""
+
+    items: tuple[StepItem, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class ItemList:
+    """Another list; `start` None for bullets. `tight` where items are single paragraphs."""
+
+    start: int | None
+    items: tuple[tuple[Blocks, ...], ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Quoted:
+    """A block quote."""
+
+    children: tuple[Blocks, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Listing:
+    """Text as typed."""
+
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class Divider:
+    """A thematic break."""
+
+
+@dataclass(frozen=True, slots=True)
+class Grid:
+    """A table; `fill` where students write in its empty cells (then `blank_rows` more rows)."""
+
+    align: tuple[str | None, ...]
+    head: tuple[tuple[Words, ...], ...]
+    rows: tuple[tuple[tuple[Words, ...], ...], ...]
+    fill: bool = False
+    blank_rows: int = 0
+
+
+@dataclass(frozen=True, slots=True)
+class Panel:
+    """A block set apart: `kind` is `caution`, `before` or `question`."""
+
+    kind: str
+    children: tuple[Blocks, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class InstructorPanel:
+    """A block for instructors: `kind` is `instructor` or `answer`. In no student page."""
+
+    kind: str
+    children: tuple[Blocks, ...]
+
+
+Blocks = (
+    Para | Title | StepList | ItemList | Quoted | Listing | Divider | Grid | Panel | InstructorPanel
+)
+
+
+# ---------------------------------------------------------------- parts of a procedure page
+
+
+@dataclass(frozen=True, slots=True)
+class PageLink:
+    """A link to a page of the handbook: its title, its code and its address from the root."""
+
+    title: str
+    code: str
+    address: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class ReagentRow:
+    """One line of the reagent table. Empty text where a figure does not apply.
+
+    Attributes:
+        name: The material in the reader's words.
+        local: The name the steps use for it, where it differs.
+        formula: Its formula, set.
+        molar_mass: g/mol, with its figures.
+        used: How much the steps use, with unit; `as needed` where the bench decides.
+        portions: How that is made up, as `3 × 0.65 g`; empty for one portion.
+        amount: Amount of substance, with unit; `unknown` where it cannot be known.
+        equivalents: One entry a reaction: (reaction's name or empty, figure, limiting).
+        strength: Strength, density or composition.
+        provided: What a station is handed.
+    """
+
+    name: tuple[Words, ...]
+    local: str
+    formula: tuple[Words, ...]
+    molar_mass: str
+    used: tuple[Words, ...]
+    portions: str
+    amount: tuple[Words, ...]
+    equivalents: tuple[tuple[str, str, bool], ...]
+    strength: tuple[Words, ...]
+    provided: tuple[Words, ...]
+
+    @property
+    def limiting(self) -> bool:
+        """True where it limits a reaction."""
+        return any(role[2] for role in self.equivalents)
+
+
+@dataclass(frozen=True, slots=True)
+class EquipmentRow:
+    """One line of the equipment list: how many, what, and the names the steps use."""
+
+    count: int
+    what: str
+    names: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class ReactionLine:
+    """A reaction: its name, its equation in words and, where it differs, in formulas."""
+
+    name: str
+    equation: tuple[Words, ...]
+    formulas: tuple[Words, ...]
+    remarks: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Facts:
+    """The head of a page, the same in both editions."""
+
+    title: str
+    code: str
+    address: str
+    course: str
+    revision: str
+    time: tuple[str, ...]
+    group: str
+    after: tuple[PageLink, ...]
+    references: tuple[tuple[Words, ...], ...]
+    read: tuple[tuple[Words, ...], ...]
+    outline: tuple[tuple[int, str, str], ...]  # level, id, text
+    previous: PageLink | None
+    following: PageLink | None
+    lang: str = "en"
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class StudentPage:
+    """A procedure as students see it."""
+
+    facts: Facts
+    before: tuple[Blocks, ...]
+    reagents: tuple[ReagentRow, ...]
+    equipment: tuple[EquipmentRow, ...]
+    reactions: tuple[ReactionLine, ...]
+    body: tuple[Blocks, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class FindingLine:
+    """A finding as an instructor reads it on the page."""
+
+    severity: str
+    code: str
+    name: str
+    message: str
+    place: str
+    help: str
+    reason: str  # why it was accepted; empty where it was not
+
+
+@dataclass(frozen=True, slots=True)
+class ExpectationLine:
+    """One line of what the experiment is expected to give, and what became of it."""
+
+    words: str
+    outcome: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class InstructorPage:
+    """A procedure as instructors see it."""
+
+    facts: Facts
+    before: tuple[Blocks, ...]
+    reagents: tuple[ReagentRow, ...]
+    equipment: tuple[EquipmentRow, ...]
+    reactions: tuple[ReactionLine, ...]
+    body: tuple[Blocks, ...]
+    findings: tuple[FindingLine, ...]
+    accepted: tuple[FindingLine, ...]
+    intended: tuple[tuple[str, str], ...]
+    expectations: tuple[ExpectationLine, ...]
+    assumptions: tuple[str, ...]
+
+
+# ---------------------------------------------------------------- other pages
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class OrdinaryPage:
+    """A page of the set that is no procedure."""
+
+    title: str
+    address: str
+    body: tuple[Blocks, ...]
+    outline: tuple[tuple[int, str, str], ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class ListEntry:
+    """One procedure in a list: its link and a few words (time, group, sections)."""
+
+    link: PageLink
+    remarks: str
+
+
+@dataclass(frozen=True, slots=True)
+class ListGroup:
+    """A titled group in a list page: a course, or a week."""
+
+    title: str
+    id: str
+    entries: tuple[ListEntry, ...]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class ListPage:
+    """A list of procedures: `kind` is `courses` or `weeks`."""
+
+    kind: str
+    title: str
+    address: str
+    groups: tuple[ListGroup, ...]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class StartPage:
+    """The first page: the laboratory, the courses, the pages, the notice.
+
+    `body` is the set's own welcome page where it has one (`pages/welcome.md`).
+    """
+
+    title: str
+    institution: str
+    body: tuple[Blocks, ...]
+    courses: tuple[ListGroup, ...]
+    weeks: tuple[ListGroup, ...]
+    pages: tuple[PageLink, ...]
+    notice: tuple[str, ...] = field(default=())

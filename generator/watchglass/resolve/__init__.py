@@ -1,0 +1,1 @@
+"""Resolving: names bound, dimensions checked, marks turned into bench events."""

@@ -1,0 +1,1 @@
+"""The edge: files, clock, command line, MkDocs, templates."""
