@@ -26,7 +26,7 @@ TABLE: dict[str, tuple[float, float, tuple[int, ...]]] = {
 
 def make(text: str) -> str:
     """Give the module's text for a definitions file's text."""
-    import pint  # noqa: PLC0415 - only this maker needs it
+    import pint
 
     registry = pint.UnitRegistry(None)
     registry.load_definitions(text.splitlines())
@@ -38,7 +38,9 @@ def make(text: str) -> str:
         dimension = registry.Unit(name).dimensionality
         exponents = tuple(int(dimension.get(key, 0)) for key in ORDER)
         factor = float(f"{(at_far - at_nought) / far:.14g}")
-        lines.append(f"    {symbol!r}: ({factor!r}, {float(f'{at_nought:.14g}')!r}, {exponents!r}),\n")
+        lines.append(
+            f"    {symbol!r}: ({factor!r}, {float(f'{at_nought:.14g}')!r}, {exponents!r}),\n"
+        )
     return HEAD + "".join(lines).replace("'", '"') + "}\n"
 
 

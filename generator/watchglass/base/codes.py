@@ -19,6 +19,7 @@ TEXT_NOT_UTF8 = Code("N101", "text-not-utf8", _ERROR, "the file is not UTF-8 tex
 SOURCE_TOO_LARGE = Code("N102", "source-too-large", _ERROR, "the file is beyond the size read")
 NESTED_TOO_DEEPLY = Code("N103", "nested-too-deeply", _ERROR, "blocks or brackets nest too deeply")
 TOO_MANY_MARKS = Code("N104", "too-many-marks", _ERROR, "the file holds more marks than are read")
+TOO_MANY_PASSES = Code("N105", "too-many-passes", _ERROR, "steps are repeated beyond what is run")
 MARK_NOT_CLOSED = Code("N110", "mark-not-closed", _ERROR, "a brace opens and never closes")
 MARK_NOT_READ = Code("N111", "mark-not-read", _ERROR, "a mark cannot be read")
 MARK_EMPTY = Code("N112", "mark-empty", _ERROR, "a mark has nothing in it")
@@ -68,7 +69,9 @@ ACCEPT_WITHOUT_EFFECT = Code(
 ACCEPT_UNKNOWN = Code("N194", "accept-unknown", _ERROR, "what is accepted is no finding's name")
 TIME_OVER_PERIOD = Code("N195", "time-over-period", _WARNING, "the steps take more than the period")
 LINK_BROKEN = Code("N196", "link-broken", _ERROR, "a link leads nowhere")
-PROCEDURE_UNKNOWN = Code("N197", "procedure-unknown", _ERROR, "a procedure is named that is not there")
+PROCEDURE_UNKNOWN = Code(
+    "N197", "procedure-unknown", _ERROR, "a procedure is named that is not there"
+)
 ACT_WITHOUT_PLACE = Code(
     "N198", "act-out-of-place", _ERROR, "an act stands where nothing happens at the bench"
 )
@@ -119,7 +122,9 @@ SPECIES_UNKNOWN = Code("S103", "species-unknown", _ERROR, "an equation names no 
 SPECIES_AMBIGUOUS = Code("S104", "species-ambiguous", _ERROR, "a formula fits two materials")
 DENSITY_UNKNOWN = Code("S110", "density-unknown", _ERROR, "a density is needed and not known")
 PROVIDED_EXCEEDED = Code("S111", "provided-exceeded", _ERROR, "the steps use more than is provided")
-ALL_OF_NOTHING = Code("S112", "all-of-nothing", _ERROR, "all of a material is used, none is provided")
+ALL_OF_NOTHING = Code(
+    "S112", "all-of-nothing", _ERROR, "all of a material is used, none is provided"
+)
 LIMITING_UNFIT = Code("S113", "limiting-unfit", _ERROR, "the limiting reactant does not react")
 
 # -- E: editions -------------------------------------------------------------------------------

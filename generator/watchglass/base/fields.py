@@ -109,10 +109,12 @@ def read_fields(
         if field is None:
             findings.append(
                 Finding(
-                    code=codes.FIELD_UNKNOWN, span=entry.key.span,
+                    code=codes.FIELD_UNKNOWN,
+                    span=entry.key.span,
                     message=f"`{name}` is no field of {what}",
-                    help=did_you_mean(name, fields) or "take one of " + ", ".join(f"`{f}`" for f in fields),
-                )  # fmt: skip
+                    help=did_you_mean(name, fields)
+                    or "take one of " + ", ".join(f"`{f}`" for f in fields),
+                )
             )
         elif isinstance(entry.value, _TAKES[field.shape]) or _empty(entry.value):
             values[name], keys[name] = entry.value, entry.key.span
@@ -123,9 +125,11 @@ def read_fields(
         if field.required and (name not in keys or (name in values and _empty(values[name]))):
             findings.append(
                 Finding(
-                    code=codes.FIELD_MISSING, span=keys.get(name) or _top(node),
-                    message=f"{what} has no `{name}`", help=f"add `{name}:` — {field.about}",
-                )  # fmt: skip
+                    code=codes.FIELD_MISSING,
+                    span=keys.get(name) or _top(node),
+                    message=f"{what} has no `{name}`",
+                    help=f"add `{name}:` — {field.about}",
+                )
             )
     return Record(values, keys, node.span), tuple(findings)
 
@@ -134,9 +138,11 @@ def unfit(node: YamlNode, what: str, shape: Shape) -> Finding:
     """Give the finding for a value of another kind than its place takes."""
     found = {YamlText: "text", YamlList: "a list", YamlMapping: "a mapping"}[type(node)]
     return Finding(
-        code=codes.FIELD_UNFIT, span=node.span, message=f"{what} takes {shape.value}, not {found}",
+        code=codes.FIELD_UNFIT,
+        span=node.span,
+        message=f"{what} takes {shape.value}, not {found}",
         help="write " + _EXAMPLES[shape],
-    )  # fmt: skip
+    )
 
 
 _EXAMPLES = {

@@ -61,4 +61,4 @@ def shown(value: float, figures: int) -> str:
 
 def minus(digits: str) -> str:
     """Put a minus sign for the hyphen that computers write."""
-    return digits.replace("-", "−")  # noqa: RUF001 - U+2212 is meant
+    return digits.replace("-", "−")

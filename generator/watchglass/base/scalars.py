@@ -22,6 +22,7 @@ def offsets(raw: str, style: str, value: str) -> list[int] | None:
     Returns:
         One offset a character, in order, and one for the end; None where no exact table exists.
     """
+    table: list[int] | None
     if style in ("", "'", '"'):
         table = _flow(raw, style)
     elif style == "|":

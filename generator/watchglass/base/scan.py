@@ -23,16 +23,16 @@ if TYPE_CHECKING:
 
     from watchglass.base.findings import Code
 
-_DIGITS = re.compile(r"[+\-−]?(?:\d+(?:\.\d+)?|\.\d+)")  # noqa: RUF001
-_POWER = re.compile(r"[eE]([+\-−]?\d+)(?![\w.])|\s*[×x]\s*10(?:\^([+\-−]?\d+)|([⁻⁺]?[⁰¹²³⁴-⁹]+))")  # noqa: RUF001
-_ABOUT = re.compile(r"(?:ca\.?|approx\.?|about|[~≈])\s*(?=[\d.+\-−])")  # noqa: RUF001
+_DIGITS = re.compile(r"[+\-−]?(?:\d+(?:\.\d+)?|\.\d+)")
+_POWER = re.compile(r"[eE]([+\-−]?\d+)(?![\w.])|\s*[×x]\s*10(?:\^([+\-−]?\d+)|([⁻⁺]?[⁰¹²³⁴-⁹]+))")
+_ABOUT = re.compile(r"(?:ca\.?|approx\.?|about|[~≈])\s*(?=[\d.+\-−])")
 _BOUND = re.compile(r"(>=|<=|≥|≤|>|<)\s*")
-_RANGE = re.compile(r"\s*[–—]\s*|(?<=\d)-(?=\.?\d)|\s+to\s+(?=[+\-−.\d])")  # noqa: RUF001
+_RANGE = re.compile(r"\s*[–—]\s*|(?<=\d)-(?=\.?\d)|\s+to\s+(?=[+\-−.\d])")
 _TOLERANCE = re.compile(r"\s*(?:±|\+/-)\s*")
 _SYMBOL = re.compile(r"[A-Za-zµμÅ°℃℉%‰][A-Za-zµμ]*")
 _EXPONENT = re.compile(r"\^\(?(-?\d)\)?|([⁻]?[²³¹⁴])")
 _BASIS = re.compile(r"\s*\(?\s*(w/w|w/v|v/v|m/m|m/v|wt|vol)\b\s*\)?")
-_GROUPED = re.compile(r"[  '’](\d{3})(?!\d)")  # noqa: RUF001
+_GROUPED = re.compile(r"[  '’](\d{3})(?!\d)")
 _COMMA = re.compile(r"\d+(?:[., ]\d{3})*,\d+|\d{1,3}(?:,\d{3})+(?:\.\d+)?")
 _NAME_GOES_ON = re.compile(r"[\w-]")
 _SUPERSCRIPT = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺", "0123456789-+")
@@ -70,13 +70,20 @@ def starts_quantity(text: str, at: int) -> bool:
     if at >= len(text):
         return False
     return bool(
-        text[at].isdigit() or _DIGITS.match(text, at) or _ABOUT.match(text, at)
-        or _BOUND.match(text, at) or _VULGAR.match(text, at)
-    )  # fmt: skip
+        text[at].isdigit()
+        or _DIGITS.match(text, at)
+        or _ABOUT.match(text, at)
+        or _BOUND.match(text, at)
+        or _VULGAR.match(text, at)
+    )
 
 
 def scan_quantity(
-    text: str, at: int, end: int | None = None, *, measures: Mapping[str, float | None] | None = None
+    text: str,
+    at: int,
+    end: int | None = None,
+    *,
+    measures: Mapping[str, float | None] | None = None,
 ) -> Scan:
     """Read the quantity that begins at an offset.
 
@@ -111,22 +118,27 @@ def scan_quantity(
             kind, (second, here) = Kind.RANGE, high
             if second.value < value.value:
                 return Fault(
-                    codes.RANGE_REVERSED, at, here,
+                    codes.RANGE_REVERSED,
+                    at,
+                    here,
                     f"the range ends at {second.text}, below its start {value.text}",
-                    f"write `{second.text}–{value.text}`",  # noqa: RUF001
-                )  # fmt: skip
+                    f"write `{second.text}–{value.text}`",
+                )
     elif kind is Kind.EXACT and (found := _TOLERANCE.match(text, here)):
         margin = _number(text, found.end())
         if not isinstance(margin, tuple):
             return margin or Fault(
-                codes.NUMBER_NOT_READ, found.start(), found.end(), "no number follows `±`",
+                codes.NUMBER_NOT_READ,
+                found.start(),
+                found.end(),
+                "no number follows `±`",
                 "write `2.00 ± 0.05 g`",
-            )  # fmt: skip
+            )
         kind, (second, here) = Kind.TOLERANCE, margin
     unit = _unit(text, here, measures)
     if isinstance(unit, Fault):
         return unit
-    measure, after = unit if unit else (units.NONE, here)
+    measure, after = unit or (units.NONE, here)
     quantity = Quantity(text[at:after], kind, value, measure, second, bound)
     return _impossible(quantity, at, after) or Found(quantity, after, unit is not None)
 
@@ -140,9 +152,12 @@ def read_quantity(
     found = scan_quantity(text, start, end, measures=measures)
     if found is None:
         return Fault(
-            codes.NUMBER_NOT_READ, start, max(end, start), f"`{text.strip()}` is not a quantity",
+            codes.NUMBER_NOT_READ,
+            start,
+            max(end, start),
+            f"`{text.strip()}` is not a quantity",
             "write a number and a unit, as in `2.50 g`",
-        )  # fmt: skip
+        )
     if isinstance(found, Found) and found.end < end:
         return left_over(text, found, end)
     return found if isinstance(found, Fault) else found.quantity
@@ -158,13 +173,19 @@ def left_over(text: str, found: Found, end: int) -> Fault:
         return unknown_unit(word[0], start)
     if rest[0].isdigit():
         return Fault(
-            codes.NUMBER_NOT_READ, start, end, f"a second number, `{rest}`, follows `{text[:found.end].strip()}`",
+            codes.NUMBER_NOT_READ,
+            start,
+            end,
+            f"a second number, `{rest}`, follows `{text[: found.end].strip()}`",
             "write one number with one unit, as in `150 min`",
-        )  # fmt: skip
+        )
     return Fault(
-        codes.NUMBER_NOT_READ, start, end, f"`{rest}` cannot follow a quantity",
+        codes.NUMBER_NOT_READ,
+        start,
+        end,
+        f"`{rest}` cannot follow a quantity",
         "take it out, or put it into the sentence",
-    )  # fmt: skip
+    )
 
 
 def unknown_unit(word: str, start: int) -> Fault:
@@ -172,18 +193,27 @@ def unknown_unit(word: str, start: int) -> Fault:
     end = start + len(word)
     if word in UNITS:
         return Fault(
-            codes.UNIT_UNKNOWN, start, end, f"the unit `{word}` runs on into what follows it",
+            codes.UNIT_UNKNOWN,
+            start,
+            end,
+            f"the unit `{word}` runs on into what follows it",
             f"write an exponent as `{word}^2`, and a blank before any other word",
-        )  # fmt: skip
+        )
     if (known := REFUSED.get(word)) is not None:
         code = codes.UNIT_AMBIGUOUS if word in ("C", "F", "G", "k") else codes.UNIT_UNKNOWN
-        return Fault(code, start, end, f"`{word}` is not how the unit is written", f"write `{known}`")
+        return Fault(
+            code, start, end, f"`{word}` is not how the unit is written", f"write `{known}`"
+        )
     from watchglass.base.findings import did_you_mean  # noqa: PLC0415 - only when something is wrong
 
     return Fault(
-        codes.UNIT_UNKNOWN, start, end, f"`{word}` is no unit",
-        did_you_mean(word, UNITS) or "take one of the units in the list, such as `g`, `mL`, `mmol`, `min`",
-    )  # fmt: skip
+        codes.UNIT_UNKNOWN,
+        start,
+        end,
+        f"`{word}` is no unit",
+        did_you_mean(word, UNITS)
+        or "take one of the units in the list, such as `g`, `mL`, `mmol`, `min`",
+    )
 
 
 # ------------------------------------------------------------------------------ numbers
@@ -192,9 +222,12 @@ def unknown_unit(word: str, start: int) -> Fault:
 def _number(text: str, at: int) -> tuple[Number, int] | Fault | None:
     if found := _VULGAR.match(text, at):
         return Fault(
-            codes.NUMBER_NOT_READ, at, found.end(), f"`{found[0]}` is written with a fraction",
+            codes.NUMBER_NOT_READ,
+            at,
+            found.end(),
+            f"`{found[0]}` is written with a fraction",
             "write it with a decimal point, as in `3.5`",
-        )  # fmt: skip
+        )
     found = _DIGITS.match(text, at)
     if found is None:
         return None
@@ -217,38 +250,45 @@ def _comma_or_groups(text: str, at: int, after: int) -> Fault | None:
         written = text[at : found.end()]
         plain = "".join(c for c in written if c.isdigit())
         return Fault(
-            codes.DIGITS_APART, at, found.end(), f"the digits of `{written}` stand apart",
+            codes.DIGITS_APART,
+            at,
+            found.end(),
+            f"the digits of `{written}` stand apart",
             f"write `{plain}`",
-        )  # fmt: skip
+        )
     return None
 
 
 def _with_power(text: str, at: int, found: re.Match[str]) -> tuple[Number, int] | Fault:
-    digits, after, power = found[0].replace("−", "-"), found.end(), 0  # noqa: RUF001
+    digits, after, power = found[0].replace("−", "-"), found.end(), 0
     if ten := _POWER.match(text, after):
         written = ten[1] or ten[2] or ten[3].translate(_SUPERSCRIPT)
         after = ten.end()
-        power = int(written.replace("−", "-")) if len(written) <= 4 else 999  # noqa: PLR2004, RUF001
+        power = int(written.replace("−", "-")) if len(written) <= 4 else 999
     elif times := re.compile(r"\s*[×x*]\s*\d[\d.]*").match(text, after):
         return Fault(
-            codes.NUMBER_NOT_READ, at, times.end(), f"`{text[at : times.end()]}` is a product",
+            codes.NUMBER_NOT_READ,
+            at,
+            times.end(),
+            f"`{text[at : times.end()]}` is a product",
             "write one portion in the mark and say with `again` how often",
-        )  # fmt: skip
+        )
     if text[after : after + 1] == "." and text[after + 1 : after + 2].isdigit():
         return Fault(
             codes.NUMBER_NOT_READ, at, after + 2, "a number has two decimal points", "take one out"
         )
     if abs(power) > _LARGEST_POWER or len(digits) > _LONGEST:
         return Fault(
-            codes.NUMBER_NOT_READ, at, after, "a number is beyond anything that is measured",
+            codes.NUMBER_NOT_READ,
+            at,
+            after,
+            "a number is beyond anything that is measured",
             f"keep to {_LONGEST} digits and powers of ten within {_LARGEST_POWER}",
-        )  # fmt: skip
+        )
     whole, _, decimals = digits.lstrip("+-").partition(".")
     significant = (whole + decimals).lstrip("0")
     value = float(f"{digits}e{power}") if power else float(digits)
-    number = Number(
-        text[at:after], value, max(1, len(significant)), power - len(decimals)
-    )
+    number = Number(text[at:after], value, max(1, len(significant)), power - len(decimals))
     return number, after
 
 
@@ -275,7 +315,7 @@ def _unit(
         return _degree(text, here, word)
     if word == "N" and not _word_goes_on(text, found.end()):
         return _normality(text, here)
-    if word in ("%",):
+    if word == "%":
         return _percent(text, here)
     if word not in UNITS:
         if word in REFUSED and not _word_goes_on(text, found.end()):
@@ -292,24 +332,32 @@ def _degree(text: str, at: int, word: str) -> Fault:
     after = at + len(word)
     if word == "°" and (letter := re.compile(r"\s*([CF])\b").match(text, after)):
         return Fault(
-            codes.UNIT_AMBIGUOUS, at, letter.end(), "the degree sign stands apart from its letter",
+            codes.UNIT_AMBIGUOUS,
+            at,
+            letter.end(),
+            "the degree sign stands apart from its letter",
             f"write `°{letter[1]}`",
-        )  # fmt: skip
+        )
     return Fault(
-        codes.UNIT_AMBIGUOUS, at, after, f"`{word}` does not say on which scale",
+        codes.UNIT_AMBIGUOUS,
+        at,
+        after,
+        f"`{word}` does not say on which scale",
         "write `°C` for a temperature",
-    )  # fmt: skip
+    )
 
 
 def _normality(text: str, at: int) -> Fault:
     number = re.compile(r"([\d.]+)\s*$").search(text, 0, at)
     figure = number[1] if number else "1.0"
     return Fault(
-        codes.NORMALITY, number.start() if number else at, at + 1,
+        codes.NORMALITY,
+        number.start() if number else at,
+        at + 1,
         "normality depends on the reaction; `N` is the newton",
         f"write the amount concentration: `{figure} M` where one proton or electron counts,"
         " less where one molecule gives several",
-    )  # fmt: skip
+    )
 
 
 def _percent(text: str, at: int) -> tuple[Unit, int] | Fault:
@@ -322,18 +370,23 @@ def _percent(text: str, at: int) -> tuple[Unit, int] | Fault:
         return STRENGTHS[written], basis.end()
     meant = {"m/m": "w/w", "wt": "w/w", "m/v": "w/v", "vol": "v/v"}.get(basis[1], basis[1])
     return Fault(
-        codes.UNIT_UNKNOWN, at, basis.end(), f"`%{basis[0]}` is not how the basis is written",
+        codes.UNIT_UNKNOWN,
+        at,
+        basis.end(),
+        f"`%{basis[0]}` is not how the basis is written",
         f"write `% {meant}`",
-    )  # fmt: skip
+    )
 
 
-def _measure(
-    text: str, at: int, measures: Mapping[str, float | None]
-) -> tuple[Unit, int] | None:
+def _measure(text: str, at: int, measures: Mapping[str, float | None]) -> tuple[Unit, int] | None:
     """Read a countable measure; the longest wins (`spatula tips` before `spatula`)."""
     best = ""
     for word in measures:
-        if len(word) > len(best) and text.startswith(word, at) and not _word_goes_on(text, at + len(word)):
+        if (
+            len(word) > len(best)
+            and text.startswith(word, at)
+            and not _word_goes_on(text, at + len(word))
+        ):
             best = word
     return (Unit(best, dim.COUNT), at + len(best)) if best else None
 
@@ -348,7 +401,7 @@ def _atom(text: str, at: int) -> tuple[Unit, int] | None:
     if found is None or found[0] not in UNITS:
         return None
     unit, after = UNITS[found[0]], found.end()
-    if _word_goes_on(text, after) and text[after] != "-" and not text[after] in "²³¹⁴":
+    if _word_goes_on(text, after) and text[after] != "-" and text[after] not in "²³¹⁴":
         return None  # `m2`, `g3`: not a unit and an exponent
     if (raised := _EXPONENT.match(text, after)) is not None:
         symbol = text[at : raised.end()]
@@ -397,13 +450,25 @@ def _impossible(quantity: Quantity, start: int, end: int) -> Fault | None:
     cold = dimension == dim.TEMPERATURE or quantity.unit.symbol == "K"
     if cold and quantity.si < 0:
         return Fault(
-            codes.BELOW_ABSOLUTE_ZERO, start, end, f"`{text}` is below absolute zero",
+            codes.BELOW_ABSOLUTE_ZERO,
+            start,
+            end,
+            f"`{text}` is below absolute zero",
             "absolute zero is -273.15 °C, 0 K",
-        )  # fmt: skip
-    signed = cold or dimension in (dim.NUMBER, dim.VOLTAGE, dim.CURRENT, dim.ENERGY, dim.MOLAR_ENERGY)
+        )
+    signed = cold or dimension in (
+        dim.NUMBER,
+        dim.VOLTAGE,
+        dim.CURRENT,
+        dim.ENERGY,
+        dim.MOLAR_ENERGY,
+    )
     if not signed and quantity.number.value < 0:
         return Fault(
-            codes.QUANTITY_NEGATIVE, start, end,
-            f"`{text}` is negative, and {dimension.words} cannot be", "take the minus sign out",
-        )  # fmt: skip
+            codes.QUANTITY_NEGATIVE,
+            start,
+            end,
+            f"`{text}` is negative, and {dimension.words} cannot be",
+            "take the minus sign out",
+        )
     return None

@@ -1,4 +1,4 @@
-"""Places in text: a source, a span in it, and the line and column a person looks for.
+r"""Places in text: a source, a span in it, and the line and column a person looks for.
 
 Spans are offsets, since offsets can be cut, joined and compared without thought. Line and column
 are worked out only when something is printed. A source's text has its byte order mark taken off
@@ -15,7 +15,7 @@ from typing import NamedTuple
 
 @dataclass(frozen=True, slots=True, eq=False)
 class Source:
-    """One text that an author wrote.
+    r"""One text that an author wrote.
 
     Attributes:
         name: What findings call it: its path within the set, with forward slashes.
@@ -28,8 +28,7 @@ class Source:
     @classmethod
     def of(cls, name: str, text: str) -> Source:
         """Make a source from text as it stands in a file."""
-        if text.startswith("\ufeff"):
-            text = text[1:]
+        text = text.removeprefix("\ufeff")
         if "\r" in text:
             text = text.replace("\r\n", "\n").replace("\r", "\n")
         return cls(name, text)

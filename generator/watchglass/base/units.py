@@ -9,10 +9,13 @@ the spellings people reach for instead are refused with the way to write them.
 from __future__ import annotations
 
 from dataclasses import dataclass
+from typing import TYPE_CHECKING
 
 from watchglass.base import dimensions as dim
-from watchglass.base.dimensions import Dimension
 from watchglass.base.unit_table import TABLE
+
+if TYPE_CHECKING:
+    from watchglass.base.dimensions import Dimension
 
 
 @dataclass(frozen=True, slots=True)
@@ -35,9 +38,15 @@ class Unit:
 NONE = Unit("", dim.NUMBER)
 
 
+#: The bare letter names vessels (`A`); only its milli is a unit here.
+_ONLY_PREFIXED = frozenset(("A", "turn"))
+
+
 def _listed() -> dict[str, Unit]:
     units = {}
     for symbol, (factor, offset, exponents) in TABLE.items():
+        if symbol in _ONLY_PREFIXED:
+            continue
         dimension = dim.named(exponents)
         if offset:
             dimension = dim.TEMPERATURE
@@ -59,20 +68,75 @@ STRENGTHS: dict[str, Unit] = {
 
 #: Spellings that are refused, with what to write.
 REFUSED: dict[str, str] = {
-    "C": "°C", "F": "°F", "deg": "°C", "degrees": "°C", "Celsius": "°C", "celsius": "°C",
-    "cc": "mL", "ccm": "mL", "ML": "mL", "Ml": "mL", "mLs": "mL", "mls": "mL", "MLs": "mL",
-    "milliliters": "mL", "millilitres": "mL", "litre": "L", "liter": "L", "litres": "L",
-    "liters": "L", "lt": "L", "ltr": "L",
-    "gm": "g", "gms": "g", "gr": "g", "grs": "g", "G": "g", "gram": "g", "grams": "g",
-    "Kg": "kg", "KG": "kg", "kgs": "kg", "MG": "mg", "mgs": "mg", "mcg": "µg",
-    "mole": "mol", "moles": "mol", "mols": "mol", "Mol": "mol", "mmole": "mmol",
-    "mmoles": "mmol", "mMol": "mmol", "molar": "M", "mMolar": "mM",
-    "sec": "s", "secs": "s", "seconds": "s", "second": "s", "mins": "min", "minute": "min",
-    "minutes": "min", "Min": "min", "hr": "h", "hrs": "h", "hour": "h", "hours": "h",
-    "days": "d", "day": "d", "k": "K", "kelvin": "K", "Kelvin": "K",
-    "RPM": "rpm", "mmhg": "mmHg", "mm Hg": "mmHg", "ATM": "atm", "degrees C": "°C",
-    "inch": "in", "inches": "in", "percent": "%",
-}  # fmt: skip
+    "C": "°C",
+    "F": "°F",
+    "deg": "°C",
+    "degrees": "°C",
+    "Celsius": "°C",
+    "celsius": "°C",
+    "cc": "mL",
+    "ccm": "mL",
+    "ML": "mL",
+    "Ml": "mL",
+    "mLs": "mL",
+    "mls": "mL",
+    "MLs": "mL",
+    "milliliters": "mL",
+    "millilitres": "mL",
+    "litre": "L",
+    "liter": "L",
+    "litres": "L",
+    "liters": "L",
+    "lt": "L",
+    "ltr": "L",
+    "gm": "g",
+    "gms": "g",
+    "gr": "g",
+    "grs": "g",
+    "G": "g",
+    "gram": "g",
+    "grams": "g",
+    "Kg": "kg",
+    "KG": "kg",
+    "kgs": "kg",
+    "MG": "mg",
+    "mgs": "mg",
+    "mcg": "µg",
+    "mole": "mol",
+    "moles": "mol",
+    "mols": "mol",
+    "Mol": "mol",
+    "mmole": "mmol",
+    "mmoles": "mmol",
+    "mMol": "mmol",
+    "molar": "M",
+    "mMolar": "mM",
+    "sec": "s",
+    "secs": "s",
+    "seconds": "s",
+    "second": "s",
+    "mins": "min",
+    "minute": "min",
+    "minutes": "min",
+    "Min": "min",
+    "hr": "h",
+    "hrs": "h",
+    "hour": "h",
+    "hours": "h",
+    "days": "d",
+    "day": "d",
+    "k": "K",
+    "kelvin": "K",
+    "Kelvin": "K",
+    "RPM": "rpm",
+    "mmhg": "mmHg",
+    "mm Hg": "mmHg",
+    "ATM": "atm",
+    "degrees C": "°C",
+    "inch": "in",
+    "inches": "in",
+    "percent": "%",
+}
 
 _SUPERSCRIPTS = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
 

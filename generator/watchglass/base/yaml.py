@@ -23,9 +23,9 @@ if TYPE_CHECKING:
 
 MOST_CHARACTERS = 1_000_000
 DEEPEST = 32
-_INDENT = re.compile(r"^ {128}", re.M)
-_DASHES = re.compile(r"(?:[-?] +){%d}" % DEEPEST)
-_SPECIAL = re.compile(r"(?:^|[\s\[{,:-])[&*!]\S|^\s*<<\s*:", re.M)
+_INDENT = re.compile(r"^ {128}", re.MULTILINE)
+_DASHES = re.compile(rf"(?:[-?] +){{{DEEPEST}}}")
+_SPECIAL = re.compile(r"(?:^|[\s\[{,:-])[&*!]\S|^\s*<<\s*:", re.MULTILINE)
 _UNPRINTABLE = re.compile(r"[^\t\n\x20-\x7e\x85\xa0-\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
 
 
@@ -130,24 +130,27 @@ def read_yaml(
 def _beyond_bounds(source: Source, text: str, start: int) -> Finding | None:
     if len(text) > MOST_CHARACTERS:
         return Finding(
-            code=codes.SOURCE_TOO_LARGE, span=source.span(start, start + 1),
+            code=codes.SOURCE_TOO_LARGE,
+            span=source.span(start, start + 1),
             message=f"the YAML has {len(text)} characters; {MOST_CHARACTERS} are read",
             help="divide the file",
-        )  # fmt: skip
+        )
     if found := _UNPRINTABLE.search(text):
         return Finding(
-            code=codes.YAML_NOT_READ, span=source.span(start + found.start(), start + found.end()),
+            code=codes.YAML_NOT_READ,
+            span=source.span(start + found.start(), start + found.end()),
             message=f"the character U+{ord(found[0]):04X} cannot stand in YAML",
             help="take it out",
-        )  # fmt: skip
+        )
     deep = _INDENT.search(text) or _DASHES.search(text)
     at = deep.start() if deep else _flow_depth(text)
     if at is not None:
         return Finding(
-            code=codes.NESTED_TOO_DEEPLY, span=source.span(start + at, start + at + 1),
+            code=codes.NESTED_TOO_DEEPLY,
+            span=source.span(start + at, start + at + 1),
             message=f"the YAML nests deeper than {DEEPEST} levels",
             help="divide it into simpler values",
-        )  # fmt: skip
+        )
     return None
 
 
@@ -179,16 +182,21 @@ def _refused(source: Source, text: str, start: int, loader: Any) -> tuple[Findin
         elif isinstance(event, yaml.ScalarEvent) and event.value == "<<" and not event.style:
             what = "a merge"
         if what:
-            at, after = start + event.start_mark.index, start + event.end_mark.index
+            at, after = start + _index(event.start_mark), start + _index(event.end_mark)
             after = min(after, source.text.find("\n", at) % (len(source.text) + 1))
             findings.append(
                 Finding(
-                    code=codes.YAML_REFUSED, span=source.span(at, max(after, at + 1)),
+                    code=codes.YAML_REFUSED,
+                    span=source.span(at, max(after, at + 1)),
                     message=f"{what} of YAML is not read here",
                     help="write the value out; put quotes round text that begins with `&`, `*` or `!`",
-                )  # fmt: skip
+                )
             )
     return tuple(findings)
+
+
+def _index(mark: Any) -> int:
+    return int(mark.index)
 
 
 def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
@@ -210,9 +218,11 @@ def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
     elif "expected" in problem or "while scanning" in problem:
         help_ = "see whether a quote, a bracket or a `:` is missing here or in the line before"
     return Finding(
-        code=codes.YAML_NOT_READ, span=source.span(start + at, start + min(at + 1, len(text))),
-        message=f"the YAML cannot be read: {problem}", help=help_,
-    )  # fmt: skip
+        code=codes.YAML_NOT_READ,
+        span=source.span(start + at, start + min(at + 1, len(text))),
+        message=f"the YAML cannot be read: {problem}",
+        help=help_,
+    )
 
 
 class _Builder:
@@ -250,20 +260,26 @@ class _Builder:
         if before is not None:
             self.findings.append(
                 Finding(
-                    code=codes.KEY_TWICE, span=key.span, message=f"`{key.text}` stands twice here",
+                    code=codes.KEY_TWICE,
+                    span=key.span,
+                    message=f"`{key.text}` stands twice here",
                     related=(Related(before.key.span, "it stood here first"),),
                     help="keep one of the two, or give one another name",
-                )  # fmt: skip
+                )
             )
             return
-        if re.search(r"->\s*\S", key.text) and value_node.start_mark.index == value_node.end_mark.index:
+        if (
+            re.search(r"->\s*\S", key.text)
+            and value_node.start_mark.index == value_node.end_mark.index
+        ):
             self.findings.append(_mark_as_key(key.span))
         entries[key.text] = YamlEntry(key, self.build(value_node))
 
 
 def _mark_as_key(span: Span) -> Finding:
     return Finding(
-        code=codes.MARK_IN_YAML, span=span,
+        code=codes.MARK_IN_YAML,
+        span=span,
         message="YAML takes what stands in braces for a mapping of its own",
         help="put quotes round the whole value, or move the mark into a step",
-    )  # fmt: skip
+    )

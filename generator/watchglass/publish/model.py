@@ -9,7 +9,6 @@ from __future__ import annotations
 
 from dataclasses import dataclass, field
 
-
 # ---------------------------------------------------------------- words
 
 
@@ -104,7 +103,17 @@ class ExpectedBlank:
 
 
 Words = (
-    Run | Raised | Lowered | LineEnd | CodeRun | Stress | LinkTo | Picture | Said | Blank | ExpectedBlank
+    Run
+    | Raised
+    | Lowered
+    | LineEnd
+    | CodeRun
+    | Stress
+    | LinkTo
+    | Picture
+    | Said
+    | Blank
+    | ExpectedBlank
 )
 
 

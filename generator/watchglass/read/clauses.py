@@ -3,13 +3,15 @@
 from __future__ import annotations
 
 import re
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NoReturn
 
 from watchglass.base import codes, units
-from watchglass.base.findings import Related, did_you_mean
+from watchglass.base.findings import Finding, Related, did_you_mean
 from watchglass.base.quantities import Kind, Number, Quantity
-from watchglass.base.scan import REFUSED, unknown_unit
+from watchglass.base.scan import unknown_unit
+from watchglass.base.units import REFUSED
 from watchglass.read import syntax
+from watchglass.read.expressions import StopReading
 from watchglass.read.words import CLAUSE_WORDS, CLOSURES, MEASURES_OF_ALL, NAME, PARTS, SETTINGS
 
 if TYPE_CHECKING:
@@ -27,9 +29,12 @@ def read_place(cursor: Cursor) -> syntax.Place:
         part = cursor.name("a part")
         if part.text not in PARTS:
             cursor.stop(
-                codes.MARK_NOT_READ, part.span, f"`{part.text}` is no part of what a vessel holds",
-                did_you_mean(part.text, PARTS) or "take one of " + ", ".join(f"`{p}`" for p in sorted(PARTS)),
-            )  # fmt: skip
+                codes.MARK_NOT_READ,
+                part.span,
+                f"`{part.text}` is no part of what a vessel holds",
+                did_you_mean(part.text, PARTS)
+                or "take one of " + ", ".join(f"`{p}`" for p in sorted(PARTS)),
+            )
         return syntax.Place(name, part.text, cursor.span(start))
     return syntax.Place(name, None, cursor.span(start))
 
@@ -52,25 +57,25 @@ def read_clauses(cursor: Cursor) -> tuple[syntax.Clause, ...]:
             continue
         for before in clauses:
             if before.word == clause.word:
-                _twice(cursor, clause, before)
+                _twice(clause, before)
         clauses.append(clause)
     return tuple(clauses)
 
 
-def _twice(cursor: Cursor, clause: syntax.Clause, before: syntax.Clause) -> None:
-    from watchglass.base.findings import Finding  # noqa: PLC0415 - only when something is wrong
-    from watchglass.read.expressions import StopReading  # noqa: PLC0415
-
+def _twice(clause: syntax.Clause, before: syntax.Clause) -> NoReturn:
     said = "a closure" if clause.word == "closure" else f"`{clause.word}`"
     raise StopReading(
         Finding(
-            code=codes.CLAUSE_TWICE, span=clause.span, message=f"{said} stands twice in one act",
-            related=(Related(before.span, "it stood here first"),), help="keep one of the two",
-        )  # fmt: skip
+            code=codes.CLAUSE_TWICE,
+            span=clause.span,
+            message=f"{said} stands twice in one act",
+            related=(Related(before.span, "it stood here first"),),
+            help="keep one of the two",
+        )
     )
 
 
-def _after_comma(cursor: Cursor) -> syntax.Clause | None:
+def _after_comma(cursor: Cursor) -> syntax.Clause | None:  # noqa: RET503 - `stop` never returns
     """Read `, open`, `, in hood`; or a comma that only divides clauses."""
     cursor.takes(",")
     start = cursor.at
@@ -88,10 +93,12 @@ def _after_comma(cursor: Cursor) -> syntax.Clause | None:
     rest = cursor.rest()
     word = cursor.peek_word()
     cursor.stop(
-        codes.MARK_NOT_READ, cursor.source.span(start, start + len(word)) if word else rest,
+        codes.MARK_NOT_READ,
+        cursor.source.span(start, start + len(word)) if word else rest,
         f"`{word or rest.text}` is no closure and no place",
-        did_you_mean(rest.text, _ALL_COMMA) or "take one of " + ", ".join(f"`{w}`" for w in CLOSURES + SETTINGS),
-    )  # fmt: skip
+        did_you_mean(rest.text, _ALL_COMMA)
+        or "take one of " + ", ".join(f"`{w}`" for w in CLOSURES + SETTINGS),
+    )
 
 
 def _value(cursor: Cursor, word: str) -> syntax.ClauseValue:
@@ -109,9 +116,11 @@ def _value(cursor: Cursor, word: str) -> syntax.ClauseValue:
         return syntax.Ph(measured.quantity, cursor.span(start))
     if word == "until":
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.rest(), "what follows `until` stands in double quotes",
+            codes.MARK_NOT_READ,
+            cursor.rest(),
+            "what follows `until` stands in double quotes",
             f'write `until "{cursor.rest().text}"`',
-        )  # fmt: skip
+        )
     if (all_of := cursor.peek_word()) in MEASURES_OF_ALL:
         cursor.takes_word(all_of)
         cursor.takes_word("of")

@@ -98,7 +98,7 @@ class After:
 Expression = Measured | Name | Words | Call | Binary | Negative | Compare | Within | Held | After
 
 
-class StopReading(Exception):
+class StopReading(Exception):  # noqa: N818 - no error: it ends one act
     """Ends the reading of one act or expression; carries the finding. Never leaves `read`."""
 
     def __init__(self, finding: Finding) -> None:
@@ -193,9 +193,11 @@ class Cursor:
         close = self.text.find('"', start + 1, self.end)
         if close < 0:
             self.stop(
-                codes.MARK_NOT_READ, self.source.span(start, start + 1),
-                "a quote opens and never closes", 'add `"`',
-            )  # fmt: skip
+                codes.MARK_NOT_READ,
+                self.source.span(start, start + 1),
+                "a quote opens and never closes",
+                'add `"`',
+            )
         self.at = close + 1
         words = Words(self.text[start + 1 : close], self.source.span(start, close + 1))
         self.blanks()
@@ -207,7 +209,9 @@ class Cursor:
             return None
         found = scan_quantity(self.text, self.at, self.end, measures=self.measures)
         if isinstance(found, Fault):
-            self.stop(found.code, self.source.span(found.start, found.end), found.message, found.help)
+            self.stop(
+                found.code, self.source.span(found.start, found.end), found.message, found.help
+            )
         if not isinstance(found, Found):
             return None
         start = self.at
@@ -226,6 +230,7 @@ class Cursor:
 
 
 def cut(text: str, most: int = 30) -> str:
+    """Shorten words for a message."""
     return text if len(text) <= most else text[:most] + "…"
 
 
@@ -235,7 +240,7 @@ def ends_in_unit(cursor: Cursor) -> bool:
     if text == "1" or text in units.UNITS:
         return True
     found = scan_quantity("1 " + text, 0)
-    return isinstance(found, Found) and found.measured and found.end == len(text) + 2  # noqa: PLR2004
+    return isinstance(found, Found) and found.measured and found.end == len(text) + 2
 
 
 class ExpressionReader:
@@ -274,22 +279,28 @@ class ExpressionReader:
                 operator = {"≤": "<=", "≥": ">="}.get(sign, sign)
                 return Compare(operator, left, right, cursor.span(start))
         sign = cursor.text[cursor.at]
-        if sign in "+-*·×/^−":  # noqa: RUF001
+        if sign in "+-*·×/^−":
             return self._binary(sign, left, start, binding)
         return self._word_tie(left, start, binding)
 
     def _binary(self, sign: str, left: Expression, start: int, binding: int) -> Expression | None:
         cursor = self.cursor
-        sign = "-" if sign == "−" else sign  # noqa: RUF001
+        sign = "-" if sign == "−" else sign
         power = _POWERS[sign]
         if power <= binding:
             return None
         at = cursor.at
         if cursor.text.startswith("->", at) or cursor.text.startswith("**", at):
-            self._stop(cursor.source.span(at, at + 2), f"`{cursor.text[at : at + 2]}` is no operator here")
-        if sign == "-" and not (cursor.text[at - 1 : at].isspace() and cursor.text[at + 1 : at + 2].isspace()):
             self._stop(
-                cursor.source.span(at, at + 1), "a minus sign needs a blank on both sides", "write ` - `"
+                cursor.source.span(at, at + 2), f"`{cursor.text[at : at + 2]}` is no operator here"
+            )
+        if sign == "-" and not (
+            cursor.text[at - 1 : at].isspace() and cursor.text[at + 1 : at + 2].isspace()
+        ):
+            self._stop(
+                cursor.source.span(at, at + 1),
+                "a minus sign needs a blank on both sides",
+                "write ` - `",
             )
         cursor.at += 1
         cursor.blanks()
@@ -325,13 +336,19 @@ class ExpressionReader:
         cursor = self.cursor
         start = cursor.at
         if cursor.done:
-            self._stop(cursor.rest(), "the expression ends too early", "add a number, a name or `(`")
+            self._stop(
+                cursor.rest(), "the expression ends too early", "add a number, a name or `(`"
+            )
         if cursor.takes("("):
             inner = self.read()
             if not cursor.takes(")"):
-                self._stop(cursor.source.span(start, start + 1), "`(` opens here and never closes", "add `)`")
+                self._stop(
+                    cursor.source.span(start, start + 1),
+                    "`(` opens here and never closes",
+                    "add `)`",
+                )
             return inner
-        if cursor.text[start] in "-−" and not cursor.text[start + 1 : start + 2].isdigit():  # noqa: RUF001
+        if cursor.text[start] in "-−" and not cursor.text[start + 1 : start + 2].isdigit():
             cursor.at += 1
             cursor.blanks()
             return Negative(self.read(_BINDS_SIGN), cursor.span(start))
@@ -342,9 +359,10 @@ class ExpressionReader:
             return value
         if not NAME.match(cursor.text, start, cursor.end):
             self._stop(
-                cursor.source.span(start, start + 1), f"`{cursor.text[start]}` cannot stand here",
+                cursor.source.span(start, start + 1),
+                f"`{cursor.text[start]}` cannot stand here",
                 "write a number, a name or `(`",
-            )  # fmt: skip
+            )
         name = cursor.name("a name")
         return self._call(name, start) if cursor.takes("(") else name
 
@@ -359,9 +377,11 @@ class ExpressionReader:
                 if not cursor.takes(","):
                     self._stop(
                         cursor.source.span(name.span.end, name.span.end + 1),
-                        "`(` opens here and never closes" if cursor.done
-                        else f"`,` or `)` is expected{cursor.here()}", "add `)`",
-                    )  # fmt: skip
+                        "`(` opens here and never closes"
+                        if cursor.done
+                        else f"`,` or `)` is expected{cursor.here()}",
+                        "add `)`",
+                    )
         return Call(name, tuple(arguments), cursor.span(start))
 
     def _argument(self, name: Name) -> Expression:
@@ -375,7 +395,9 @@ class ExpressionReader:
         self.unit_follows = unit
         if isinstance(value, Measured) and not cursor.done and cursor.text[cursor.at] not in ",)":
             material = cursor.name("a material")
-            return Call(Name("amount", value.span), (value, material), value.span.through(material.span))
+            return Call(
+                Name("amount", value.span), (value, material), value.span.through(material.span)
+            )
         return value
 
     def _raw_words(self) -> Words:
@@ -407,10 +429,11 @@ def read_expression(
         expression = ExpressionReader(cursor).read()
         if not cursor.done:
             cursor.stop(
-                codes.EXPRESSION_NOT_READ, cursor.rest(),
+                codes.EXPRESSION_NOT_READ,
+                cursor.rest(),
                 f"`{cut(cursor.rest().text)}` cannot follow a whole expression",
                 "put an operator between, or take it out",
-            )  # fmt: skip
+            )
     except StopReading as stop:
         return None, (stop.finding,)
     return expression, ()

@@ -11,7 +11,8 @@ from typing import TYPE_CHECKING, NoReturn
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, did_you_mean
-from watchglass.base.scan import REFUSED, unknown_unit
+from watchglass.base.scan import unknown_unit
+from watchglass.base.units import REFUSED
 from watchglass.read import syntax
 from watchglass.read.clauses import read_amount, read_clauses, read_place
 from watchglass.read.expressions import (
@@ -30,12 +31,12 @@ if TYPE_CHECKING:
     from watchglass.base.spans import Source, Span
 
 _RECORD_NAME = re.compile(r"\s*([^\W_][\w-]*)\s*:\s+")
-_RECORD_UNIT = re.compile(r".*\bin\s+(?=\S)", re.S)
-_STEPS = re.compile(r"(\d+)(?:\s*[–—-]\s*(\d+))?(?![\w-])")  # noqa: RUF001
+_RECORD_UNIT = re.compile(r".*\bin\s+(?=\S)", re.DOTALL)
+_STEPS = re.compile(r"(\d+)(?:\s*[–—-]\s*(\d+))?(?![\w-])")
 _COUNT = re.compile(r"(\d+)\s+more\s+times?\b")
 _AT_MOST = re.compile(r"at\s+most\s+(\d+)\b")
 _NEXT_PERIOD = re.compile(r"next\s+period\b")
-_SUPPOSED = re.compile(r"is\s+(\w+)\s*:\s*(\S.*)", re.S)
+_SUPPOSED = re.compile(r"is\s+(\w+)\s*:\s*(\S.*)", re.DOTALL)
 MOST_PASSES = 1000
 
 
@@ -56,20 +57,25 @@ def read_mark(
     text = source.text
     if not text[start:end].strip():
         finding = Finding(
-            code=codes.MARK_EMPTY, span=source.span(start - 1, end + 1), message="the mark is empty",
+            code=codes.MARK_EMPTY,
+            span=source.span(start - 1, end + 1),
+            message="the mark is empty",
             help="write an act in it, or take the braces out",
-        )  # fmt: skip
+        )
         return (syntax.BrokenAct(source.span(start - 1, end + 1)),), (finding,)
     acts: list[syntax.Act] = []
     findings: list[Finding] = []
     for a, b in _divide(text, start, end):
         cursor = Cursor(source, a, b, measures)
         try:
-            if cursor.done:
+            if cursor.at >= cursor.end:
+                before = a - 1 if a > start else a
                 cursor.stop(
-                    codes.MARK_NOT_READ, source.span(max(a - 1, start), min(max(b, a), end)) if a > start else source.span(a, b + 1),
-                    "nothing stands beside the `;`", "take the `;` out",
-                )  # fmt: skip
+                    codes.MARK_NOT_READ,
+                    source.span(before, max(b, before + 1)),
+                    "nothing stands beside the `;`",
+                    "take the `;` out",
+                )
             act = _act(cursor)
             if not cursor.done:
                 _left_over(cursor)
@@ -98,9 +104,11 @@ def _divide(text: str, start: int, end: int) -> list[tuple[int, int]]:
 def _left_over(cursor: Cursor) -> NoReturn:
     rest = cursor.rest()
     cursor.stop(
-        codes.MARK_NOT_READ, rest, f"`{cut(rest.text)}` cannot stand here",
+        codes.MARK_NOT_READ,
+        rest,
+        f"`{cut(rest.text)}` cannot stand here",
         "divide acts with `;`, or take it out",
-    )  # fmt: skip
+    )
 
 
 # ------------------------------------------------------------------------------ acts
@@ -143,17 +151,21 @@ def _measured(cursor: Cursor, start: int, measured: syntax.Measured) -> syntax.A
         return syntax.QuantityAct(measured, cursor.span(start))
     if cursor.text.startswith("->", cursor.at):
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.source.span(cursor.at, cursor.at + 2),
-            f"`{measured.quantity.text}` of what?", "name the material before the arrow",
-        )  # fmt: skip
+            codes.MARK_NOT_READ,
+            cursor.source.span(cursor.at, cursor.at + 2),
+            f"`{measured.quantity.text}` of what?",
+            "name the material before the arrow",
+        )
     return _amounts(cursor, start, read_amount(cursor, start, measured))
 
 
 def _unit_missing(cursor: Cursor, measured: syntax.Measured) -> NoReturn:
     cursor.stop(
-        codes.UNIT_MISSING, measured.span, f"`{measured.quantity.text}` has no unit",
+        codes.UNIT_MISSING,
+        measured.span,
+        f"`{measured.quantity.text}` has no unit",
         "write the unit after it, as in `5 mL`, or take the braces off a plain number",
-    )  # fmt: skip
+    )
 
 
 def _amounts(cursor: Cursor, start: int, first: syntax.Amount) -> syntax.Act:
@@ -178,16 +190,20 @@ def _next_amount(cursor: Cursor) -> syntax.Amount:
         return syntax.Amount(word, name, cursor.span(start))
     measured = cursor.quantity()
     if measured is None:
-        cursor.stop(codes.MARK_NOT_READ, cursor.rest(), f"an amount is expected after `+`{cursor.here()}")
+        cursor.stop(
+            codes.MARK_NOT_READ, cursor.rest(), f"an amount is expected after `+`{cursor.here()}"
+        )
     return read_amount(cursor, start, measured)
 
 
 def _arrow(cursor: Cursor) -> syntax.Place:
     if not (cursor.takes("->") or cursor.takes("→")):
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.rest(), f"`->` is expected{cursor.here()}",
+            codes.MARK_NOT_READ,
+            cursor.rest(),
+            f"`->` is expected{cursor.here()}",
             "write where it goes, as in `-> funnel`",
-        )  # fmt: skip
+        )
     return read_place(cursor)
 
 
@@ -205,9 +221,12 @@ def _named(cursor: Cursor, start: int) -> syntax.Act:
     word = place.name
     if place.part is None and before < cursor.end:
         cursor.stop(
-            codes.ACT_UNKNOWN, word.span, f"`{word.text}` is no act of the bench",
-            did_you_mean(word.text, VERBS | OTHER_ACTS) or "begin with a verb such as `stir`, an amount or a name",
-        )  # fmt: skip
+            codes.ACT_UNKNOWN,
+            word.span,
+            f"`{word.text}` is no act of the bench",
+            did_you_mean(word.text, VERBS | OTHER_ACTS)
+            or "begin with a verb such as `stir`, an amount or a name",
+        )
     _left_over(cursor)
 
 
@@ -230,9 +249,13 @@ def _verb(cursor: Cursor, start: int, verb: str) -> syntax.VerbAct:
     if target is None:
         wanted = "a time" if verb in ("take", "wait") else "what it is done to"
         cursor.stop(
-            codes.MARK_NOT_READ, verb_span, f"`{verb}` does not say {wanted}",
-            f"write `{verb} 5 min`" if wanted == "a time" else f"name the vessel, as in `{verb} flask`",
-        )  # fmt: skip
+            codes.MARK_NOT_READ,
+            verb_span,
+            f"`{verb}` does not say {wanted}",
+            f"write `{verb} 5 min`"
+            if wanted == "a time"
+            else f"name the vessel, as in `{verb} flask`",
+        )
     if verb == "test" and NAME.match(cursor.text, cursor.at, cursor.end):
         subject = cursor.name("what is tested")
     clauses = read_clauses(cursor)
@@ -243,7 +266,9 @@ def _suppose(cursor: Cursor, start: int, verb_span: Span) -> syntax.VerbAct:
     """`suppose 80 % acetanilide in clear is solid: mean of last year`."""
     measured = cursor.quantity()
     if measured is None:
-        cursor.stop(codes.MARK_NOT_READ, cursor.rest(), "`suppose` begins with a share or an amount")
+        cursor.stop(
+            codes.MARK_NOT_READ, cursor.rest(), "`suppose` begins with a share or an amount"
+        )
     amount = read_amount(cursor, measured.span.start, measured)
     clauses: list[syntax.Clause] = []
     at = cursor.at
@@ -252,9 +277,11 @@ def _suppose(cursor: Cursor, start: int, verb_span: Span) -> syntax.VerbAct:
     found = _SUPPOSED.match(cursor.text, cursor.at, cursor.end)
     if found is None or not clauses:
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.rest(), "`suppose` needs a vessel, an outcome and a reason",
+            codes.MARK_NOT_READ,
+            cursor.rest(),
+            "`suppose` needs a vessel, an outcome and a reason",
             "write `suppose 80 % product in flask is solid: the reason`",
-        )  # fmt: skip
+        )
     span = cursor.source.span
     outcome = syntax.Words(found[1], span(found.start(1), found.end(1)))
     reason = syntax.Words(found[2].strip(), span(found.start(2), found.end(2)))
@@ -289,19 +316,23 @@ def _again(cursor: Cursor, start: int) -> syntax.AgainAct:
             _left_over(cursor)
     if not steps:
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.source.span(start, start + 5), "`again` does not say which steps",
-            "write `again 3–4`",  # noqa: RUF001
-        )  # fmt: skip
+            codes.MARK_NOT_READ,
+            cursor.source.span(start, start + 5),
+            "`again` does not say which steps",
+            "write `again 3–4`",
+        )
     return syntax.AgainAct(tuple(steps), times, at_most, fresh, exchanges, cursor.span(start))
 
 
 def _count(cursor: Cursor, found: re.Match[str]) -> int:
     span = cursor.source.span(found.start(), found.end())
-    if len(found[1]) > 4 or not 0 < int(found[1]) <= MOST_PASSES:  # noqa: PLR2004
+    if len(found[1]) > 4 or not 0 < int(found[1]) <= MOST_PASSES:
         cursor.stop(
-            codes.MARK_NOT_READ, span, f"`{cut(found[0])}` is beyond the passes that are run",
+            codes.MARK_NOT_READ,
+            span,
+            f"`{cut(found[0])}` is beyond the passes that are run",
             f"keep to 1 to {MOST_PASSES}",
-        )  # fmt: skip
+        )
     cursor.at = found.end()
     cursor.blanks()
     return int(found[1])
@@ -324,9 +355,11 @@ def _exchanges(cursor: Cursor) -> tuple[tuple[syntax.Name, syntax.Name], ...]:
         new.append(cursor.name("a name"))
     if not cursor.takes_word("as"):
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.rest(), f"`as` is expected{cursor.here()}",
+            codes.MARK_NOT_READ,
+            cursor.rest(),
+            f"`as` is expected{cursor.here()}",
             "say what is exchanged, as in `with tube-2 as tube-1`",
-        )  # fmt: skip
+        )
     old = cursor.name("a name")
     return tuple((name, old) for name in new)
 
@@ -385,9 +418,11 @@ def _record(cursor: Cursor, start: int) -> syntax.RecordAct:
     label, unit = _label_and_unit(cursor, label_start, label_end)
     if not label:
         cursor.stop(
-            codes.MARK_NOT_READ, cursor.source.span(start, start + 1), "the record does not say what is recorded",
+            codes.MARK_NOT_READ,
+            cursor.source.span(start, start + 1),
+            "the record does not say what is recorded",
             "write a few words, as in `? mass of product in g`",
-        )  # fmt: skip
+        )
     expression = None
     if equals >= 0:
         cursor.at = equals + 1

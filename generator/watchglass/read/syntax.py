@@ -63,8 +63,6 @@ class Place:
     span: Span
 
 
-
-
 @dataclass(frozen=True, slots=True)
 class Words:
     """Text in double quotes or plain words, as after `until`."""
@@ -451,9 +449,7 @@ class Fenced:
     span: Span
 
 
-Block = (
-    Paragraph | Heading | Steps | ListBlock | Quote | CodeBlock | Rule | Table | Fenced
-)
+Block = Paragraph | Heading | Steps | ListBlock | Quote | CodeBlock | Rule | Table | Fenced
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -8,14 +8,60 @@ from watchglass.base.units import UNITS
 
 #: Verbs of the bench. Each is printed as itself.
 VERBS = frozenset(
-    "mix stir swirl shake dissolve settle heat warm cool chill boil reflux react adjust titrate "
-    "fill dry filter decant evaporate distil collect weigh rinse discard vent test take wait "
-    "suppose".split()
+    [
+        "mix",
+        "stir",
+        "swirl",
+        "shake",
+        "dissolve",
+        "settle",
+        "heat",
+        "warm",
+        "cool",
+        "chill",
+        "boil",
+        "reflux",
+        "react",
+        "adjust",
+        "titrate",
+        "fill",
+        "dry",
+        "filter",
+        "decant",
+        "evaporate",
+        "distil",
+        "collect",
+        "weigh",
+        "rinse",
+        "discard",
+        "vent",
+        "test",
+        "take",
+        "wait",
+        "suppose",
+    ]
 )
 #: Words that begin an act without being verbs of the bench.
 OTHER_ACTS = frozenset(("again", "label", "step", "next"))
 CLAUSE_WORDS = frozenset(
-    "by from into through on with to for at over below as giving leaving until in".split()
+    [
+        "by",
+        "from",
+        "into",
+        "through",
+        "on",
+        "with",
+        "to",
+        "for",
+        "at",
+        "over",
+        "below",
+        "as",
+        "giving",
+        "leaving",
+        "until",
+        "in",
+    ]
 )
 MEASURES_OF_ALL = frozenset(("all", "half", "rest"))
 PARTS = frozenset(("aqueous", "organic", "upper", "lower", "solid", "liquid"))

@@ -1,4 +1,4 @@
-"""Characters as a terminal shows them: how many columns wide, and which are better shown as escapes.
+"""Characters as a terminal shows them: how many columns wide, and which only as escapes.
 
 What an author wrote may hold anything, a sequence that clears the screen or one that turns the
 reading direction included. Nothing of that kind is ever written raw: control characters, format
@@ -27,7 +27,7 @@ _JAMO_FIRST, _JAMO_LAST = "\u1160", "\u11ff"
 
 @lru_cache(maxsize=4096)
 def shown(char: str, *, unicode: bool = True) -> str:
-    """Give what is printed for one character: itself, or its number where it is not safe to print."""
+    """Give what is printed for one character: itself, or its number where it is unsafe."""
     if " " <= char <= "~":
         return char
     if category(char) in _UNSAFE or not (unicode or char.isascii()):

@@ -1,4 +1,4 @@
-"""Findings for other programs: one JSON object, versioned.
+r"""Findings for other programs: one JSON object, versioned.
 
     {"version": 1,
      "tool": {"name": "watchglass", "version": "0.1.0"},
@@ -14,7 +14,7 @@
         "fix": {"path": "…", "start": {…}, "end": {…}, "text": "…"} or null}]}
 
 Lines and columns count from 1, offsets from 0. All count Unicode code points in the text with its
-byte order mark removed and its line ends made `\\n`; an `end` is the first place after the span,
+byte order mark removed and its line ends made `\n`; an `end` is the first place after the span,
 so an empty span has equal ends. `severity` is `error`, `warning` or `note`. Findings are in the
 order of their paths and offsets, repeats are dropped, keys stand in the order shown and none is
 left out. `path` is the name of the source within its set, with forward slashes. Applying a `fix`

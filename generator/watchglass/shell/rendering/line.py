@@ -1,7 +1,7 @@
-"""One line a finding: for editors that jump to a place, and for searching and counting.
+r"""One line a finding: for editors that jump to a place, and for searching and counting.
 
 The form is `path:line:column: severity[NUMBER name]: message (help: …)`. Line and column count
-from 1. Line ends inside a message are written as `\\n`, so that a line is always a finding.
+from 1. Line ends inside a message are written as `\n`, so that a line is always a finding.
 """
 
 from __future__ import annotations

@@ -1,0 +1,142 @@
+"""The catalogue as one thing to look up in: the shipped tables with a set's additions over them.
+
+The shipped tables hold some hundred substances and are read on every save, so an entry is decoded
+only when it is asked for: the file is cut at its top-level keys, and a shipped index tells which
+names belong to which key (a test holds the two together). A set's own entries are few and are
+decoded at once, since their faults are the author's.
+"""
+
+from __future__ import annotations
+
+import re
+from dataclasses import dataclass, field
+from typing import TYPE_CHECKING
+
+from watchglass.base import codes
+from watchglass.base.findings import Finding, Related
+from watchglass.base.yaml import YamlMapping, read_yaml
+from watchglass.catalogue.decode import decode_substance
+
+if TYPE_CHECKING:
+    from collections.abc import Iterable, Mapping
+
+    from watchglass.base.spans import Source
+    from watchglass.catalogue.glassware import GlasswareType
+    from watchglass.catalogue.stocks import Indicator, Stock
+    from watchglass.catalogue.substances import Substance
+
+_TOP_KEY = re.compile(r"^([^\s#:][^:\n]*):", re.MULTILINE)
+
+
+class ShippedSubstances:
+    """Entries of the shipped tables, decoded when asked for and kept."""
+
+    __slots__ = ("_places", "_read", "names")
+
+    def __init__(self, sources: Iterable[Source], names: Mapping[str, str]) -> None:
+        """Cut the tables at their keys.
+
+        Args:
+            sources: The shipped files.
+            names: Key by case-folded name, for all of them.
+        """
+        self.names = names
+        self._places: dict[str, tuple[Source, int, int]] = {}
+        self._read: dict[str, Substance | None] = {}
+        for source in sources:
+            found = list(_TOP_KEY.finditer(source.text))
+            ends = [m.start() for m in found[1:]] + [len(source.text)]
+            for match, end in zip(found, ends, strict=True):
+                self._places[match[1]] = (source, match.start(), end)
+
+    def __contains__(self, key: str) -> bool:
+        """Tell whether there is such a key."""
+        return key in self._places
+
+    def keys(self) -> tuple[str, ...]:
+        """Give all keys in the order of the files."""
+        return tuple(self._places)
+
+    def get(self, key: str) -> Substance | None:
+        """Decode an entry; None where there is none."""
+        if key in self._read:
+            return self._read[key]
+        place = self._places.get(key)
+        substance = None
+        if place is not None:
+            node, _ = read_yaml(*place)
+            if isinstance(node, YamlMapping) and node.entries:
+                substance, _ = decode_substance(node.entries[0])
+        self._read[key] = substance
+        return substance
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Catalogue:
+    """Everything that can be looked up by name.
+
+    Attributes:
+        shipped: The shipped substances.
+        own: The set's substances by key; they win over the shipped ones.
+        own_names: Key by case-folded name of the set's substances.
+        glassware: Types of vessel by case-folded name.
+        indicators: Indicators by key.
+        stocks: The set's stocks by key and case-folded name.
+        measures: Countable measures with their size in m3, None where unknown.
+        aids: Things that need no declaration, case-folded.
+    """
+
+    shipped: ShippedSubstances
+    own: Mapping[str, Substance] = field(default_factory=dict)
+    own_names: Mapping[str, str] = field(default_factory=dict)
+    glassware: Mapping[str, GlasswareType] = field(default_factory=dict)
+    indicators: Mapping[str, Indicator] = field(default_factory=dict)
+    stocks: Mapping[str, Stock] = field(default_factory=dict)
+    measures: Mapping[str, float | None] = field(default_factory=dict)
+    aids: frozenset[str] = frozenset()
+
+    def by_key(self, key: str) -> Substance | None:
+        """Find a substance by its catalogue key only."""
+        return self.own.get(key) or self.shipped.get(key)
+
+    def find(self, word: str) -> Substance | None:
+        """Find a substance by key, name or synonym; case does not count."""
+        exact = self.by_key(word)
+        if exact is not None:
+            return exact
+        folded = " ".join(word.split()).casefold()
+        key = self.own_names.get(folded) or self.shipped.names.get(folded)
+        return self.by_key(key) if key else None
+
+    def words(self) -> tuple[str, ...]:
+        """Give every name and key, for near misses."""
+        return (
+            *self.own_names,
+            *self.own,
+            *self.shipped.names,
+            *self.shipped.keys(),
+            *(stock for stock in self.stocks),
+        )
+
+
+def name_index(substances: Iterable[Substance]) -> tuple[dict[str, str], tuple[Finding, ...]]:
+    """Map every name to its key; a name that two substances share is a finding at the second."""
+    index: dict[str, Substance] = {}
+    findings = []
+    for substance in substances:
+        for name in (substance.key, *substance.names):
+            folded = " ".join(name.split()).casefold()
+            other = index.get(folded)
+            if other is None:
+                index[folded] = substance
+            elif other is not substance:
+                findings.append(
+                    Finding(
+                        code=codes.SUBSTANCE_NAME_TWICE,
+                        span=substance.span,
+                        message=f"`{name}` names `{substance.key}` and `{other.key}`",
+                        related=(Related(other.span, "it is named here first"),),
+                        help="take the name from one of the two",
+                    )
+                )
+    return {name: substance.key for name, substance in index.items()}, tuple(findings)

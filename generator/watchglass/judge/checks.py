@@ -1,0 +1,30 @@
+"""The checks of one procedure, in the order they are made: one table."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING
+
+from watchglass.judge.not_yet import not_yet_run, too_many_passes
+from watchglass.judge.period import time_over_period
+from watchglass.judge.provided import provided, volume_without_density
+from watchglass.judge.unused import unused
+
+if TYPE_CHECKING:
+    from collections.abc import Callable, Iterable
+
+    from watchglass.base.findings import Finding
+    from watchglass.judge.case import Case
+
+CHECKS: tuple[Callable[[Case], Iterable[Finding]], ...] = (
+    unused,
+    volume_without_density,
+    provided,
+    time_over_period,
+    too_many_passes,
+    not_yet_run,
+)
+
+
+def judge(case: Case) -> tuple[Finding, ...]:
+    """Make every check of one procedure."""
+    return tuple(finding for check in CHECKS for finding in check(case))

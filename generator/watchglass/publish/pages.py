@@ -1,0 +1,182 @@
+"""Procedure pages, one builder an edition, and ordinary pages."""
+
+from __future__ import annotations
+
+from collections import Counter
+from dataclasses import dataclass
+from typing import TYPE_CHECKING
+
+from watchglass.base.spans import Lines
+from watchglass.publish import model as m
+from watchglass.publish.body import BodyBuilder
+from watchglass.publish.lists import equipment_rows, reaction_lines
+from watchglass.publish.reagents import reagent_rows
+from watchglass.publish.text import quantity_words
+from watchglass.resolve import model
+from watchglass.run.evaluate import Evaluator
+from watchglass.run.roles import roles
+
+if TYPE_CHECKING:
+    from collections.abc import Mapping
+
+    from watchglass.base.findings import Finding
+    from watchglass.catalogue.catalogue import Catalogue
+    from watchglass.judge.case import Case
+    from watchglass.read.syntax import ProcedureSyntax
+    from watchglass.resolve.model import Acceptance
+
+ASSUMPTIONS = (
+    "Amounts are plain stoichiometry, by the IUPAC 2021 standard atomic weights (conventional values).",
+    "Volumes become masses by the catalogue's densities, at the temperature given there.",
+    "Volumes of solutions are taken as measured; a strength is that of the label.",
+    "Computed figures are estimates. pH, layers, gas, heat and recoveries are not assessed yet.",
+)
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Neighbours:
+    """Where a page stands in the handbook."""
+
+    address: str
+    previous: m.PageLink | None
+    following: m.PageLink | None
+    after: tuple[m.PageLink, ...]
+    addresses: Mapping[str, str]
+
+
+def _facts(case: Case, place: Neighbours, outline: list[tuple[int, str, str]]) -> m.Facts:
+    head = case.procedure.head
+    return m.Facts(
+        title=head.title,
+        code=head.code,
+        address=place.address,
+        course=head.course,
+        revision=head.revision,
+        time=tuple(_plain(quantity_words(quantity)) for quantity, _ in head.periods),
+        group=head.group,
+        after=place.after,
+        references=tuple((m.Run(text),) for text in head.references),
+        read=tuple((m.Run(text),) for text in head.read),
+        outline=tuple(outline),
+        previous=place.previous,
+        following=place.following,
+    )
+
+
+def _plain(words: tuple[m.Words, ...]) -> str:
+    return "".join(w.text for w in words if isinstance(w, m.Run))
+
+
+def _runs(case: Case) -> dict[int, int]:
+    """Count how often each step is run, for the number of its blanks."""
+    most: Counter[int] = Counter()
+    for happening in case.course.happenings:
+        most[happening.step] = max(most[happening.step], happening.turn)
+    return dict(most)
+
+
+def _builder(
+    case: Case, path: str, place: Neighbours, catalogue: Catalogue, *, instructor: bool
+) -> BodyBuilder:
+    evaluator = Evaluator(case.procedure, case.usage, catalogue, {})
+    return BodyBuilder(case.procedure, evaluator, place.addresses, path, instructor, _runs(case))
+
+
+def student_page(case: Case, path: str, place: Neighbours, catalogue: Catalogue) -> m.StudentPage:
+    """Make the page that students see."""
+    builder = _builder(case, path, place, catalogue, instructor=False)
+    blocks = case.procedure.syntax.body
+    body = builder.build(blocks)
+    return m.StudentPage(
+        facts=_facts(case, place, builder.outline),
+        before=builder.before(blocks),
+        reagents=reagent_rows(case.procedure, case.usage, roles(case.procedure, case.usage)),
+        equipment=equipment_rows(case.procedure),
+        reactions=reaction_lines(case.procedure),
+        body=body,
+    )
+
+
+def instructor_page(
+    case: Case,
+    path: str,
+    place: Neighbours,
+    catalogue: Catalogue,
+    *,
+    findings: tuple[Finding, ...],
+    accepted: tuple[tuple[Finding, Acceptance], ...],
+) -> m.InstructorPage:
+    """Make the page that instructors see."""
+    builder = _builder(case, path, place, catalogue, instructor=True)
+    blocks = case.procedure.syntax.body
+    body = builder.build(blocks)
+    lines = Lines(case.procedure.syntax.source.text)
+    return m.InstructorPage(
+        facts=_facts(case, place, builder.outline),
+        before=builder.before(blocks),
+        reagents=reagent_rows(case.procedure, case.usage, roles(case.procedure, case.usage)),
+        equipment=equipment_rows(case.procedure),
+        reactions=reaction_lines(case.procedure),
+        body=body,
+        findings=tuple(_finding(f, lines, "") for f in findings),
+        accepted=tuple(_finding(f, lines, a.reason) for f, a in accepted),
+        intended=tuple((entry.word, entry.reason) for entry in case.procedure.intended),
+        expectations=tuple(
+            m.ExpectationLine(e.written, "not assessed: the bench is not yet run")
+            for e in case.procedure.expectations
+        ),
+        assumptions=ASSUMPTIONS,
+    )
+
+
+def _finding(finding: Finding, lines: Lines, reason: str) -> m.FindingLine:
+    place = lines.position(finding.span.start)
+    return m.FindingLine(
+        finding.code.severity.word,
+        finding.code.number,
+        finding.code.name,
+        finding.message,
+        f"line {place.line}, column {place.column}",
+        finding.help or "",
+        reason,
+    )
+
+
+def ordinary_page(
+    path: str,
+    title: str,
+    address: str,
+    syntax: ProcedureSyntax,
+    addresses: Mapping[str, str],
+    catalogue: Catalogue,
+    *,
+    instructor: bool,
+) -> m.OrdinaryPage:
+    """Make an ordinary page; its first heading is its title and is not repeated."""
+    empty = _no_procedure(syntax)
+    evaluator = Evaluator(empty, {}, catalogue, {})
+    builder = BodyBuilder(empty, evaluator, addresses, path, instructor)
+    body = builder.build(syntax.body)
+    if body and isinstance(body[0], m.Title) and _plain_title(body[0]) == title:
+        body = body[1:]
+    return m.OrdinaryPage(title=title, address=address, body=body, outline=tuple(builder.outline))
+
+
+def _plain_title(block: m.Title) -> str:
+    return _plain(block.children)
+
+
+def _no_procedure(syntax: ProcedureSyntax) -> model.Procedure:
+    return model.Procedure(
+        syntax=syntax,
+        head=model.Head(title="", code=""),
+        materials={},
+        vessels={},
+        equipment={},
+        reactions={},
+        steps=(),
+        records=(),
+        expectations=(),
+        acceptances=(),
+        intended=(),
+    )

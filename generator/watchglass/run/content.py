@@ -1,0 +1,179 @@
+"""How much of each substance a quantity of a material brings.
+
+Plain stoichiometry: mass through molar mass, volume through density, solutions through their
+strength. Where a density or a formula is missing the answer is `Missing`, with what is missing:
+it is printed as unknown and never counted as nought.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from typing import TYPE_CHECKING
+
+from watchglass.base import dimensions as dim
+from watchglass.base.figures import CATALOGUE_FIGURES
+from watchglass.resolve import model
+
+if TYPE_CHECKING:
+    from watchglass.base.dimensions import Dimension
+    from watchglass.catalogue.substances import Substance
+
+
+@dataclass(frozen=True, slots=True)
+class Content:
+    """So much of one substance.
+
+    Attributes:
+        substance: Which.
+        moles: Amount of substance, mol.
+        mass: Mass, kg.
+        figures: Significant figures that may be shown.
+    """
+
+    substance: Substance
+    moles: float
+    mass: float
+    figures: int
+
+
+@dataclass(frozen=True, slots=True)
+class Missing:
+    """Why it cannot be computed.
+
+    Attributes:
+        what: `density`, `solution density`, `formula`, `solubility`, `composition`, `size` (of a
+            countable measure).
+        substance: Of which substance, or None.
+    """
+
+    what: str
+    substance: Substance | None
+
+
+def contents(
+    material: model.Material, dimension: Dimension, value: float, figures: int
+) -> tuple[Content, ...] | Missing:
+    """Work out what a quantity of a material holds.
+
+    Args:
+        material: What it is.
+        dimension: Mass, volume or amount of substance.
+        value: How much, in SI units (kg, m3, mol).
+        figures: Significant figures of that quantity.
+
+    Returns:
+        One entry a substance (a solvent is left out), or what is missing.
+    """
+    match material.composition:
+        case model.Pure(substance):
+            return _one(_pure(substance, dimension, value, figures))
+        case model.Solution(strength, solute, _):
+            return _one(_solution(strength, solute, dimension, value, figures))
+        case model.Saturated(solute, _):
+            return Missing("solubility", solute)
+        case model.Mixture():
+            return _mixture(material.composition, dimension, value, figures)
+        case _:
+            return Missing("composition", None)
+
+
+def _one(found: Content | Missing) -> tuple[Content, ...] | Missing:
+    return found if isinstance(found, Missing) else (found,)
+
+
+def _of_mass(substance: Substance, mass: float, figures: int) -> Content | Missing:
+    molar_mass = substance.molar_mass
+    if molar_mass is None:
+        return Missing("formula", substance)
+    return Content(substance, mass / (molar_mass * 1e-3), mass, min(figures, CATALOGUE_FIGURES))
+
+
+def _of_moles(substance: Substance, moles: float, figures: int) -> Content | Missing:
+    molar_mass = substance.molar_mass
+    if molar_mass is None:
+        return Missing("formula", substance)
+    return Content(substance, moles, moles * molar_mass * 1e-3, min(figures, CATALOGUE_FIGURES))
+
+
+def _of_volume(substance: Substance, volume: float, figures: int) -> Content | Missing:
+    if substance.density is None:
+        return Missing("density", substance)
+    density = substance.density.value
+    # A handbook's density does not limit what is measured at the bench: it is known better.
+    return _of_mass(substance, volume * density.si, figures)
+
+
+def _pure(
+    substance: Substance, dimension: Dimension, value: float, figures: int
+) -> Content | Missing:
+    if dimension == dim.MASS:
+        return _of_mass(substance, value, figures)
+    if dimension == dim.AMOUNT:
+        return _of_moles(substance, value, figures)
+    if dimension == dim.VOLUME:
+        return _of_volume(substance, value, figures)
+    return Missing("size", substance)
+
+
+def _solution(
+    strength: model.Strength, solute: Substance, dimension: Dimension, value: float, figures: int
+) -> Content | Missing:
+    basis, by = strength.quantity.dimension, strength.quantity.middle
+    shown = min(figures, strength.quantity.figures)
+    if dimension == dim.AMOUNT:
+        return _of_moles(solute, value, figures)
+    if dimension == dim.VOLUME:
+        if basis == dim.CONCENTRATION:
+            return _of_moles(solute, by * value, shown)
+        if basis == dim.MASS_CONCENTRATION:
+            return _of_mass(solute, by * value, shown)
+        if basis == dim.VOLUME_FRACTION:
+            return _of_volume(solute, by * value, shown)
+        return Missing("solution density", solute)
+    if dimension == dim.MASS:
+        if basis == dim.MASS_FRACTION:
+            return _of_mass(solute, by * value, shown)
+        return Missing("solution density", solute)
+    return Missing("size", solute)
+
+
+def _mixture(
+    mixture: model.Mixture, dimension: Dimension, value: float, figures: int
+) -> tuple[Content, ...] | Missing:
+    if mixture.basis == "strength":
+        found = [
+            _solution(
+                model.Strength(part.quantity, part.span), part.substance, dimension, value, figures
+            )
+            for part in mixture.parts
+        ]
+    elif mixture.basis == "mass" and dimension == dim.MASS:
+        whole = sum(part.quantity.si for part in mixture.parts)
+        found = [
+            _of_mass(part.substance, value * part.quantity.si / whole, figures)
+            for part in mixture.parts
+        ]
+    elif mixture.basis == "amount" and dimension == dim.MASS:
+        masses = [part.substance.molar_mass for part in mixture.parts]
+        for part, mass in zip(mixture.parts, masses, strict=True):
+            if mass is None:
+                return Missing("formula", part.substance)
+        whole = sum(
+            p.quantity.si * m * 1e-3 for p, m in zip(mixture.parts, masses, strict=True) if m
+        )
+        found = [
+            _of_moles(part.substance, value * part.quantity.si / whole, figures)
+            for part in mixture.parts
+        ]
+    elif mixture.basis == "volume" and dimension == dim.VOLUME:
+        whole = sum(part.quantity.si for part in mixture.parts)
+        found = [
+            _of_volume(part.substance, value * part.quantity.si / whole, figures)
+            for part in mixture.parts
+        ]
+    else:
+        return Missing("density", None)
+    for entry in found:
+        if isinstance(entry, Missing):
+            return entry
+    return tuple(entry for entry in found if isinstance(entry, Content))

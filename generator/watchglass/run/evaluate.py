@@ -1,0 +1,307 @@
+"""Evaluating expressions: figures that need no bench now; what needs one is unknown, and says so.
+
+Values carry SI numbers, a dimension and the figures they may show. `mass(standard)` is what one
+pass takes: a figure named in a step means that step's latest pass.
+"""
+
+from __future__ import annotations
+
+import math
+from dataclasses import dataclass
+from typing import TYPE_CHECKING
+
+from watchglass.base import dimensions as dim
+from watchglass.base.figures import CATALOGUE_FIGURES, MOST_FIGURES
+from watchglass.base.scan import Found, scan_quantity
+from watchglass.chemistry.formulas import Formula, parse_formula
+from watchglass.read.expressions import Binary, Call, Expression, Negative
+from watchglass.read.syntax import Measured, Name, Words
+from watchglass.resolve import model
+from watchglass.run.content import Content, contents
+from watchglass.run.usage import Use
+
+if TYPE_CHECKING:
+    from collections.abc import Mapping
+
+    from watchglass.base.dimensions import Dimension
+    from watchglass.catalogue.catalogue import Catalogue
+    from watchglass.catalogue.substances import Substance
+    from watchglass.run.usage import Usage
+
+
+@dataclass(frozen=True, slots=True)
+class Value:
+    """A number in SI units with its dimension and figures."""
+
+    si: float
+    dimension: Dimension
+    figures: int
+
+
+@dataclass(frozen=True, slots=True)
+class NotKnown:
+    """Why there is no value: `bench` (it needs the bench), `measured`, `data`, `words`."""
+
+    why: str
+
+
+Result = Value | NotKnown
+_NEEDS_BENCH = frozenset(("recovered", "fraction", "ph", "titre", "label", "step", "balance"))
+_ONE_ARGUMENT = {"ln": math.log, "log": math.log10, "sqrt": math.sqrt}
+
+
+@dataclass(slots=True)
+class Evaluator:
+    """Evaluates expressions of one procedure; `records` gives the expected values so far."""
+
+    procedure: model.Procedure
+    usage: Mapping[str, Usage]
+    catalogue: Catalogue
+    records: dict[str, Result]
+
+    def value(self, node: Expression) -> Result:
+        """Evaluate an expression; unknown where any part is."""
+        match node:
+            case Measured(quantity, _):
+                figures = MOST_FIGURES if quantity.dimension == dim.NUMBER else quantity.figures
+                return Value(quantity.middle, quantity.dimension, figures)
+            case Name(text, _, _):
+                return self.records.get(text, NotKnown("measured"))
+            case Negative(operand, _):
+                found = self.value(operand)
+                return (
+                    Value(-found.si, found.dimension, found.figures)
+                    if isinstance(found, Value)
+                    else found
+                )
+            case Binary():
+                return self._binary(node)
+            case Call():
+                return self._call(node)
+            case _:
+                return NotKnown("bench")
+
+    def _binary(self, node: Binary) -> Result:
+        left, right = self.value(node.left), self.value(node.right)
+        if isinstance(left, NotKnown):
+            return left
+        if isinstance(right, NotKnown):
+            return right
+        figures = min(left.figures, right.figures)
+        try:
+            match node.operator:
+                case "+":
+                    return Value(left.si + right.si, left.dimension, figures)
+                case "-":
+                    both = left.dimension == right.dimension == dim.TEMPERATURE
+                    return Value(
+                        left.si - right.si, dim.DIFFERENCE if both else left.dimension, figures
+                    )
+                case "*":
+                    return Value(left.si * right.si, left.dimension.times(right.dimension), figures)
+                case "/":
+                    return Value(left.si / right.si, left.dimension.over(right.dimension), figures)
+                case _:
+                    power = left.dimension.power(round(right.si))
+                    return Value(left.si**right.si, power, left.figures)
+        except (ZeroDivisionError, OverflowError, ValueError):
+            return NotKnown("data")
+
+    def _call(self, node: Call) -> Result:
+        name = (
+            node.function.text.lower() if node.function.text.lower() == "ph" else node.function.text
+        )
+        if name in _NEEDS_BENCH:
+            return NotKnown("bench")
+        if name in ("mean", "min", "max", "ln", "log", "sqrt", "round"):
+            return self._arithmetic(name, node)
+        if name == "theoretical-yield":
+            return self._theoretical_yield(node.arguments[0])
+        if name == "convert":
+            return self.value(node.arguments[0])
+        if not node.arguments:
+            return NotKnown("data")
+        return self._of_thing(name, node.arguments[0])
+
+    def _arithmetic(self, name: str, node: Call) -> Result:
+        values = [self.value(argument) for argument in node.arguments]
+        known = [value for value in values if isinstance(value, Value)]
+        if len(known) < len(values) or not known:
+            return next((v for v in values if isinstance(v, NotKnown)), NotKnown("data"))
+        first = known[0]
+        figures = min(value.figures for value in known)
+        numbers = [value.si for value in known]
+        try:
+            if name == "mean":
+                return Value(sum(numbers) / len(numbers), first.dimension, figures)
+            if name in ("min", "max"):
+                return Value({"min": min, "max": max}[name](numbers), first.dimension, figures)
+            if name == "round":
+                return Value(round(first.si, round(numbers[1])), first.dimension, first.figures)
+            dimension = dim.NUMBER
+            if name == "sqrt":
+                dimension = dim.named(tuple(e // 2 for e in first.dimension.exponents))
+            return Value(_ONE_ARGUMENT[name](first.si), dimension, figures)
+        except (ValueError, OverflowError, IndexError):
+            return NotKnown("data")
+
+    # ------------------------------------------------------------------ things
+
+    def _of_thing(self, name: str, thing: Expression) -> Result:
+        if name == "molar-mass":
+            return self._molar_mass(thing)
+        if name in ("density", "melts", "boils"):
+            return self._property(name, thing)
+        taken = self._taken(thing)
+        if isinstance(taken, NotKnown):
+            return taken
+        return self._measure(name, *taken)
+
+    def _substance(self, thing: Expression) -> Substance | None:
+        text = thing.text if isinstance(thing, Name | Words) else ""
+        material = self.procedure.materials.get(text)
+        if material is not None:
+            match material.composition:
+                case (
+                    model.Pure(substance)
+                    | model.Solution(_, substance, _)
+                    | model.Saturated(substance, _)
+                ):
+                    return substance
+                case _:
+                    return None
+        return self.catalogue.find(text) if text else None
+
+    def _molar_mass(self, thing: Expression) -> Result:
+        substance = self._substance(thing)
+        formula = substance.formula if substance else None
+        if formula is None and isinstance(thing, Name | Words):
+            read = parse_formula(thing.text)
+            formula = read if isinstance(read, Formula) else None
+        mass = formula.molar_mass if formula else None
+        if mass is None:
+            return NotKnown("data")
+        return Value(mass * 1e-3, dim.MOLAR_MASS, CATALOGUE_FIGURES)
+
+    def _property(self, name: str, thing: Expression) -> Result:
+        substance = self._substance(thing)
+        if substance is None:
+            return NotKnown("data")
+        if name == "density":
+            at = substance.density
+            quantity = at.value if at else None
+        else:
+            quantity = substance.melts if name == "melts" else substance.boils
+        if quantity is None:
+            return NotKnown("data")
+        return Value(quantity.middle, quantity.dimension, quantity.figures)
+
+    def _taken(self, thing: Expression) -> tuple[model.Material, Use] | NotKnown:
+        """Give the material and the one portion of it that a pass takes, or a stated amount."""
+        match thing:
+            case Call(Name("amount"), (Measured(quantity, span), Name() as of), _):
+                material = self.procedure.materials.get(of.text) or self._loose(of)
+                return (material, Use(quantity, "", 1, span)) if material else NotKnown("data")
+            case Name(text, _, _):
+                material = self.procedure.materials.get(text)
+                used = self.usage.get(text)
+                if material is None or used is None or not used.uses:
+                    return NotKnown(
+                        "bench" if self.procedure.names.get(text) == "label" else "data"
+                    )
+                if used.unsummed or len(used.uses) > 1:
+                    return NotKnown("bench")
+                return material, used.uses[0]
+            case _:
+                return NotKnown("bench")
+
+    def _loose(self, of: Name) -> model.Material | None:
+        substance = self.catalogue.find(of.text)
+        if substance is None:
+            return None
+        return model.Material(
+            name=of.text,
+            written=of.text,
+            composition=model.Pure(substance),
+            span=of.span,
+            value_span=of.span,
+        )
+
+    def _measure(self, name: str, material: model.Material, use: Use) -> Result:
+        quantity = use.quantity or material.provided
+        if quantity is None:
+            return NotKnown("data")
+        share = {"half": 0.5, "rest": math.nan}.get(use.of_all, 1.0) * self.procedure.head.scale
+        if math.isnan(share):
+            return NotKnown("bench")
+        value = quantity.middle * share
+        if (name, quantity.dimension) in (("mass", dim.MASS), ("volume", dim.VOLUME)):
+            return Value(value, quantity.dimension, quantity.figures)
+        if name == "strength":
+            return self._strength(material)
+        found = contents(material, quantity.dimension, value, quantity.figures)
+        if not isinstance(found, tuple) or len(found) != 1:
+            return NotKnown("data")
+        return self._from_content(name, found[0])
+
+    def _from_content(self, name: str, content: Content) -> Result:
+        if name == "moles":
+            return Value(content.moles, dim.AMOUNT, content.figures)
+        if name == "mass":
+            return Value(content.mass, dim.MASS, content.figures)
+        density = content.substance.density
+        if name == "volume" and density is not None:
+            return Value(content.mass / density.value.si, dim.VOLUME, content.figures)
+        return NotKnown("data")
+
+    def _strength(self, material: model.Material) -> Result:
+        match material.composition:
+            case model.Solution(strength, solute, _):
+                quantity = strength.quantity
+                if quantity.dimension == dim.CONCENTRATION:
+                    return Value(quantity.middle, dim.CONCENTRATION, quantity.figures)
+                if quantity.dimension == dim.MASS_CONCENTRATION and solute.molar_mass:
+                    amount = quantity.middle / (solute.molar_mass * 1e-3)
+                    return Value(amount, dim.CONCENTRATION, quantity.figures)
+            case _:
+                pass
+        return NotKnown("data")
+
+    def _theoretical_yield(self, node: Expression) -> Result:
+        """Mass of the first product from the limiting reactant, complete conversion, one pass."""
+        from watchglass.run.roles import roles  # noqa: PLC0415 - roles stand above plain values
+
+        reaction = self.procedure.reactions.get(node.text) if isinstance(node, Name) else None
+        if reaction is None or not reaction.balanced or not reaction.right:
+            return NotKnown("data")
+        limiting = next(
+            (
+                r
+                for r in roles(self.procedure, self.usage)
+                if r.reaction == reaction.name and r.limiting
+            ),
+            None,
+        )
+        if limiting is None:
+            return NotKnown("data")
+        product = reaction.right[0]
+        reactant = next(s for s in reaction.left if s.material == limiting.material)
+        mass = product.formula.molar_mass if product.formula else None
+        if mass is None:
+            return NotKnown("data")
+        turns = limiting.moles / float(reactant.coefficient)
+        return Value(turns * float(product.coefficient) * mass * 1e-3, dim.MASS, limiting.figures)
+
+
+def in_unit(value: Value, symbol: str) -> float | None:
+    """Give a value in a unit; None where the unit does not fit it."""
+    if not symbol:
+        return value.si
+    found = scan_quantity("1 " + symbol, 0)
+    if (
+        not isinstance(found, Found)
+        or found.quantity.dimension.exponents != value.dimension.exponents
+    ):
+        return None
+    unit = found.quantity.unit
+    return (value.si - unit.offset) / unit.factor

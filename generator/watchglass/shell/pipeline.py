@@ -1,0 +1,297 @@
+"""The stages in order, over a set or over single files. This module directs and computes nothing."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from pathlib import Path
+from typing import TYPE_CHECKING
+
+from watchglass.base.yaml import YamlMapping, read_yaml
+from watchglass.catalogue.catalogue import Catalogue, name_index
+from watchglass.catalogue.decode import decode_substances
+from watchglass.catalogue.ware import decode_stock
+from watchglass.judge.accept import settle
+from watchglass.judge.case import Case, faulty_body
+from watchglass.judge.checks import judge
+from watchglass.judge.sets import Appointment, judge_set
+from watchglass.read.procedure import read_page, read_procedure
+from watchglass.resolve.laboratory import Laboratory, read_laboratory
+from watchglass.resolve.page import resolve_page
+from watchglass.resolve.procedure import resolve
+from watchglass.resolve.schedule import Slot, read_schedule
+from watchglass.run.cards import page_card, procedure_card
+from watchglass.run.passes import run_through
+from watchglass.run.usage import usage
+from watchglass.shell.sets import SetFiles, find_set, from_bytes, read_set
+from watchglass.shell.shipped import shipped
+
+if TYPE_CHECKING:
+    from collections.abc import Iterable, Mapping, Sequence
+
+    from watchglass.base.findings import Finding
+    from watchglass.base.spans import Source
+    from watchglass.base.yaml import YamlNode
+    from watchglass.catalogue.stocks import Stock
+    from watchglass.catalogue.substances import Substance
+    from watchglass.read.syntax import ProcedureSyntax
+    from watchglass.resolve.model import Acceptance, Procedure
+    from watchglass.run.cards import Card
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Surroundings:
+    """What every procedure of a set is resolved in."""
+
+    catalogue: Catalogue
+    laboratory: Laboratory
+    schedule: tuple[Slot, ...]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Judged:
+    """One procedure with what was found.
+
+    Attributes:
+        path: Of its source within the set.
+        case: The procedure with its course and usage.
+        findings: What is open.
+        accepted: What was found and accepted.
+        card: Its digest.
+    """
+
+    path: str
+    case: Case
+    findings: tuple[Finding, ...]
+    accepted: tuple[tuple[Finding, Acceptance], ...]
+    card: Card
+
+    @property
+    def procedure(self) -> Procedure:
+        """The procedure."""
+        return self.case.procedure
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class JudgedPage:
+    """One ordinary page with what was found."""
+
+    path: str
+    syntax: ProcedureSyntax
+    findings: tuple[Finding, ...]
+    card: Card
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Analysis:
+    """A whole set, analysed.
+
+    Attributes:
+        root: Its folder.
+        surroundings: Catalogue, laboratory, schedule.
+        procedures: In the order of their paths.
+        pages: In the order of their paths.
+        findings: All that is open, of the whole set.
+        files: Paths of all its files.
+    """
+
+    root: Path
+    surroundings: Surroundings
+    procedures: tuple[Judged, ...]
+    pages: tuple[JudgedPage, ...]
+    findings: tuple[Finding, ...]
+    files: frozenset[str]
+
+
+@dataclass(frozen=True, slots=True)
+class CheckResult:
+    """What `check` found, and over how many procedures."""
+
+    findings: tuple[Finding, ...]
+    checked: int
+
+
+# ------------------------------------------------------------------------------ whole sets
+
+
+def analyse(files: SetFiles, root: Path) -> Analysis:
+    """Read, resolve, run and judge a whole set."""
+    around, found = surroundings(files.sources)
+    procedures = tuple(
+        analyse_procedure(path, source, around)
+        for path, source in files.sources.items()
+        if path.startswith("procedures/") and path.endswith(".md")
+    )
+    pages = tuple(
+        analyse_page(path, source, around)
+        for path, source in files.sources.items()
+        if path.startswith("pages/") and path.endswith(".md")
+    )
+    cards = (*(p.card for p in procedures), *(p.card for p in pages))
+    appointments = [
+        Appointment(code=c, span=s) for slot in around.schedule for c, s in slot.procedures
+    ]
+    findings = [*files.findings, *found]
+    findings += [finding for entry in procedures for finding in entry.findings]
+    findings += [finding for entry in pages for finding in entry.findings]
+    findings += judge_set(cards, appointments, files.files)
+    return Analysis(
+        root=root,
+        surroundings=around,
+        procedures=procedures,
+        pages=pages,
+        findings=tuple(findings),
+        files=files.files,
+    )
+
+
+def analyse_set(root: Path, *, shown: str = "") -> Analysis:
+    """Read a set from disk and analyse it; `shown` stands before the paths in findings."""
+    return analyse(read_set(root, shown=shown), root)
+
+
+def check_texts(texts: Mapping[str, bytes | str]) -> tuple[Finding, ...]:
+    """Analyse a set given as texts by path."""
+    return analyse(from_bytes(texts), Path()).findings
+
+
+# ------------------------------------------------------------------------------ single files
+
+
+def check_paths(paths: Sequence[Path]) -> CheckResult:
+    """Check sets and single files.
+
+    A single file is checked with the catalogue and laboratory of the set it lies in; what only
+    other files show (a code used twice) is left to the check of the set.
+    """
+    findings: list[Finding] = []
+    checked = 0
+    singles: dict[Path | None, list[Path]] = {}
+    for path in paths:
+        if path.is_dir():
+            analysis = analyse_set(path, shown=_shown(path))
+            findings += analysis.findings
+            checked += len(analysis.procedures)
+        else:
+            singles.setdefault(find_set(path), []).append(path)
+    for root, files in singles.items():
+        findings += _check_files(root, files)
+        checked += len(files)
+    return CheckResult(tuple(findings), checked)
+
+
+def _shown(folder: Path) -> str:
+    shown = folder.as_posix()
+    return "" if shown == "." else shown.rstrip("/") + "/"
+
+
+def _check_files(root: Path | None, paths: Iterable[Path]) -> list[Finding]:
+    sources: Mapping[str, Source] = {}
+    findings: list[Finding] = []
+    if root is not None:
+        around_files = read_surroundings(root)
+        sources = around_files.sources
+        findings += around_files.findings
+    around, found = surroundings(sources)
+    findings += found
+    for path in paths:
+        files = from_bytes({path.as_posix(): path.read_bytes()})
+        findings += files.findings
+        for name, source in files.sources.items():
+            inside = path.resolve().relative_to(root).as_posix() if root else ""
+            if inside.startswith("pages/"):
+                findings += analyse_page(name, source, around).findings
+            else:
+                findings += analyse_procedure(name, source, around).findings
+    return findings
+
+
+def read_surroundings(root: Path) -> SetFiles:
+    """Read only the YAML files that every procedure of a set is resolved in."""
+    texts: dict[str, bytes] = {}
+    for pattern in ("laboratory.yml", "stocks.yml", "substances/*.yml"):
+        for path in sorted(root.glob(pattern)):
+            texts[path.relative_to(root).as_posix()] = path.read_bytes()
+    return from_bytes(texts)
+
+
+# ------------------------------------------------------------------------------ the stages
+
+
+def surroundings(sources: Mapping[str, Source]) -> tuple[Surroundings, tuple[Finding, ...]]:
+    """Decode the catalogue additions, stocks, laboratory and schedule of a set."""
+    base = shipped()
+    findings: list[Finding] = []
+    nodes: dict[str, YamlNode | None] = {}
+    for path, source in sources.items():
+        if path.endswith(".yml"):
+            nodes[path], found = read_yaml(source)
+            findings += found
+    own: list[Substance] = []
+    for path, node in nodes.items():
+        if path.startswith("substances/"):
+            substances, found = decode_substances(node)
+            own += substances
+            findings += found
+    names, found = name_index(own)
+    findings += found
+    stocks, found = _stocks(nodes.get("stocks.yml"))
+    findings += found
+    laboratory, found = read_laboratory(nodes.get("laboratory.yml"), base.glassware)
+    findings += found
+    schedule, found = read_schedule(nodes.get("schedule.yml"))
+    findings += found
+    catalogue = Catalogue(
+        shipped=base.substances,
+        own={substance.key: substance for substance in own},
+        own_names=names,
+        glassware=base.glassware,
+        indicators=base.indicators,
+        stocks=stocks,
+        measures={**base.measures, **laboratory.measures},
+        aids=base.aids,
+    )
+    around = Surroundings(catalogue=catalogue, laboratory=laboratory, schedule=schedule)
+    return around, tuple(findings)
+
+
+def _stocks(node: YamlNode | None) -> tuple[dict[str, Stock], tuple[Finding, ...]]:
+    from watchglass.base.fields import Shape, unfit  # noqa: PLC0415 - only for a faulty file
+
+    stocks: dict[str, Stock] = {}
+    findings: list[Finding] = []
+    if node is not None and not isinstance(node, YamlMapping):
+        return {}, (unfit(node, "the file of stocks", Shape.MAPPING),)
+    for entry in node or ():
+        stock, found = decode_stock(entry)
+        findings += found
+        if stock is not None:
+            for name in (stock.key, *stock.names):
+                stocks.setdefault(name.casefold(), stock)
+    return stocks, tuple(findings)
+
+
+def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged:
+    """Take one procedure through the stages."""
+    syntax, found = read_procedure(source, around.catalogue.measures)
+    procedure, more = resolve(syntax, around.catalogue, around.laboratory)
+    earlier = (*found, *more)
+    body = syntax.front.span.end if syntax.front else 0
+    course = run_through(procedure)
+    case = Case(procedure, course, usage(procedure, course), faulty_body(earlier, body))
+    settled = settle((*earlier, *judge(case)), procedure.acceptances)
+    return Judged(
+        path=path,
+        case=case,
+        findings=settled.open,
+        accepted=settled.accepted,
+        card=procedure_card(path, procedure),
+    )
+
+
+def analyse_page(path: str, source: Source, around: Surroundings) -> JudgedPage:
+    """Take one ordinary page through the stages."""
+    syntax, found = read_page(source, around.catalogue.measures)
+    more = resolve_page(syntax, around.catalogue, around.laboratory)
+    return JudgedPage(
+        path=path, syntax=syntax, findings=(*found, *more), card=page_card(path, syntax)
+    )
