@@ -29,14 +29,12 @@ class Maker:
     """Makes documents out of chance; each mark in one bears its own number.
 
     Attributes:
-        fenced: True where `:::` blocks are wanted, which other readers do not know.
-        stray: True where half marks are wanted too.
+        common: True where only CommonMark is wanted: no tables, no `:::` blocks, no half marks.
     """
 
-    def __init__(self, chance: Random, *, fenced: bool = True, stray: bool = True) -> None:
+    def __init__(self, chance: Random, *, common: bool = False) -> None:
         self.chance = chance
-        self.fenced = fenced
-        self.stray = stray
+        self.common = common
         self.numbers = count()
 
     def document(self) -> str:
@@ -61,7 +59,7 @@ class Maker:
                 parts.append(self.mark())
             elif draw < 0.4:
                 parts.append(f"[{chance.choice(_WORDS)} *w*]{self.mark()}")
-            elif draw < 0.42 and self.stray:
+            elif draw < 0.42 and not self.common:
                 parts.append(chance.choice(("{", "}", "{{", "{a", "b}", '{"}', "{x|y}")))
             else:
                 parts.append(chance.choice(_WORDS))
@@ -91,7 +89,7 @@ class Maker:
             sign = self.chance.choice(("> ", "> ", ">", ">\t"))
             return [sign + line if self.chance.random() < 0.93 else line for line in quoted]
         if draw < 0.77:
-            return self.table()
+            return self.paragraph() if self.common else self.table()
         if draw < 0.83:
             signs = "#" * self.chance.randint(1, 6) + " " * self.chance.randint(1, 3)
             return [signs + self.words(4) + self.chance.choice(("", " ##", "  "))]
@@ -104,7 +102,7 @@ class Maker:
         return self.fence(depth)
 
     def fence(self, depth: int) -> list[str]:
-        if not self.fenced:
+        if self.common:
             return ["***"]
         kind = self.chance.choice(("question", "caution", "record 3 rows", "if dry", "other"))
         end = [":::"] if self.chance.random() < 0.93 else []

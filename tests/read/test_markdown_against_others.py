@@ -10,8 +10,6 @@ from typing import TYPE_CHECKING, Any
 import pytest
 from laws.markdown_documents import Maker
 from marko import Markdown
-from marko.ext.gfm.elements import Table, TableCell, TableRow
-from marko.helpers import MarkoExtension
 from markdown_it import MarkdownIt
 
 from read.markdown_trees import groups, read
@@ -97,6 +95,9 @@ def test_running_text_reads_as_markdown_it_reads_it(seed: int) -> None:
     for _ in range(50):
         words = "".join(chance.choice(_PIECES) for _ in range(chance.randint(1, 14)))
         text = f"start {words} end\n\n[x]: /there 'title'\n"
+        if re.search(r"\\ +\n", text):
+            # markdown-it takes the blank for escaped and misses the hard break.
+            continue
         tokens = _markdown_it().parse(text)
         if tokens[0].type != "paragraph_open" or len(read(text)[1]) != 1:
             continue
@@ -107,14 +108,8 @@ def test_running_text_reads_as_markdown_it_reads_it(seed: int) -> None:
         assert ours == "".join(_theirs(tokens[1].children or ())), repr(text)
 
 
-@cache
-def _marko() -> Any:
-    tables = MarkoExtension(elements=[Table, TableRow, TableCell])
-    return Markdown(extensions=[tables])
-
-
 _KINDS = {"Quote": "quote", "List": "list", "Heading": "heading", "SetextHeading": "heading"}
-_KINDS |= {"Table": "table", "ListBlock": "list", "Steps": "list", "CodeBlock": "code"}
+_KINDS |= {"ListBlock": "list", "Steps": "list", "CodeBlock": "code"}
 _KINDS |= {"FencedCode": "code", "CodeText": "code", "CodeSpan": "code"}
 _NUMBERED = re.compile(r"\{@\d+\}")
 
@@ -150,10 +145,10 @@ def _placed_by_us(nodes: Iterable[Node], around: tuple[str, ...] = ()) -> Iterat
 
 @pytest.mark.parametrize("seed", range(60))
 def test_marks_land_in_the_blocks_where_marko_finds_them(seed: int) -> None:
-    maker = Maker(Random(seed), fenced=False, stray=False)
+    maker = Maker(Random(seed), common=True)
     for _ in range(5):
         text = maker.document()
         ours = sorted(_placed_by_us(read(text)[1]), key=lambda place: place[-1])
-        theirs = sorted(_placed_by_marko(_marko().parse(text)), key=lambda place: place[-1])
+        theirs = sorted(_placed_by_marko(Markdown().parse(text)), key=lambda place: place[-1])
 
         assert ours == theirs, text

@@ -15,7 +15,7 @@ from watchglass.base.figures import shown
 from watchglass.judge.sets import leaves_the_set, resolve_link
 from watchglass.publish import model as m
 from watchglass.publish.text import NBSP, joined, unit_words, value_words
-from watchglass.publish.wording import act_words
+from watchglass.publish.wording import act_words, mark_words
 from watchglass.read import syntax
 from watchglass.read.expressions import Binary, Call, Compare, Held, Negative
 from watchglass.resolve.outline import HIDDEN, headings
@@ -163,6 +163,8 @@ class BodyBuilder:
             ):
                 made = capitalised(made)
             result += made
+            if own and inline is inlines[-1] and made and not _blank(made):
+                result.append(m.Run("."))
         return joined(result)
 
     def _inlines(self, inlines: Iterable[syntax.Inline], step: int) -> tuple[m.Words, ...]:
@@ -196,11 +198,11 @@ class BodyBuilder:
     def _marked(self, marked: syntax.Marked, step: int) -> tuple[m.Words, ...]:
         if marked.words is not None:
             return (m.Said("act", self._inlines(marked.words, step)),)
-        parts: list[tuple[m.Words, ...]] = []
-        for act in marked.acts:
-            words = self._act(act, step)
-            if words:
-                parts.append(words)
+        figures = (syntax.RecordAct, syntax.ValueAct)
+        if any(isinstance(act, figures) for act in marked.acts):
+            parts = [words for act in marked.acts if (words := self._act(act, step))]
+        else:
+            parts = mark_words(marked.acts, self.procedure, step=step)
         result: list[m.Words] = []
         for index, part in enumerate(parts):
             if index:
@@ -274,6 +276,10 @@ def _calls(node: Expression, names: frozenset[str]) -> bool:
             return _calls(operand, names)
         case _:
             return False
+
+
+def _blank(words: tuple[m.Words, ...]) -> bool:
+    return isinstance(words[-1], m.Blank | m.ExpectedBlank)
 
 
 def text_of(words: Iterable[m.Words]) -> str:

@@ -47,7 +47,8 @@ def _material(
     substance = _substance(material.composition)
     mixture = isinstance(material.composition, model.Mixture)
     amount: tuple[m.Words, ...] = ()
-    if not mixture:
+    solvent = substance is not None and substance.key == "water" and not found
+    if not mixture and not solvent:
         amount = _amount(contents, used)
     rows = [
         m.ReagentRow(

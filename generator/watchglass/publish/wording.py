@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
+from watchglass.catalogue.streams import STREAMS
 from watchglass.publish.model import Run, Said
 from watchglass.publish.names import PARTS, material_words, thing_name
 from watchglass.publish.text import NBSP, joined, quantity_words
@@ -21,7 +22,36 @@ if TYPE_CHECKING:
 
 _SILENT = frozenset(("react", "suppose"))
 _TIMES = {1: "once more", 2: "twice more", 3: "three more times"}
+_STREAM_WORDS = {"drain": "the drain", "ordinary-bin": "the ordinary bin"}
 _TESTS = {"ph": "with pH paper", "peroxides": "for peroxides", "oxidant": "for oxidant"}
+
+
+def mark_words(
+    acts: Iterable[syntax.Act], procedure: Procedure, *, step: int
+) -> list[tuple[Words, ...]]:
+    """Put the acts of one mark into words, one entry an act that prints something.
+
+    The vessel that the act before was done to is `it`.
+    """
+    parts = []
+    before: syntax.Place | None = None
+    for act in acts:
+        words = act_words(act, procedure, step=step)
+        place = act.object if isinstance(act, syntax.VerbAct) else None
+        if isinstance(place, syntax.Place) and words:
+            if before is not None and _same(place, before):
+                words = tuple(
+                    Said("vessel", (Run("it"),)) if word == place_words(place, procedure) else word
+                    for word in words
+                )
+            before = place
+        if words:
+            parts.append(words)
+    return parts
+
+
+def _same(one: syntax.Place, other: syntax.Place) -> bool:
+    return one.name.text == other.name.text and one.part == other.part
 
 
 def act_words(act: syntax.Act, procedure: Procedure, *, step: int) -> tuple[Words, ...]:
@@ -146,7 +176,7 @@ def clauses_words(
 ) -> tuple[Words, ...]:
     """Put clauses into words, each with a blank or a comma before it."""
     words: list[Words] = []
-    for clause in clauses:
+    for clause in sorted(clauses, key=_after_the_rest):
         value = _value(clause.value, procedure)
         match clause.word:
             case "closure" | "setting":
@@ -162,6 +192,11 @@ def clauses_words(
     return joined(words)
 
 
+def _after_the_rest(clause: syntax.Clause) -> bool:
+    """Closures and places close the sentence; all else keeps the author's order."""
+    return clause.word in ("closure", "setting")
+
+
 def _value(value: syntax.ClauseValue, procedure: Procedure) -> tuple[Words, ...]:
     match value:
         case syntax.Measured(quantity, _):
@@ -173,6 +208,8 @@ def _value(value: syntax.ClauseValue, procedure: Procedure) -> tuple[Words, ...]
         case syntax.Place():
             if value.name.text == "mark":
                 return (Run("the mark"),)
+            if value.name.text in STREAMS and value.name.text not in procedure.names:
+                return (Run(_STREAM_WORDS.get(value.name.text, f"the {value.name.text} waste")),)
             return (place_words(value, procedure),)
         case syntax.Words(text, _):
             return (Run(text),)
