@@ -29,12 +29,14 @@ class Maker:
     """Makes documents out of chance; each mark in one bears its own number.
 
     Attributes:
-        common: True where only CommonMark is wanted: no tables, no `:::` blocks, no half marks.
+        common: True where only what all readers of CommonMark agree on is wanted: no tables, no
+            `:::` blocks, no half marks, no tabs, no `>` without a blank.
     """
 
     def __init__(self, chance: Random, *, common: bool = False) -> None:
         self.chance = chance
         self.common = common
+        self.vocabulary = [w for w in _WORDS if w not in ("\t", "\\")] if common else _WORDS
         self.numbers = count()
 
     def document(self) -> str:
@@ -58,11 +60,11 @@ class Maker:
             if draw < 0.3:
                 parts.append(self.mark())
             elif draw < 0.4:
-                parts.append(f"[{chance.choice(_WORDS)} *w*]{self.mark()}")
+                parts.append(f"[{chance.choice(self.vocabulary)} *w*]{self.mark()}")
             elif draw < 0.42 and not self.common:
                 parts.append(chance.choice(("{", "}", "{{", "{a", "b}", '{"}', "{x|y}")))
             else:
-                parts.append(chance.choice(_WORDS))
+                parts.append(chance.choice(self.vocabulary))
         return chance.choice((" ", " ", "")).join(parts)
 
     def mark(self) -> str:
@@ -86,7 +88,7 @@ class Maker:
             return self.list(depth)
         if draw < 0.65:
             quoted = self.block(depth + 1)
-            sign = self.chance.choice(("> ", "> ", ">", ">\t"))
+            sign = self.chance.choice(("> ",) if self.common else ("> ", "> ", ">", ">\t"))
             return [sign + line if self.chance.random() < 0.93 else line for line in quoted]
         if draw < 0.77:
             return self.paragraph() if self.common else self.table()
@@ -110,7 +112,8 @@ class Maker:
 
     def list(self, depth: int) -> list[str]:
         chance = self.chance
-        sign = chance.choice(("- ", "* ", "1. ", "12) ", "-   ", "-\t"))
+        signs = ("- ", "* ", "1. ", "12) ", "-   ")
+        sign = chance.choice(signs if self.common else (*signs, "-\t"))
         indent = "\t" if "\t" in sign else " " * len(sign)
         lines: list[str] = []
         for _ in range(chance.randint(1, 3)):

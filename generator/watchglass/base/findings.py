@@ -7,7 +7,6 @@ findings beside their result and never print: the shell sorts, counts and render
 from __future__ import annotations
 
 from dataclasses import dataclass
-from difflib import get_close_matches
 from enum import IntEnum
 from typing import TYPE_CHECKING
 
@@ -90,6 +89,8 @@ class Finding:
 
 def near(word: str, known: Iterable[str], *, most: int = 3) -> tuple[str, ...]:
     """Find known names so near to a word that they may be what was meant; best first."""
+    from difflib import get_close_matches  # noqa: PLC0415 - only when something is wrong
+
     table: dict[str, str] = {}
     for name in known:
         table.setdefault(name.casefold(), name)

@@ -369,11 +369,12 @@ def _percent(text: str, at: int) -> tuple[Unit, int] | Fault:
     if written in STRENGTHS:
         return STRENGTHS[written], basis.end()
     meant = {"m/m": "w/w", "wt": "w/w", "m/v": "w/v", "vol": "v/v"}.get(basis[1], basis[1])
+    end = at + 1 + len(basis[0].rstrip())
     return Fault(
         codes.UNIT_UNKNOWN,
         at,
-        basis.end(),
-        f"`%{basis[0]}` is not how the basis is written",
+        end,
+        f"`{text[at:end]}` is not how the basis is written",
         f"write `% {meant}`",
     )
 

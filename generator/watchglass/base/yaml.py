@@ -26,7 +26,8 @@ DEEPEST = 32
 _INDENT = re.compile(r"^ {128}", re.MULTILINE)
 _DASHES = re.compile(rf"(?:[-?] +){{{DEEPEST}}}")
 _SPECIAL = re.compile(r"(?:^|[\s\[{,:-])[&*!]\S|^\s*<<\s*:", re.MULTILINE)
-_UNPRINTABLE = re.compile(r"[^\t\n\x20-\x7e\x85\xa0-\ud7ff\ue000-\ufffd\U00010000-\U0010ffff]")
+_ANCHOR = re.compile(r"&\S+")
+_UNPRINTABLE = re.compile(r"[\x00-\x08\x0b-\x1f\x7f-\x84\x86-\x9f\ud800-\udfff\ufffe\uffff]")
 
 
 @dataclass(frozen=True, slots=True)
@@ -183,6 +184,8 @@ def _refused(source: Source, text: str, start: int, loader: Any) -> tuple[Findin
             what = "a merge"
         if what:
             at, after = start + _index(event.start_mark), start + _index(event.end_mark)
+            if what == "an anchor" and (named := _ANCHOR.match(source.text, at)):
+                after = named.end()
             after = min(after, source.text.find("\n", at) % (len(source.text) + 1))
             findings.append(
                 Finding(
@@ -201,8 +204,11 @@ def _index(mark: Any) -> int:
 
 def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
     """Turn PyYAML's error into a finding at its place, in words for an instructor."""
-    mark = getattr(error, "problem_mark", None) or getattr(error, "context_mark", None)
-    at = min(mark.index if mark else 0, len(text))
+    mark = getattr(error, "problem_mark", None)
+    context = getattr(error, "context_mark", None)
+    if mark is None or (context is not None and not text[_index(mark) :].strip()):
+        mark = context or mark  # the file ends early: what opened and never closed is at fault
+    at = min(_index(mark) if mark else 0, len(text))
     while at > 0 and (at >= len(text) or text[at] == "\n"):
         at -= 1
     problem = str(getattr(error, "problem", None) or "it cannot be read").rstrip(".")

@@ -205,7 +205,7 @@ def _size_findings(node: YamlText, at: int, size: Quantity, ware: GlasswareType)
             Finding(
                 code=codes.SIZE_UNUSUAL,
                 span=span,
-                message=f"no {ware.name} is made of {size.text}",
+                message=f"a {ware.name} of {size.text} is not made",
                 help=f"take a size that is made; the nearest are {made}",
             )
         ]

@@ -13,8 +13,8 @@ if TYPE_CHECKING:
 
     from watchglass.resolve.model import Acceptance
 
-#: Letters of findings that speak of the chemistry or the bench, not of what cannot be read.
-_JUDGED = frozenset("SBXHWP")
+#: Letters of findings that speak of the bench and its hazards, not of what cannot be read.
+_JUDGED = frozenset("BXHWP")
 
 
 @dataclass(frozen=True, slots=True)

@@ -9,8 +9,7 @@ to anything but the documented functions; those are typed in resolve and evaluat
 from __future__ import annotations
 
 import re
-from dataclasses import dataclass
-from typing import TYPE_CHECKING, NoReturn
+from typing import TYPE_CHECKING, NamedTuple, NoReturn
 
 from watchglass.base import codes, units
 from watchglass.base.findings import Finding
@@ -31,8 +30,7 @@ _BINDS_COMPARISON, _BINDS_AFTER, _BINDS_IN, _BINDS_SIGN = 2, 4, 6, 30
 _WORD_TIE = re.compile(r"(in|on|after|of)\b")
 
 
-@dataclass(frozen=True, slots=True)
-class Call:
+class Call(NamedTuple):
     """A function with its arguments; `pH of A` is `ph(A)`."""
 
     function: Name
@@ -40,8 +38,7 @@ class Call:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Binary:
+class Binary(NamedTuple):
     """`+ - * / ^` between two expressions; `*` for every sign of multiplication."""
 
     operator: str
@@ -50,16 +47,14 @@ class Binary:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Negative:
+class Negative(NamedTuple):
     """A minus sign before an expression."""
 
     operand: Expression
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Compare:
+class Compare(NamedTuple):
     """`>= > <= <` between two expressions."""
 
     operator: str
@@ -68,8 +63,7 @@ class Compare:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Within:
+class Within(NamedTuple):
     """`… in 9–11`: a value lies in a range."""
 
     operand: Expression
@@ -77,8 +71,7 @@ class Within:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Held:
+class Held(NamedTuple):
     """`X in V` or `X on V`: a substance in a vessel."""
 
     substance: Expression
@@ -86,8 +79,7 @@ class Held:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class After:
+class After(NamedTuple):
     """`… after label(x)`: a value at the state with that label."""
 
     operand: Expression

@@ -312,7 +312,8 @@ def _again(cursor: Cursor, start: int) -> syntax.AgainAct:
             exchanges = _exchanges(cursor)
         else:
             steps.append(_steps(cursor))
-        if not cursor.takes(",") and not cursor.done and cursor.peek_word() != "with":
+        divided = cursor.takes(",")
+        if not divided and cursor.at < cursor.end and cursor.peek_word() != "with":
             _left_over(cursor)
     if not steps:
         cursor.stop(

@@ -241,7 +241,8 @@ class BodyReader:
     def _again(self, act: syntax.AgainAct, walk: Walk) -> model.Again | None:
         steps: list[int] = []
         for item in act.steps:
-            first, last = self._number(item.first, item, walk), self._number(item.last, item, walk)
+            first = self._number(item.first, item, walk)
+            last = first if item.last == item.first else self._number(item.last, item, walk)
             if first is None or last is None:
                 return None
             if last < first:

@@ -150,7 +150,7 @@ def read_acceptances(record: Record, findings: list[Finding]) -> tuple[Acceptanc
                     help=f"write why, as in `{word.text}: looked at by the laboratory, and why it is sound`",
                 )
             )
-        else:
+        if code is not None:
             accepted.append(Acceptance(code.number, reason, word.span))
     return tuple(accepted)
 

@@ -7,7 +7,7 @@ read) or `None` beside a finding already given: it offends nobody further on and
 from __future__ import annotations
 
 from dataclasses import dataclass, field
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
@@ -26,8 +26,7 @@ if TYPE_CHECKING:
 # ---------------------------------------------------------------- materials
 
 
-@dataclass(frozen=True, slots=True)
-class Strength:
+class Strength(NamedTuple):
     """How strong a solution is: a quantity whose dimension says on which basis.
 
     The dimension is one of amount concentration, mass per volume (also % w/v), mass fraction
@@ -38,15 +37,13 @@ class Strength:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Pure:
+class Pure(NamedTuple):
     """One substance as it is."""
 
     substance: Substance
 
 
-@dataclass(frozen=True, slots=True)
-class Solution:
+class Solution(NamedTuple):
     """A solute at a strength in a solvent."""
 
     strength: Strength
@@ -54,16 +51,14 @@ class Solution:
     solvent: Substance
 
 
-@dataclass(frozen=True, slots=True)
-class Saturated:
+class Saturated(NamedTuple):
     """A solution that holds as much as it can."""
 
     solute: Substance
     solvent: Substance
 
 
-@dataclass(frozen=True, slots=True)
-class Part:
+class Part(NamedTuple):
     """One part of a mixture: a substance and how much of it, as a ratio or a strength."""
 
     substance: Substance
@@ -71,8 +66,7 @@ class Part:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Mixture:
+class Mixture(NamedTuple):
     """Several substances by ratio (`basis` amount, mass or volume), or as strengths in a solvent.
 
     `basis` is `amount`, `mass`, `volume` or `strength`.
@@ -83,8 +77,7 @@ class Mixture:
     solvent: Substance | None
 
 
-@dataclass(frozen=True, slots=True)
-class Secret:
+class Secret(NamedTuple):
     """One of several; students see the station's code only."""
 
     candidates: Mapping[str, Substance]
@@ -92,16 +85,14 @@ class Secret:
     solvent: Substance | None
 
 
-@dataclass(frozen=True, slots=True)
-class Continued:
+class Continued(NamedTuple):
     """The product of another procedure, by its code."""
 
     code: str
     vessel: str
 
 
-@dataclass(frozen=True, slots=True)
-class Unknown:
+class Unknown(NamedTuple):
     """What is in it is not known: declared so, or not readable (then a finding says so)."""
 
     what: str
@@ -165,8 +156,7 @@ class Equipment:
 # ---------------------------------------------------------------- reactions
 
 
-@dataclass(frozen=True, slots=True)
-class Species:
+class Species(NamedTuple):
     """One term of an equation.
 
     Attributes:
@@ -216,8 +206,7 @@ class Reaction:
 # ---------------------------------------------------------------- events
 
 
-@dataclass(frozen=True, slots=True)
-class Portion:
+class Portion(NamedTuple):
     """So much of a material.
 
     Attributes:
@@ -235,8 +224,7 @@ class Portion:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Charge:
+class Charge(NamedTuple):
     """Materials go into a vessel."""
 
     portions: tuple[Portion, ...]
@@ -245,8 +233,7 @@ class Charge:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Transfer:
+class Transfer(NamedTuple):
     """Contents of a vessel, or one part of them, go into another."""
 
     origin: syntax.Place
@@ -255,8 +242,7 @@ class Transfer:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Aliquot:
+class Aliquot(NamedTuple):
     """A measured share of a vessel goes into another."""
 
     quantity: Quantity
@@ -265,8 +251,7 @@ class Aliquot:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Operation:
+class Operation(NamedTuple):
     """A verb of the bench.
 
     Attributes:
@@ -290,8 +275,7 @@ class Operation:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Again:
+class Again(NamedTuple):
     """Steps are done again.
 
     Attributes:
@@ -312,8 +296,7 @@ class Again:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Labelled:
+class Labelled(NamedTuple):
     """The state reached here gets a name."""
 
     name: str
@@ -323,8 +306,7 @@ class Labelled:
 Event = Charge | Transfer | Aliquot | Operation | Again | Labelled
 
 
-@dataclass(frozen=True, slots=True)
-class Step:
+class Step(NamedTuple):
     """One step: its number, where it stands, and its events in text order."""
 
     number: int
@@ -358,8 +340,7 @@ class RecordEntry:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Expectation:
+class Expectation(NamedTuple):
     """One line of `expect:`."""
 
     expression: Expression
@@ -367,8 +348,7 @@ class Expectation:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Acceptance:
+class Acceptance(NamedTuple):
     """A finding looked at and accepted, or a planned reaction, with its reason."""
 
     word: str

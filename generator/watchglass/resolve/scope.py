@@ -56,6 +56,8 @@ class Scope:
 
     def declare(self, name: str, kind: str, span: Span) -> bool:
         """Add a name; a finding and False where it cannot be one or stands already."""
+        if "->" in name:
+            return False  # a mark without quotes: reported where the YAML was read
         if not NAME.fullmatch(name):
             self.findings.append(
                 Finding(
@@ -76,6 +78,8 @@ class Scope:
                     help=f"take another name, such as `{name.lower()}-{'1' if kind == 'vessel' else 'a'}`",
                 )
             )
+            self.kinds.setdefault(name, kind)
+            self._places.setdefault(name, span)
             return False
         before = self._places.get(name)
         if before is not None:
