@@ -22,6 +22,9 @@ _WORDS = (
     "[l](u)", "[l](u 't')", "![i](u)", "\\|", '"q"', "3.", "-", "+", "#", ">", "\t", "~", "<b>", "*",
     "**", "_", "[", "]", "a*b*c", "<http://e.x/y>", "\\", "5 °C", "\u00a0", "[d]", "!", "(", ")",
 )  # fmt: skip
+# HTML, which is off here; bars, which may make a table; blanks that some take for the end of a paragraph; a backslash that
+# would escape the brace of a mark.
+_DISPUTED = ("<b>", "\\|", "\u00a0", "\t", "\\")
 _MARK = re.compile(r"\{@\d+\}")
 
 
@@ -30,13 +33,13 @@ class Maker:
 
     Attributes:
         common: True where only what all readers of CommonMark agree on is wanted: no tables, no
-            `:::` blocks, no half marks, no tabs, no `>` without a blank.
+            `:::` blocks, no half marks, no tabs, no `>` without a blank, no lazy lines.
     """
 
     def __init__(self, chance: Random, *, common: bool = False) -> None:
         self.chance = chance
         self.common = common
-        self.vocabulary = [w for w in _WORDS if w not in ("\t", "\\")] if common else _WORDS
+        self.vocabulary = [w for w in _WORDS if w not in _DISPUTED] if common else _WORDS
         self.numbers = count()
 
     def document(self) -> str:
@@ -82,14 +85,15 @@ class Maker:
     def block(self, depth: int) -> list[str]:
         """Make a block, perhaps with others in it."""
         draw = self.chance.random()
-        if draw < 0.3 or depth > 3:
+        if draw < 0.3 or depth > (1 if self.common else 3):
             return self.paragraph()
         if draw < 0.5:
             return self.list(depth)
         if draw < 0.65:
             quoted = self.block(depth + 1)
             sign = self.chance.choice(("> ",) if self.common else ("> ", "> ", ">", ">\t"))
-            return [sign + line if self.chance.random() < 0.93 else line for line in quoted]
+            lazy = 0 if self.common else 0.07
+            return [line if self.chance.random() < lazy else sign + line for line in quoted]
         if draw < 0.77:
             return self.paragraph() if self.common else self.table()
         if draw < 0.83:
@@ -112,8 +116,8 @@ class Maker:
 
     def list(self, depth: int) -> list[str]:
         chance = self.chance
-        signs = ("- ", "* ", "1. ", "12) ", "-   ")
-        sign = chance.choice(signs if self.common else (*signs, "-\t"))
+        signs = ("- ", "* ", "1. ", "12) ")
+        sign = chance.choice(signs if self.common else (*signs, "-   ", "-\t"))
         indent = "\t" if "\t" in sign else " " * len(sign)
         lines: list[str] = []
         for _ in range(chance.randint(1, 3)):
@@ -122,7 +126,7 @@ class Maker:
                 block += ["", *self.block(depth + 1)]
             lines.append(sign + block[0])
             for line in block[1:]:
-                kept = chance.random() < 0.93
+                kept = self.common or chance.random() < 0.93
                 lines.append((indent + line if line else line) if kept else line.lstrip())
             if chance.random() < 0.3:
                 lines.append("")
