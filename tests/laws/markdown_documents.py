@@ -22,9 +22,10 @@ _WORDS = (
     "[l](u)", "[l](u 't')", "![i](u)", "\\|", '"q"', "3.", "-", "+", "#", ">", "\t", "~", "<b>", "*",
     "**", "_", "[", "]", "a*b*c", "<http://e.x/y>", "\\", "5 °C", "\u00a0", "[d]", "!", "(", ")",
 )  # fmt: skip
-# HTML, which is off here; bars, which may make a table; blanks that some take for the end of a paragraph; a backslash that
-# would escape the brace of a mark.
-_DISPUTED = ("<b>", "\\|", "\u00a0", "\t", "\\")
+# HTML, which is off here; bars, which may make a table; blanks that some take for the end of a
+# paragraph; a backslash that would escape a mark; signs that begin a block by accident, of which
+# no two readers make the same at odd indents.
+_DISPUTED = ("<b>", "\\|", "\u00a0", "\t", "\\", ">", "-", "+", "*", "#", "3.")
 _MARK = re.compile(r"\{@\d+\}")
 
 

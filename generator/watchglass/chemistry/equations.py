@@ -1,37 +1,359 @@
-# placeholder: to be overwritten
+"""Equations of reactions: split as text, then checked and balanced by their formulas.
+
+Two steps, because the species of an equation may be names that only a catalogue knows:
+`split_equation` finds arrow, sides, coefficients and the text of each species with its place; the
+caller turns those texts into formulas; `check_balance` and `balance` then work on formulas alone.
+Names hold digits, commas, hyphens and brackets, so the rule is one of spaces: the arrow and each
+`+` between species have spaces on both sides, and a coefficient is a number with a space after it.
+"""
+
 from __future__ import annotations
+
 import re
 from dataclasses import dataclass
+from enum import Enum
 from fractions import Fraction
+from typing import TYPE_CHECKING
+
+from watchglass.chemistry.balancing import positive_solution, solutions
+from watchglass.chemistry.formulas import Formula, hill_order, parse_formula
+
+if TYPE_CHECKING:
+    from collections.abc import Mapping, Sequence
+
+    from watchglass.chemistry.balancing import Matrix
+    from watchglass.chemistry.formulas import Count
+
+#: One term of a side: how many, and of what.
+Terms = "Sequence[tuple[Fraction | int, Formula]]"
+
+LONGEST = 2000
+MOST_SPECIES = 20
+
+_ARROW = re.compile(r"(?<!\S)(->|→|<=>|⇌)(?!\S)")
+_LIKE_ARROW = re.compile(r"<?[-=]*[-=]>|<-+>?|[→⇌⇒⟶⟹⇄⇋↔]|(?<!\S)=+(?!\S)")
+_PLUS = re.compile(r"(?<!\S)\+(?!\S)")
+_TIGHT_PLUS = re.compile(r"(?<=\s)\+(?=\S)|(?<=\S)\+(?=\s+\S)")
+_COEFFICIENT = re.compile(r"([1-9][0-9]{0,5})(?:/([1-9][0-9]{0,5}))?\s+(?=\S)")
+_LIKE_COEFFICIENT = re.compile(r"([0-9]+(?:[./,][0-9]+)?|[½¼¾⅓⅔])(\s+(?=\S)|$)")
+_DECIMALS = {"0.5": "1/2", "1.5": "3/2", "2.5": "5/2", "½": "1/2", "¼": "1/4", "¾": "3/4"}
+
+
 @dataclass(frozen=True, slots=True)
-class Term: coefficient: Fraction; text: str; start: int; end: int
+class Term:
+    """One species of an equation as text.
+
+    Attributes:
+        coefficient: Its stoichiometric number, > 0; 1 where none is written.
+        text: The species: a formula or a name.
+        start: Where the species begins in the equation, after its coefficient.
+        end: Where it ends.
+    """
+
+    coefficient: Fraction
+    text: str
+    start: int
+    end: int
+
+
 @dataclass(frozen=True, slots=True)
-class EquationText: left: tuple[Term, ...]; right: tuple[Term, ...]
+class EquationText:
+    """An equation split into its terms, in the order written."""
+
+    left: tuple[Term, ...]
+    right: tuple[Term, ...]
+
+
 @dataclass(frozen=True, slots=True)
-class EquationFault: message: str; start: int; end: int; help: str | None = None
+class EquationFault:
+    """Why a text is no equation: what is wrong, where, and how to write it."""
+
+    message: str
+    start: int
+    end: int
+    help: str | None = None
+
+
+class Verdict(Enum):
+    """What an equation conserves."""
+
+    BALANCED = "balanced"
+    MASS_UNBALANCED = "mass_unbalanced"
+    CHARGE_UNBALANCED = "charge_unbalanced"
+    MASS_AND_CHARGE_UNBALANCED = "mass_and_charge_unbalanced"
+
+
 @dataclass(frozen=True, slots=True)
 class Balance:
-    excess_left: dict; charge_excess_left: int
+    """What is left over when the right side is taken from the left.
+
+    Attributes:
+        excess_left: Atoms of each element, left less right; only what is not nought.
+        charge_excess_left: Charge number, left less right.
+    """
+
+    excess_left: Mapping[str, Count]
+    charge_excess_left: Count
+
     @property
-    def balanced(self): return not self.excess_left and not self.charge_excess_left
-def split_equation(text):
-    m = re.split(r"\s+(->|→|⇌)\s+", text)
-    if len(m) != 3: return EquationFault("no arrow", 0, len(text))
-    sides = []; at = 0
-    for part in (m[0], m[2]):
-        terms = []
-        for t in part.split(" + "):
-            t = t.strip(); s = text.index(t, at); at = s + len(t)
-            c = re.match(r"(\d+) (?=\S)", t); n = 1
-            if c: n = int(c[1]); s += c.end(); t = t[c.end():]
-            terms.append(Term(Fraction(n), t, s, s + len(t)))
-        sides.append(tuple(terms))
-    return EquationText(*sides)
-def check_balance(left, right):
-    ex = {}; q = 0
+    def verdict(self) -> Verdict:
+        """What is conserved and what is not."""
+        match bool(self.excess_left), bool(self.charge_excess_left):
+            case False, False:
+                return Verdict.BALANCED
+            case True, False:
+                return Verdict.MASS_UNBALANCED
+            case False, True:
+                return Verdict.CHARGE_UNBALANCED
+            case _:
+                return Verdict.MASS_AND_CHARGE_UNBALANCED
+
+    @property
+    def balanced(self) -> bool:
+        """Whether atoms and charge are conserved."""
+        return self.verdict is Verdict.BALANCED
+
+
+@dataclass(frozen=True, slots=True)
+class Balanced:
+    """The one set of smallest whole coefficients: left side first, in the order given."""
+
+    coefficients: tuple[int, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class NotUnique:
+    """Several balances that are no multiples of one another; none of them is the answer.
+
+    Attributes:
+        nullity: How many are independent.
+    """
+
+    nullity: int
+
+
+@dataclass(frozen=True, slots=True)
+class Impossible:
+    """No positive coefficients conserve atoms and charge."""
+
+
+@dataclass(frozen=True, slots=True)
+class Lacking:
+    """So much of a small molecule or ion, added to one side, would balance what is written."""
+
+    side: str
+    formula: Formula
+    count: Fraction
+
+
+@dataclass(frozen=True, slots=True)
+class Suggestion:
+    """How an unbalanced equation might be mended; as data, the caller finds the words.
+
+    Attributes:
+        coefficients: The one set of coefficients, or None where there is none or not one.
+        only_left: Elements that stand on the left only.
+        only_right: Elements that stand on the right only.
+        lacking: What would balance the coefficients as written, or None.
+    """
+
+    coefficients: tuple[int, ...] | None
+    only_left: tuple[str, ...]
+    only_right: tuple[str, ...]
+    lacking: Lacking | None
+
+
+#: What is most often forgotten in an equation, in the order tried. Common practice, no source.
+_FORGOTTEN = ("H2O", "CO2", "HCl", "NH3", "NaCl", "H2", "O2", "N2", "SO2", "H^+", "OH^-")
+
+
+def split_equation(text: str) -> EquationText | EquationFault:
+    """Split an equation into terms; never raises.
+
+    Args:
+        text: Such as `2 NaOH + H2SO4 -> Na2SO4 + 2 H2O`; species may be names. The arrow is
+            `->`, `→`, `<=>` or `⇌`; coefficients are whole or fractions such as `1/2`.
+
+    Returns:
+        The terms with their places, or the first fault.
+    """
+    if len(text) > LONGEST:
+        return EquationFault(f"an equation of more than {LONGEST} signs", LONGEST, len(text))
+    arrows = list(_ARROW.finditer(text))
+    if not arrows:
+        return _without_arrow(text)
+    if len(arrows) > 1:
+        return EquationFault(
+            "a second arrow", arrows[1].start(), arrows[1].end(), "write one equation for each step"
+        )
+    arrow = arrows[0]
+    left = _side(text, 0, arrow.start(), arrow)
+    if isinstance(left, EquationFault):
+        return left
+    right = _side(text, arrow.end(), len(text), arrow)
+    if isinstance(right, EquationFault):
+        return right
+    return EquationText(left, right)
+
+
+def _without_arrow(text: str) -> EquationFault:
+    found = _LIKE_ARROW.search(text)
+    if found is None:
+        return EquationFault("the arrow is missing", 0, len(text), "write `reactants -> products`")
+    if found[0] in ("->", "→", "<=>", "⇌"):
+        message = f"`{found[0]}` needs a space on both sides"
+    else:
+        message = f"`{found[0]}` is no arrow"
+    start, end = found.span()
+    mended = f"{text[:start].rstrip()} -> {text[end:].lstrip()}".strip()
+    help_ = f"write `{mended}`" if len(mended) <= 120 and "->" in mended[1:-2] else "write ` -> `"
+    return EquationFault(message, start, end, help_)
+
+
+def _side(
+    text: str, start: int, end: int, arrow: re.Match[str]
+) -> tuple[Term, ...] | EquationFault:
+    """Read the terms of one side."""
+    if not text[start:end].strip():
+        where = "before" if start == 0 else "after"
+        return EquationFault(f"nothing stands {where} the arrow", *arrow.span())
+    pluses = [found.span() for found in _PLUS.finditer(text, start, end)]
+    if len(pluses) >= MOST_SPECIES:
+        return EquationFault(f"more than {MOST_SPECIES} species on one side", start, end)
+    terms: list[Term] = []
+    at = start
+    for stop, following in (*pluses, (end, end)):
+        if not text[at:stop].strip():
+            plus = (stop, following) if stop < end else pluses[-1]
+            return EquationFault("a species is missing beside `+`", *plus)
+        term = _term(text, at, stop)
+        if isinstance(term, EquationFault):
+            return term
+        terms.append(term)
+        at = following
+    return tuple(terms)
+
+
+def _term(text: str, start: int, end: int) -> Term | EquationFault:
+    """Read one species with its coefficient; there is more than spaces between the ends."""
+    written = text[start:end]
+    start += len(written) - len(written.lstrip())
+    end -= len(written) - len(written.rstrip())
+    tight = _TIGHT_PLUS.search(text, start, end)
+    if tight is not None:
+        return EquationFault("`+` needs a space on both sides", *tight.span())
+    found = _COEFFICIENT.match(text, start, end)
+    if found is not None:
+        coefficient = Fraction(int(found[1]), int(found[2] or 1))
+        return Term(coefficient, text[found.end() : end], found.end(), end)
+    like = _LIKE_COEFFICIENT.match(text, start, end)
+    if like is None:
+        return Term(Fraction(1), text[start:end], start, end)
+    number, stop = like[1], like.end(1)
+    if stop == end:
+        return EquationFault(f"`{number}` counts no species", start, stop)
+    if number in _DECIMALS:
+        help_: str | None = f"write `{_DECIMALS[number]} {text[like.end() : end]}`"
+    else:
+        help_ = None if number.startswith("0") else "use whole numbers, or fractions such as `1/2`"
+    return EquationFault(f"`{number}` is no coefficient", start, stop, help_)
+
+
+def check_balance(left: Terms, right: Terms) -> Balance:
+    """Count atoms and charge on both sides with the coefficients as written.
+
+    Args:
+        left: Coefficient and formula of each reactant.
+        right: The same of each product.
+
+    Returns:
+        What is left over; nothing where the equation is balanced.
+    """
+    atoms: dict[str, Count] = {}
+    charge: Count = 0
     for sign, side in ((1, left), (-1, right)):
-        for c, f in side:
-            q += sign * c * f.charge
-            for e, n in f.composition: ex[e] = ex.get(e, 0) + sign * c * n
-    return Balance({e: n for e, n in ex.items() if n}, q)
-def balance(left, right): return None
+        for coefficient, formula in side:
+            number = sign * coefficient
+            charge += number * formula.charge
+            for symbol, count in formula.composition:
+                atoms[symbol] = atoms.get(symbol, 0) + number * count
+    return Balance(dict(hill_order(atoms)), charge if charge else 0)
+
+
+def balance(
+    left: Sequence[Formula], right: Sequence[Formula]
+) -> Balanced | NotUnique | Impossible:
+    """Find the coefficients that conserve atoms and charge, by exact linear algebra.
+
+    A balance by atoms alone need not be the reaction that takes place, and coefficients that
+    already balance are never to be replaced by these.
+
+    Args:
+        left: Formulas of the reactants.
+        right: Formulas of the products.
+
+    Returns:
+        The smallest whole coefficients where they are unique and all above nought.
+
+    Source:
+        The null space of the matrix of atoms and charges; fractions throughout, no rounding.
+    """
+    matrix = _matrix(left, right)
+    basis = solutions(matrix, len(left) + len(right))
+    if not basis:
+        return Impossible()
+    if len(basis) > 1:
+        feasible = positive_solution(matrix, len(left) + len(right))
+        return NotUnique(len(basis)) if feasible else Impossible()
+    vector = basis[0]
+    if all(number < 0 for number in vector):
+        vector = tuple(-number for number in vector)
+    if any(number <= 0 for number in vector):
+        return Impossible()
+    return Balanced(vector)
+
+
+def suggest(left: Terms, right: Terms) -> Suggestion:
+    """Work out how an unbalanced equation might be mended.
+
+    Args:
+        left: Coefficient and formula of each reactant, as written.
+        right: The same of each product.
+    """
+    formulas = [formula for _, formula in left], [formula for _, formula in right]
+    found = balance(*formulas)
+    elements = [{symbol for f in side for symbol, _ in f.composition} for side in formulas]
+    return Suggestion(
+        found.coefficients if isinstance(found, Balanced) else None,
+        tuple(sorted(elements[0] - elements[1])),
+        tuple(sorted(elements[1] - elements[0])),
+        _lacking(check_balance(left, right)),
+    )
+
+
+def _lacking(excess: Balance) -> Lacking | None:
+    """Find a forgotten species whose atoms and charge are just what is left over."""
+    for text in _FORGOTTEN:
+        formula = parse_formula(text)
+        if not isinstance(formula, Formula):
+            raise TypeError(f"{text} is a constant of ours and must read")
+        first, each = formula.composition[0]
+        number = Fraction(excess.excess_left.get(first, 0)) / each
+        if number == 0:
+            continue
+        atoms = {symbol: count * number for symbol, count in formula.composition}
+        if atoms == excess.excess_left and formula.charge * number == excess.charge_excess_left:
+            return Lacking("right" if number > 0 else "left", formula, abs(number))
+    return None
+
+
+def _matrix(left: Sequence[Formula], right: Sequence[Formula]) -> Matrix:
+    """Write a row for each element and one for charge, a column for each species."""
+    signed = [(1, formula) for formula in left] + [(-1, formula) for formula in right]
+    symbols = sorted({symbol for _, formula in signed for symbol, _ in formula.composition})
+    rows = [
+        [Fraction(sign * dict(formula.composition).get(symbol, 0)) for sign, formula in signed]
+        for symbol in symbols
+    ]
+    rows.append([Fraction(sign * formula.charge) for sign, formula in signed])
+    return rows

@@ -10,7 +10,7 @@ from __future__ import annotations
 import re
 from typing import TYPE_CHECKING
 
-from watchglass.chemistry.elements import WEIGHTS
+from watchglass.chemistry.elements import ELEMENTS, WEIGHTS
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Iterator
@@ -45,6 +45,7 @@ _GROUPS = {
     "Bz": "C7H5O",
 }
 _GROUP = re.compile("(" + "|".join(_GROUPS) + ")(?![a-z])([0-9]*)")
+_NAMES = frozenset(element.name for element in ELEMENTS.values())
 #: Symbols by their letters in small; rare elements would only make offers worse.
 _SYMBOLS = {symbol.lower(): symbol for symbol in WEIGHTS if symbol not in ("D", "T")}
 
@@ -87,9 +88,10 @@ def _doubtful(text: str) -> Iterator[list[str]]:
     yield list(_charges(text))
     yield [_BOND.sub("", text)]
     yield [_GROUP.sub(_spelt, text)]
-    if len(text) <= _LONGEST_LETTERS and _LETTERS.fullmatch(text):
-        if not text.islower() or len(text) <= _LONGEST_SMALL or any(c.isdigit() for c in text):
-            yield list(_cased(text, 0))[: _MOST_OFFERS + 1]
+    letters = len(text) <= _LONGEST_LETTERS and _LETTERS.fullmatch(text)
+    word = text.isalpha() and text.islower() and (len(text) > _LONGEST_SMALL or text in _NAMES)
+    if letters and not word:
+        yield list(_cased(text, 0))[: _MOST_OFFERS + 1]
 
 
 def _charges(text: str) -> Iterator[str]:

@@ -224,7 +224,7 @@ def _body(text: str, end: int) -> dict[str, Count] | FormulaFault:
             fault = _unfit_multiplier(text, start, start + found.end(), stop, len(units))
             if fault is not None:
                 return fault
-            times = _whole(Fraction(found[0]))
+            times = int(found[0]) if found[0].isdigit() else _whole(Fraction(found[0]))
             start += found.end()
         if start == stop:
             side = "after" if start else "before"
@@ -245,7 +245,7 @@ def _unfit_multiplier(text: str, start: int, end: int, stop: int, units: int) ->
         return FormulaFault(f"`{written}` multiplies the whole formula", start, end)
     if end == stop:
         return FormulaFault(f"`{written}` has nothing to multiply", start, end)
-    if Fraction(written) == 0:
+    if not written.strip("0."):
         return FormulaFault("a multiplier of 0", start, end)
     if end - start > MOST_DIGITS + 1:
         return FormulaFault(f"a multiplier of more than {MOST_DIGITS} digits", start, end)
@@ -282,7 +282,7 @@ def _unit(text: str, start: int, end: int) -> dict[str, Count] | FormulaFault:
             opened.pop()
             group, count = stack.pop(), times
         if count and (count[0] == "0" or len(count) > MOST_DIGITS):
-            return _unfit_count(count, found.end())
+            return _unfit_count(text, count, found.end())
         number = int(count) if count else 1
         level = stack[-1]
         for element, atoms in group.items():
@@ -307,8 +307,10 @@ def _unfit_closing(
     return None
 
 
-def _unfit_count(count: str, end: int) -> FormulaFault:
+def _unfit_count(text: str, count: str, end: int) -> FormulaFault:
     start = end - len(count)
+    if text.startswith(".", end):
+        return FormulaFault("a count is a whole number", start, end + 1)
     if count.strip("0") == "":
         return FormulaFault("a count of 0", start, end)
     if count[0] == "0":
