@@ -7,9 +7,8 @@ caller's. From the same tables the schemas for editors are made.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from enum import Enum
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, did_you_mean
@@ -42,8 +41,7 @@ _TAKES: dict[Shape, tuple[type, ...]] = {
 }
 
 
-@dataclass(frozen=True, slots=True)
-class Field:
+class Field(NamedTuple):
     """One field of a mapping.
 
     Attributes:
@@ -57,8 +55,7 @@ class Field:
     required: bool = False
 
 
-@dataclass(frozen=True, slots=True)
-class Record:
+class Record(NamedTuple):
     """A mapping read by a specification: only fields of the right shape are in it."""
 
     values: Mapping[str, YamlNode]

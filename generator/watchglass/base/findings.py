@@ -6,9 +6,8 @@ findings beside their result and never print: the shell sorts, counts and render
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from enum import IntEnum
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
     from collections.abc import Iterable
@@ -29,8 +28,7 @@ class Severity(IntEnum):
         return self.name.lower()
 
 
-@dataclass(frozen=True, slots=True)
-class Code:
+class Code(NamedTuple):
     """One kind of finding.
 
     Attributes:
@@ -48,24 +46,21 @@ class Code:
     since: str = "0.1"
 
 
-@dataclass(frozen=True, slots=True)
-class Related:
+class Related(NamedTuple):
     """Where another part of the story stands, and what is to be seen there."""
 
     span: Span
     message: str
 
 
-@dataclass(frozen=True, slots=True)
-class Edit:
+class Edit(NamedTuple):
     """A replacement that mends the finding for certain."""
 
     span: Span
     text: str
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Finding:
+class Finding(NamedTuple):
     """One fault in what an author wrote.
 
     Attributes:

@@ -6,17 +6,15 @@ computed values back into digits is `figures.py`.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from enum import Enum
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
     from watchglass.base.dimensions import Dimension
     from watchglass.base.units import Unit
 
 
-@dataclass(frozen=True, slots=True)
-class Number:
+class Number(NamedTuple):
     """A number as written.
 
     Attributes:
@@ -43,8 +41,7 @@ class Kind(Enum):
     BOUND = "bound"
 
 
-@dataclass(frozen=True, slots=True)
-class Quantity:
+class Quantity(NamedTuple):
     """A number with its unit.
 
     Attributes:

@@ -11,7 +11,7 @@ from __future__ import annotations
 
 import re
 from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes, units
 from watchglass.base import dimensions as dim
@@ -53,8 +53,7 @@ class Fault:
     help: str | None = None
 
 
-@dataclass(frozen=True, slots=True)
-class Found:
+class Found(NamedTuple):
     """A quantity, where its number ends and where it ends."""
 
     quantity: Quantity

@@ -45,8 +45,7 @@ class Position(NamedTuple):
     column: int
 
 
-@dataclass(frozen=True, slots=True)
-class Span:
+class Span(NamedTuple):
     """Part of a source: offsets in code points, `end` not included."""
 
     source: Source

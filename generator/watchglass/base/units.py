@@ -8,8 +8,7 @@ the spellings people reach for instead are refused with the way to write them.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
 from watchglass.base.unit_table import TABLE
@@ -18,8 +17,7 @@ if TYPE_CHECKING:
     from watchglass.base.dimensions import Dimension
 
 
-@dataclass(frozen=True, slots=True)
-class Unit:
+class Unit(NamedTuple):
     """A unit as written.
 
     Attributes:

@@ -9,8 +9,7 @@ editors do, so only its offsets are used.
 from __future__ import annotations
 
 import re
-from dataclasses import dataclass
-from typing import TYPE_CHECKING, Any
+from typing import TYPE_CHECKING, Any, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Related
@@ -30,8 +29,7 @@ _ANCHOR = re.compile(r"&\S+")
 _UNPRINTABLE = re.compile(r"[\x00-\x08\x0b-\x1f\x7f-\x84\x86-\x9f\ud800-\udfff\ufffe\uffff]")
 
 
-@dataclass(frozen=True, slots=True)
-class YamlText:
+class YamlText(NamedTuple):
     """A scalar.
 
     Attributes:
@@ -59,24 +57,21 @@ class YamlText:
         return self.span.part(table[start], max(last, table[start]))
 
 
-@dataclass(frozen=True, slots=True)
-class YamlList:
+class YamlList(NamedTuple):
     """A sequence."""
 
     items: tuple[YamlNode, ...]
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class YamlEntry:
+class YamlEntry(NamedTuple):
     """One key with its value."""
 
     key: YamlText
     value: YamlNode
 
 
-@dataclass(frozen=True, slots=True)
-class YamlMapping:
+class YamlMapping(NamedTuple):
     """A mapping, its entries in the order written; no key stands twice."""
 
     entries: tuple[YamlEntry, ...]

@@ -2,16 +2,14 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
     from watchglass.base.spans import Span
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class GlasswareType:
+class GlasswareType(NamedTuple):
     """One type of vessel.
 
     Attributes:
@@ -40,8 +38,7 @@ class GlasswareType:
         return self.names[0]
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class VesselType:
+class VesselType(NamedTuple):
     """A vessel as declared: its type, nominal size and state.
 
     Attributes:

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
@@ -11,8 +10,7 @@ if TYPE_CHECKING:
     from watchglass.base.yaml import YamlText
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Stock:
+class Stock(NamedTuple):
     """One stock: its `material` is text in the notation of a material, resolved where it is used."""
 
     key: str
@@ -22,8 +20,7 @@ class Stock:
     span: Span
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Indicator:
+class Indicator(NamedTuple):
     """An indicator with its transition range (pH) and the colours on either side of it."""
 
     key: str

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, field
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
@@ -13,8 +13,7 @@ if TYPE_CHECKING:
     from watchglass.chemistry.formulas import Formula
 
 
-@dataclass(frozen=True, slots=True)
-class At:
+class At(NamedTuple):
     """A measured value, with the temperature it was measured at where that is said."""
 
     value: Quantity

@@ -13,7 +13,7 @@ import re
 from dataclasses import dataclass
 from enum import Enum
 from fractions import Fraction
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, Literal
 
 from watchglass.chemistry.balancing import positive_solution, solutions
 from watchglass.chemistry.formulas import Formula, hill_order, parse_formula
@@ -24,8 +24,8 @@ if TYPE_CHECKING:
     from watchglass.chemistry.balancing import Matrix
     from watchglass.chemistry.formulas import Count
 
-#: One term of a side: how many, and of what.
-Terms = "Sequence[tuple[Fraction | int, Formula]]"
+    #: The terms of a side: how many, and of what.
+    Terms = Sequence[tuple[Fraction | int, Formula]]
 
 LONGEST = 2000
 MOST_SPECIES = 20
@@ -139,11 +139,17 @@ class Impossible:
 
 @dataclass(frozen=True, slots=True)
 class Lacking:
-    """So much of a small molecule or ion, added to one side, would balance what is written."""
+    """So many of a small molecule or ion, added to one side, would balance what is written.
 
-    side: str
+    Attributes:
+        side: `left` or `right`.
+        formula: Of what.
+        count: How many, > 0.
+    """
+
+    side: Literal["left", "right"]
     formula: Formula
-    count: Fraction
+    count: int
 
 
 @dataclass(frozen=True, slots=True)
@@ -339,11 +345,11 @@ def _lacking(excess: Balance) -> Lacking | None:
             raise TypeError(f"{text} is a constant of ours and must read")
         first, each = formula.composition[0]
         number = Fraction(excess.excess_left.get(first, 0)) / each
-        if number == 0:
+        if number == 0 or number.denominator != 1:
             continue
         atoms = {symbol: count * number for symbol, count in formula.composition}
         if atoms == excess.excess_left and formula.charge * number == excess.charge_excess_left:
-            return Lacking("right" if number > 0 else "left", formula, abs(number))
+            return Lacking("right" if number > 0 else "left", formula, abs(int(number)))
     return None
 
 

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Severity
@@ -17,8 +16,7 @@ if TYPE_CHECKING:
 _JUDGED = frozenset("BXHWP")
 
 
-@dataclass(frozen=True, slots=True)
-class Settled:
+class Settled(NamedTuple):
     """Findings after acceptance.
 
     Attributes:

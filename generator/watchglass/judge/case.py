@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.findings import Severity
 
@@ -16,8 +15,7 @@ if TYPE_CHECKING:
     from watchglass.run.usage import Usage
 
 
-@dataclass(frozen=True, slots=True)
-class Case:
+class Case(NamedTuple):
     """One procedure before its checks.
 
     Attributes:

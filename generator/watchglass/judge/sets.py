@@ -2,9 +2,8 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from posixpath import dirname, join, normpath
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Related, did_you_mean
@@ -16,8 +15,7 @@ if TYPE_CHECKING:
     from watchglass.run.cards import Card, LinkOut
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Appointment:
+class Appointment(NamedTuple):
     """One code named in the schedule, with its place."""
 
     code: str

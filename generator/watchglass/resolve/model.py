@@ -102,8 +102,7 @@ class Unknown(NamedTuple):
 Composition = Pure | Solution | Saturated | Mixture | Secret | Continued | Unknown
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Material:
+class Material(NamedTuple):
     """A material of the procedure.
 
     Attributes:
@@ -130,8 +129,7 @@ class Material:
     stock: str = ""
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Vessel:
+class Vessel(NamedTuple):
     """A vessel of the procedure; each member of a family is one of its own.
 
     `type` is None where it could not be read.
@@ -144,8 +142,7 @@ class Vessel:
     span: Span
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Equipment:
+class Equipment(NamedTuple):
     """A thing that is neither vessel nor material."""
 
     name: str
@@ -176,8 +173,7 @@ class Species(NamedTuple):
     span: Span
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Reaction:
+class Reaction(NamedTuple):
     """A reaction of the procedure.
 
     Attributes:
@@ -317,8 +313,7 @@ class Step(NamedTuple):
 # ---------------------------------------------------------------- figures
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class RecordEntry:
+class RecordEntry(NamedTuple):
     """A blank for the student.
 
     Attributes:
@@ -356,8 +351,7 @@ class Acceptance(NamedTuple):
     span: Span
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Head:
+class Head(NamedTuple):
     """The plain facts at the top of a procedure; empty where not given.
 
     Attributes:

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base.fields import Field, Record, Shape, read_fields, unfit
@@ -26,8 +25,7 @@ FIELDS: dict[str, Field] = {
 }
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Slot:
+class Slot(NamedTuple):
     """One entry of the schedule.
 
     Attributes:

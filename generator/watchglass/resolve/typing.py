@@ -6,8 +6,7 @@ cannot be known (a finding stands already, or the function's value has none): it
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base import dimensions as dim
@@ -33,8 +32,7 @@ if TYPE_CHECKING:
     from watchglass.resolve.scope import Scope
 
 
-@dataclass(frozen=True, slots=True)
-class Function:
+class Function(NamedTuple):
     """One function: what its arguments are, and the dimension of its value.
 
     Arguments: `thing` (a material or substance), `held` (`X in V`), `vessel`, `reaction`, `label`,

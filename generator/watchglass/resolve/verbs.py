@@ -9,7 +9,7 @@ Several are divided by `|`. Needed clauses are marked `!`.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from typing import NamedTuple
 
 _COMMON = {
     "for": "time",
@@ -22,8 +22,7 @@ _COMMON = {
 }
 
 
-@dataclass(frozen=True, slots=True)
-class Verb:
+class Verb(NamedTuple):
     """One verb: what its object is (`vessel`, `reaction`, `time`, `thing`, `none`), its clauses."""
 
     object: str

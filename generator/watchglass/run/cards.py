@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.yaml import YamlText
 from watchglass.read import syntax
@@ -16,8 +15,7 @@ if TYPE_CHECKING:
     from watchglass.resolve.model import Procedure
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class LinkOut:
+class LinkOut(NamedTuple):
     """A link in a page: its target as written, its place, and whether only instructors see it."""
 
     target: str
@@ -25,8 +23,7 @@ class LinkOut:
     hidden: bool
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Card:
+class Card(NamedTuple):
     """The small digest of one page that set checks and lists need.
 
     Attributes:

@@ -8,7 +8,7 @@ bounded, since repetitions within repetitions multiply.
 from __future__ import annotations
 
 from dataclasses import dataclass, field
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.resolve import model
 
@@ -41,8 +41,7 @@ class Happening:
         return self.names.get(name, name)
 
 
-@dataclass(frozen=True, slots=True)
-class Course:
+class Course(NamedTuple):
     """All that happens, in order; `cut` where the bound on events was reached, at that `again`."""
 
     happenings: tuple[Happening, ...]

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
 from watchglass.run.content import Content, Missing, contents
@@ -16,8 +15,7 @@ if TYPE_CHECKING:
     from watchglass.run.usage import Usage
 
 
-@dataclass(frozen=True, slots=True)
-class Role:
+class Role(NamedTuple):
     """What one substance of one material is to a reaction.
 
     Attributes:
@@ -68,8 +66,7 @@ def roles(procedure: model.Procedure, used: Mapping[str, Usage]) -> tuple[Role, 
     return tuple(found)
 
 
-@dataclass(frozen=True, slots=True)
-class _Reactant:
+class _Reactant(NamedTuple):
     material: str
     content: Content
     turns: float  # amount over stoichiometric number, mol

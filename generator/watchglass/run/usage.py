@@ -6,9 +6,8 @@ beside what is charged of it. Amounts of substance follow from `content.py`.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from math import floor, log10
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
 from watchglass.base.quantities import Kind
@@ -23,8 +22,7 @@ if TYPE_CHECKING:
     from watchglass.run.passes import Course
 
 
-@dataclass(frozen=True, slots=True)
-class Use:
+class Use(NamedTuple):
     """One written portion and how often it is taken.
 
     Attributes:
@@ -40,8 +38,7 @@ class Use:
     span: Span
 
 
-@dataclass(frozen=True, slots=True)
-class Total:
+class Total(NamedTuple):
     """A sum of quantities of one dimension.
 
     Attributes:
@@ -61,8 +58,7 @@ class Total:
     about: bool
 
 
-@dataclass(frozen=True, slots=True)
-class Usage:
+class Usage(NamedTuple):
     """All that is taken of one material.
 
     Attributes:

@@ -2,9 +2,8 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from pathlib import Path
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.catalogue import Catalogue, name_index
@@ -38,8 +37,7 @@ if TYPE_CHECKING:
     from watchglass.run.cards import Card
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Surroundings:
+class Surroundings(NamedTuple):
     """What every procedure of a set is resolved in."""
 
     catalogue: Catalogue
@@ -47,8 +45,7 @@ class Surroundings:
     schedule: tuple[Slot, ...]
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Judged:
+class Judged(NamedTuple):
     """One procedure with what was found.
 
     Attributes:
@@ -71,8 +68,7 @@ class Judged:
         return self.case.procedure
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class JudgedPage:
+class JudgedPage(NamedTuple):
     """One ordinary page with what was found."""
 
     path: str
@@ -81,8 +77,7 @@ class JudgedPage:
     card: Card
 
 
-@dataclass(frozen=True, slots=True, kw_only=True)
-class Analysis:
+class Analysis(NamedTuple):
     """A whole set, analysed.
 
     Attributes:
@@ -102,8 +97,7 @@ class Analysis:
     files: frozenset[str]
 
 
-@dataclass(frozen=True, slots=True)
-class CheckResult:
+class CheckResult(NamedTuple):
     """What `check` found, and over how many procedures."""
 
     findings: tuple[Finding, ...]

@@ -3,10 +3,9 @@
 from __future__ import annotations
 
 import json
-from dataclasses import dataclass
 from functools import cache
 from pathlib import Path
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.spans import Source
 from watchglass.base.yaml import YamlMapping, YamlText, read_yaml
@@ -23,8 +22,7 @@ if TYPE_CHECKING:
 DATA = Path(__file__).parents[1] / "catalogue" / "data"
 
 
-@dataclass(frozen=True, slots=True)
-class Shipped:
+class Shipped(NamedTuple):
     """The shipped tables, decoded but for the substances, which wait until they are asked for."""
 
     substances: ShippedSubstances
