@@ -38,7 +38,10 @@ _NAME_GOES_ON = re.compile(r"[\w-]")
 _SUPERSCRIPT = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺", "0123456789-+")
 _VULGAR = re.compile(r"\d*[½⅓¼¾⅔⅛]")
 _INTO = re.compile(r"\s+[^\W\d_%(]|\s*[%°]")
+_WORDS = re.compile(r"([^\W\d_][\w-]*)(?: [^\W\d_][\w-]*)?")
 _LONGEST = 40
+#: No quantity is longer than this many characters; only so much is looked at.
+_WINDOW = 200
 _LARGEST_POWER = 30
 
 
@@ -68,8 +71,11 @@ def starts_quantity(text: str, at: int) -> bool:
     """Tell whether a number, or a word that only stands before one, begins here."""
     if at >= len(text):
         return False
+    first = text[at]
+    if first.isalpha():
+        return first in "ca" and _ABOUT.match(text, at) is not None
     return bool(
-        text[at].isdigit()
+        first.isdigit()
         or _DIGITS.match(text, at)
         or _ABOUT.match(text, at)
         or _BOUND.match(text, at)
@@ -97,8 +103,20 @@ def scan_quantity(
         `units.NONE`), the fault, or None where no number begins.
     """
     stop = len(text) if end is None else end
-    text = text[:stop] if stop < len(text) else text
-    kind, bound, here = Kind.EXACT, None, at
+    found = _scan(text[at : min(stop, at + _WINDOW)], measures)
+    match found:
+        case Found(quantity, after, measured):
+            return Found(quantity, at + after, measured)
+        case Fault(code, start, after, message, help_):
+            return Fault(code, at + start, at + after, message, help_)
+        case None:
+            return None
+
+
+def _scan(text: str, measures: Mapping[str, float | None] | None) -> Scan:
+    """Read the quantity at the start of a text; offsets count from there."""
+    at = here = 0
+    kind, bound = Kind.EXACT, None
     if found := _ABOUT.match(text, here):
         kind, here = Kind.ABOUT, found.end()
     elif found := _BOUND.match(text, here):
@@ -379,16 +397,15 @@ def _percent(text: str, at: int) -> tuple[Unit, int] | Fault:
 
 
 def _measure(text: str, at: int, measures: Mapping[str, float | None]) -> tuple[Unit, int] | None:
-    """Read a countable measure; the longest wins (`spatula tips` before `spatula`)."""
-    best = ""
-    for word in measures:
-        if (
-            len(word) > len(best)
-            and text.startswith(word, at)
-            and not _word_goes_on(text, at + len(word))
-        ):
-            best = word
-    return (Unit(best, dim.COUNT), at + len(best)) if best else None
+    """Read a countable measure of one or two words; the longer wins."""
+    found = _WORDS.match(text, at)
+    if found is None:
+        return None
+    for end in (found.end(), found.end(1)):
+        word = text[at:end]
+        if word in measures and not _word_goes_on(text, end):
+            return Unit(word, dim.COUNT), end
+    return None
 
 
 def _atom(text: str, at: int) -> tuple[Unit, int] | None:

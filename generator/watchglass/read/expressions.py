@@ -197,8 +197,10 @@ class Cursor:
 
     def quantity(self) -> Measured | None:
         """Read a quantity if one begins here; stop at a faulty one."""
-        if not starts_quantity(self.text, self.at) or NAME.match(self.text, self.at, self.end):
+        if self.done or not starts_quantity(self.text, self.at):
             return None
+        if NAME.match(self.text, self.at, self.end) and not self.text[self.at].isalpha():
+            return None  # `2-propanol`
         found = scan_quantity(self.text, self.at, self.end, measures=self.measures)
         if isinstance(found, Fault):
             self.stop(
