@@ -7,24 +7,23 @@ refuse the other.
 
 from __future__ import annotations
 
-from dataclasses import dataclass, field
+from typing import NamedTuple
 
 _NOUGHT = (0, 0, 0, 0, 0, 0, 0)
 
 
-@dataclass(frozen=True, slots=True)
-class Dimension:
+class Dimension(NamedTuple):
     """What kind of thing a quantity is.
 
     Attributes:
         exponents: Of length, mass, time, temperature, amount of substance, electric current, turn.
         tag: Tells apart what the exponents do not; empty for most.
-        name: Words for a person, with their article; not compared.
+        name: Words for a person, with their article; they follow from exponents and tag.
     """
 
     exponents: tuple[int, ...] = _NOUGHT
     tag: str = ""
-    name: str = field(default="", compare=False)
+    name: str = ""
 
     def times(self, other: Dimension) -> Dimension:
         """Give the dimension of a product. Tags are lost: a product is no point, share or count."""

@@ -6,6 +6,7 @@ findings beside their result and never print: the shell sorts, counts and render
 
 from __future__ import annotations
 
+from dataclasses import dataclass
 from enum import IntEnum
 from typing import TYPE_CHECKING, NamedTuple
 
@@ -60,7 +61,8 @@ class Edit(NamedTuple):
     text: str
 
 
-class Finding(NamedTuple):
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Finding:
     """One fault in what an author wrote.
 
     Attributes:

@@ -43,6 +43,7 @@ _LONGEST = 40
 #: No quantity is longer than this many characters; only so much is looked at.
 _WINDOW = 200
 _LARGEST_POWER = 30
+_SIGNED = frozenset((dim.NUMBER, dim.VOLTAGE, dim.CURRENT, dim.ENERGY, dim.MOLAR_ENERGY))
 
 
 @dataclass(frozen=True, slots=True)
@@ -473,13 +474,7 @@ def _impossible(quantity: Quantity, start: int, end: int) -> Fault | None:
             f"`{text}` is below absolute zero",
             "absolute zero is -273.15 °C, 0 K",
         )
-    signed = cold or dimension in (
-        dim.NUMBER,
-        dim.VOLTAGE,
-        dim.CURRENT,
-        dim.ENERGY,
-        dim.MOLAR_ENERGY,
-    )
+    signed = cold or dimension in _SIGNED
     if not signed and quantity.number.value < 0:
         return Fault(
             codes.QUANTITY_NEGATIVE,

@@ -69,7 +69,9 @@ def mending(text: str, reads: Callable[[str], bool]) -> str | None:
             return "write " + " or ".join(f"`{offer}`" for offer in fit)
     counted = re.match(r"([0-9]+)(?=[A-Z(\[])", plain)
     if counted and reads(plain[counted.end() :]):
-        return f"put a space after the number in an equation: `{counted[1]} {plain[counted.end() :]}`"
+        return (
+            f"put a space after the number in an equation: `{counted[1]} {plain[counted.end() :]}`"
+        )
     return None
 
 

@@ -20,8 +20,9 @@ from watchglass.chemistry.valence import Atom, hydrogens, unmatched
 if TYPE_CHECKING:
     from watchglass.chemistry.formulas import Count
 
-LONGEST = 2000
+LONGEST = 600
 DEEPEST = 100
+LONGEST_ATOM = 20
 
 _PLAIN = re.compile(r"Cl|Br|[BCNOPSFI]|[bcnops]")
 _BRACKET = re.compile(
@@ -196,7 +197,9 @@ class _Reader:
         found = _BRACKET.match(self.text, self.at)
         end = closing + 1
         if found is None:
-            return self._fault(f"`{self.text[self.at : end]}` is no atom", self.at, end)
+            shown = self.text[self.at : end] if end - self.at <= LONGEST_ATOM else "[…]"
+            help_ = "write an atom in brackets as `[NH4+]` or `[Fe+3]`"
+            return self._fault(f"`{shown}` is no atom", self.at, end, help_)
         isotope, written, count, charge = found.group("isotope", "symbol", "hydrogens", "charge")
         symbol = written.capitalize()
         if symbol not in ELEMENTS or symbol in ("D", "T"):
@@ -216,8 +219,8 @@ class _Reader:
     def _add(self, atom: Atom) -> SmilesFault | None:
         index = len(self.atoms)
         self.atoms.append(atom)
-        if self.previous is not None:
-            self._join(self.previous, index, self.bond)
+        if self.previous is not None and not self._join(self.previous, index, self.bond):
+            return self._fault("`:` joins aromatic atoms only", self.at - 1, self.at)
         self.previous = index
         self.bond = ""
         self.at = atom.end
@@ -237,13 +240,17 @@ class _Reader:
             both = {bond for bond in (opened.bond, self.bond) if bond}
             if len({_BONDS[bond] for bond in both}) > 1:
                 return self._fault(f"ring `{number}` has two kinds of bond", self.at, end)
-            self._join(opened.atom, self.previous, min(both, default=""))
+            if not self._join(opened.atom, self.previous, max(both, default="")):
+                return self._fault("`:` joins aromatic atoms only", self.at - 1, end)
         self.bond = ""
         self.at = end
         return None
 
-    def _join(self, one: int, other: int, bond: str) -> None:
+    def _join(self, one: int, other: int, bond: str) -> bool:
+        """Join two atoms; false for an aromatic bond between others than aromatic atoms."""
         first, second = self.atoms[one], self.atoms[other]
+        if bond == ":" and not (first.aromatic and second.aromatic):
+            return False
         self.bonded.add((min(one, other), max(one, other)))
         more = _BONDS.get(bond, 0)
         for atom in (first, second):
@@ -252,9 +259,14 @@ class _Reader:
         if first.aromatic and second.aromatic and bond in ("", ":"):
             first.shared.append(other)
             second.shared.append(one)
+        return True
 
     def _fault(
-        self, message: str, start: int | None = None, end: int | None = None, help_: str | None = None
+        self,
+        message: str,
+        start: int | None = None,
+        end: int | None = None,
+        help_: str | None = None,
     ) -> SmilesFault:
         """Make a fault; of the sign at hand where no place is given."""
         begin = self.at if start is None else start

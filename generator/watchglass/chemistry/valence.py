@@ -37,7 +37,7 @@ _AROMATIC_VALENCES = {
     "Se": {0: 2, 1: 3},
 }
 #: Attempts at setting double bonds before a structure is given up as too large.
-_MOST_ATTEMPTS = 20_000
+_MOST_ATTEMPTS = 2_000
 
 
 @dataclass(slots=True)
