@@ -28,7 +28,7 @@ def main() -> int:
     maker = Maker(Random(options.seed))  # noqa: S311 - test material
     began = time.perf_counter()
     marks = documents = wrong = 0
-    while marks < options.marks and wrong < 5:  # noqa: PLR2004 - enough to look at
+    while marks < options.marks and wrong < 5:
         text = maker.document()
         documents += 1
         read, found = wrong_marks(text)

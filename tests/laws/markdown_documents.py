@@ -7,7 +7,6 @@ from itertools import count
 from typing import TYPE_CHECKING
 
 from read.markdown_trees import groups, inside, read, walk
-from watchglass.base.spans import Source
 from watchglass.read import syntax
 
 if TYPE_CHECKING:
@@ -16,6 +15,7 @@ if TYPE_CHECKING:
 
     from read.markdown_trees import Node, Reading
     from watchglass.base.findings import Finding
+    from watchglass.base.spans import Source
 
 _WORDS = (
     "wash", "the", "é🧪", "µL", "*x*", "**b**", "_u_", "`c`", "`{c}`", "\\{", "\\}", "&amp;", "&#956;",
@@ -72,7 +72,7 @@ class Maker:
         return chance.choice((" ", " ", "")).join(parts)
 
     def mark(self) -> str:
-        return "{@%d}" % next(self.numbers)
+        return f"{{@{next(self.numbers)}}}"
 
     def paragraph(self) -> list[str]:
         chance = self.chance

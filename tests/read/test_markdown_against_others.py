@@ -8,10 +8,10 @@ from random import Random
 from typing import TYPE_CHECKING, Any
 
 import pytest
-from laws.markdown_documents import Maker
-from marko import Markdown
 from markdown_it import MarkdownIt
+from marko import Markdown
 
+from laws.markdown_documents import Maker
 from read.markdown_trees import groups, read
 from watchglass.read import syntax
 
@@ -97,7 +97,7 @@ def _ours(nodes: Iterable[syntax.Inline]) -> Iterator[str]:
 
 @pytest.mark.parametrize("seed", range(40))
 def test_running_text_reads_as_markdown_it_reads_it(seed: int) -> None:
-    chance = Random(seed)
+    chance = Random(seed)  # noqa: S311 - test material
     for _ in range(50):
         words = "".join(chance.choice(_PIECES) for _ in range(chance.randint(1, 14)))
         text = f"start {words} end\n\n[x]: /there 'title'\n"
@@ -150,7 +150,7 @@ def _placed_by_us(nodes: Iterable[Node], around: tuple[str, ...] = ()) -> Iterat
 
 @pytest.mark.parametrize("seed", range(60))
 def test_marks_land_in_the_blocks_where_marko_finds_them(seed: int) -> None:
-    maker = Maker(Random(seed), common=True)
+    maker = Maker(Random(seed), common=True)  # noqa: S311 - test material
     for _ in range(5):
         text = maker.document()
         ours = sorted(_placed_by_us(read(text)[1]), key=lambda place: place[-1])

@@ -12,12 +12,11 @@ compared with two independent libraries in `tests/outside`.
 
 from __future__ import annotations
 
-from dataclasses import dataclass
 from types import MappingProxyType
+from typing import NamedTuple
 
 
-@dataclass(frozen=True, slots=True)
-class Element:
+class Element(NamedTuple):
     """One element, or one of the two isotopes of hydrogen that have a symbol of their own.
 
     Attributes:

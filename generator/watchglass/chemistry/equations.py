@@ -13,7 +13,7 @@ import re
 from dataclasses import dataclass
 from enum import Enum
 from fractions import Fraction
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.chemistry.balancing import positive_solution, solutions
 from watchglass.chemistry.formulas import hill_order
@@ -30,17 +30,18 @@ if TYPE_CHECKING:
 LONGEST = 2000
 MOST_SPECIES = 20
 
-_ARROW = re.compile(r"(?<!\S)(->|→|<=>|⇌)(?!\S)")
-_LIKE_ARROW = re.compile(r"<?[-=]*[-=]>|<-+>?|[→⇌⇒⟶⟹⇄⇋↔]|(?<!\S)=+(?!\S)")
-_PLUS = re.compile(r"(?<!\S)\+(?!\S)")
-_TIGHT_PLUS = re.compile(r"(?<=\s)\+(?=\S)|(?<=\S)\+(?=\s+\S)")
-_COEFFICIENT = re.compile(r"([1-9][0-9]{0,5})(?:/([1-9][0-9]{0,5}))?\s+(?=\S)")
-_LIKE_COEFFICIENT = re.compile(r"([0-9]+(?:[./,][0-9]+)?|[½¼¾⅓⅔])(\s+(?=\S)|$)")
+# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
+# meet none of these.
+_ARROW = r"(?<!\S)(->|→|<=>|⇌)(?!\S)"
+_LIKE_ARROW = r"<?[-=]*[-=]>|<-+>?|[→⇌⇒⟶⟹⇄⇋↔]|(?<!\S)=+(?!\S)"
+_PLUS = r"(?<!\S)\+(?!\S)"
+_TIGHT_PLUS = r"(?<=\s)\+(?=\S)|(?<=\S)\+(?=\s+\S)"
+_COEFFICIENT = r"([1-9][0-9]{0,5})(?:/([1-9][0-9]{0,5}))?\s+(?=\S)"
+_LIKE_COEFFICIENT = r"([0-9]+(?:[./,][0-9]+)?|[½¼¾⅓⅔])(\s+(?=\S)|$)"
 _DECIMALS = {"0.5": "1/2", "1.5": "3/2", "2.5": "5/2", "½": "1/2", "¼": "1/4", "¾": "3/4"}
 
 
-@dataclass(frozen=True, slots=True)
-class Term:
+class Term(NamedTuple):
     """One species of an equation as text.
 
     Attributes:
@@ -56,16 +57,14 @@ class Term:
     end: int
 
 
-@dataclass(frozen=True, slots=True)
-class EquationText:
+class EquationText(NamedTuple):
     """An equation split into its terms, in the order written."""
 
     left: tuple[Term, ...]
     right: tuple[Term, ...]
 
 
-@dataclass(frozen=True, slots=True)
-class EquationFault:
+class EquationFault(NamedTuple):
     """Why a text is no equation: what is wrong, where, and how to write it."""
 
     message: str
@@ -83,8 +82,7 @@ class Verdict(Enum):
     MASS_AND_CHARGE_UNBALANCED = "mass_and_charge_unbalanced"
 
 
-@dataclass(frozen=True, slots=True)
-class Balance:
+class Balance(NamedTuple):
     """What is left over when the right side is taken from the left.
 
     Attributes:
@@ -114,15 +112,13 @@ class Balance:
         return self.verdict is Verdict.BALANCED
 
 
-@dataclass(frozen=True, slots=True)
-class Balanced:
+class Balanced(NamedTuple):
     """The one set of smallest whole coefficients: left side first, in the order given."""
 
     coefficients: tuple[int, ...]
 
 
-@dataclass(frozen=True, slots=True)
-class NotUnique:
+class NotUnique(NamedTuple):
     """Several balances that are no multiples of one another; none of them is the answer.
 
     Attributes:
@@ -149,7 +145,7 @@ def split_equation(text: str) -> EquationText | EquationFault:
     """
     if len(text) > LONGEST:
         return EquationFault(f"an equation of more than {LONGEST} signs", LONGEST, len(text))
-    arrows = list(_ARROW.finditer(text))
+    arrows = list(re.compile(_ARROW).finditer(text))
     if not arrows:
         return _without_arrow(text)
     if len(arrows) > 1:
@@ -167,7 +163,7 @@ def split_equation(text: str) -> EquationText | EquationFault:
 
 
 def _without_arrow(text: str) -> EquationFault:
-    found = _LIKE_ARROW.search(text)
+    found = re.compile(_LIKE_ARROW).search(text)
     if found is None:
         return EquationFault("the arrow is missing", 0, len(text), "write `reactants -> products`")
     if found[0] in ("->", "→", "<=>", "⇌"):
@@ -187,7 +183,7 @@ def _side(
     if not text[start:end].strip():
         where = "before" if start == 0 else "after"
         return EquationFault(f"nothing stands {where} the arrow", *arrow.span())
-    pluses = [found.span() for found in _PLUS.finditer(text, start, end)]
+    pluses = [found.span() for found in re.compile(_PLUS).finditer(text, start, end)]
     if len(pluses) >= MOST_SPECIES:
         return EquationFault(f"more than {MOST_SPECIES} species on one side", start, end)
     terms: list[Term] = []
@@ -209,14 +205,14 @@ def _term(text: str, start: int, end: int) -> Term | EquationFault:
     written = text[start:end]
     start += len(written) - len(written.lstrip())
     end -= len(written) - len(written.rstrip())
-    tight = _TIGHT_PLUS.search(text, start, end)
+    tight = re.compile(_TIGHT_PLUS).search(text, start, end)
     if tight is not None:
         return EquationFault("`+` needs a space on both sides", *tight.span())
-    found = _COEFFICIENT.match(text, start, end)
+    found = re.compile(_COEFFICIENT).match(text, start, end)
     if found is not None:
         coefficient = Fraction(int(found[1]), int(found[2] or 1))
         return Term(coefficient, text[found.end() : end], found.end(), end)
-    like = _LIKE_COEFFICIENT.match(text, start, end)
+    like = re.compile(_LIKE_COEFFICIENT).match(text, start, end)
     if like is None:
         return Term(Fraction(1), text[start:end], start, end)
     number, stop = like[1], like.end(1)

@@ -8,8 +8,8 @@ the first that has not is the fault, and the span of the fault is that sign.
 from __future__ import annotations
 
 import re
-from dataclasses import dataclass
 from fractions import Fraction
+from typing import NamedTuple
 
 from watchglass.chemistry.elements import ELEMENTS
 
@@ -20,14 +20,15 @@ LONGEST = 400
 DEEPEST = 8
 MOST_DIGITS = 4
 
-_TOKEN = re.compile(r"([A-Z][a-z]?)([0-9]*)|([(\[])|([)\]])([0-9]*)")
-_MULTIPLIER = re.compile(r"[0-9]+(?:\.[0-9]+)?")
-_CHARGE = re.compile(r"([1-9][0-9]?)?([+-])")
+# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
+# meet none of these.
+_SIGNS = r"([A-Z][a-z]?)([0-9]*)|([(\[])|([)\]])([0-9]*)"
+_MULTIPLIER = r"[0-9]+(?:\.[0-9]+)?"
+_CHARGE = r"([1-9][0-9]?)?([+-])"
 _PARTNER = {")": "(", "]": "["}
 
 
-@dataclass(frozen=True, slots=True)
-class FormulaFault:
+class FormulaFault(NamedTuple):
     """Why a text is no formula.
 
     Attributes:
@@ -78,7 +79,7 @@ def _body(text: str, end: int) -> dict[str, Count] | FormulaFault:
     for unit in units:
         stop = start + len(unit)
         times: Count = 1
-        found = _MULTIPLIER.match(unit)
+        found = re.compile(_MULTIPLIER).match(unit)
         if found is not None:
             fault = _unfit_multiplier(text, start, start + found.end(), stop, len(units))
             if fault is not None:
@@ -119,9 +120,10 @@ def _unit(text: str, start: int, end: int) -> dict[str, Count] | FormulaFault:
     """Read one unit: symbols, counts and brackets; a stack stands for the open brackets."""
     stack: list[dict[str, Count]] = [{}]
     opened: list[int] = []
+    token = re.compile(_SIGNS)
     at = start
     while at < end:
-        found = _TOKEN.match(text, at, end)
+        found = token.match(text, at, end)
         if found is None:
             return _unreadable(text, at, end)
         symbol, count, opening, _, times = found.groups()
@@ -202,7 +204,7 @@ def _unreadable(text: str, at: int, end: int) -> FormulaFault:
 def _charge(text: str, caret: int) -> int | FormulaFault:
     """Read the charge after `^`: a number of at most two digits, then its sign."""
     written = text[caret + 1 :]
-    found = _CHARGE.fullmatch(written)
+    found = re.compile(_CHARGE).fullmatch(written)
     if found is not None:
         return int(found[1] or 1) * (1 if found[2] == "+" else -1)
     if not written:

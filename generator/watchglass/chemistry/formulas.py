@@ -9,13 +9,11 @@ decimal multiplier, the charge at the end after `^` (`SO4^2-`), `D` and `T` for 
 from __future__ import annotations
 
 import re
-from dataclasses import dataclass, replace
 from enum import Enum
 from functools import lru_cache
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.chemistry.elements import WEIGHTS
-from watchglass.chemistry.formula_mending import mending
 from watchglass.chemistry.formula_reading import Count, FormulaFault, read_formula
 
 if TYPE_CHECKING:
@@ -33,9 +31,9 @@ __all__ = [
     "parse_species",
 ]
 
-_PARTS = re.compile(
-    r"([A-Z][a-z]?|e)|([(\[])|([)\]])|(·)|\^(.+)|(?<![·0-9.])(?!^)([0-9]+)|([0-9.]+)"
-)
+# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
+# meet none of these.
+_PARTS = r"([A-Z][a-z]?|e)|([(\[])|([)\]])|(·)|\^(.+)|(?<![·0-9.])(?!^)([0-9]+)|([0-9.]+)"
 
 
 class PartKind(Enum):
@@ -50,16 +48,14 @@ class PartKind(Enum):
     MULTIPLIER = "multiplier"
 
 
-@dataclass(frozen=True, slots=True)
-class Part:
+class Part(NamedTuple):
     """One part of a formula as written; a charge comes without its `^`."""
 
     kind: PartKind
     text: str
 
 
-@dataclass(frozen=True, slots=True)
-class Formula:
+class Formula(NamedTuple):
     """A formula that could be read.
 
     Attributes:
@@ -107,7 +103,7 @@ class Formula:
         kinds = tuple(PartKind)
         return tuple(
             Part(kinds[found.lastindex - 1], found[found.lastindex])
-            for found in _PARTS.finditer(self.text)
+            for found in re.compile(_PARTS).finditer(self.text)
             if found.lastindex
         )
 
@@ -145,7 +141,10 @@ def parse_formula(text: str) -> Formula | FormulaFault:
         return FormulaFault(message, 0, len(text), "use it in an equation")
     read = read_formula(text)
     if isinstance(read, FormulaFault):
-        return replace(read, help=mending(text, _can_be_read))
+        # Imported on the first fault: its expressions take longer to compile than all the rest.
+        from watchglass.chemistry.formula_mending import mending  # noqa: PLC0415
+
+        return read._replace(help=mending(text, _can_be_read))
     atoms, charge = read
     return Formula(text, hill_order(atoms), charge)
 

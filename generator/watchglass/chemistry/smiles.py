@@ -10,8 +10,7 @@ isotopes but those of hydrogen, `%` with brackets, and a dot inside a branch.
 from __future__ import annotations
 
 import re
-from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.chemistry.elements import ELEMENTS
 from watchglass.chemistry.formulas import hill_order
@@ -24,19 +23,20 @@ LONGEST = 600
 DEEPEST = 100
 LONGEST_ATOM = 20
 
-_PLAIN = re.compile(r"Cl|Br|[BCNOPSFI]|[bcnops]")
-_BRACKET = re.compile(
+# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
+# meet none of these.
+_PLAIN = r"Cl|Br|[BCNOPSFI]|[bcnops]"
+_BRACKET = (
     r"\[(?P<isotope>[0-9]+)?(?P<symbol>[A-Z][a-z]?|se|as|[bcnops])(?:@@?)?"
     r"(?P<hydrogens>H[0-9]?)?(?P<charge>\+\+|--|[+-][0-9]?)?(?::[0-9]{1,4})?\]"
 )
-_RING = re.compile(r"[0-9]|%[0-9]{2}")
+_RING = r"[0-9]|%[0-9]{2}"
 #: Bonds beyond the first that a sign stands for; `:` and none between small letters are aromatic.
 _BONDS = {"-": 0, "/": 0, "\\": 0, ":": 0, "=": 1, "#": 2, "$": 3}
 _HEAVY = {"1": "H", "2": "D", "3": "T"}
 
 
-@dataclass(frozen=True, slots=True)
-class SmilesFault:
+class SmilesFault(NamedTuple):
     """Why a text cannot be counted: what is wrong, where, and how to write it."""
 
     message: str
@@ -45,8 +45,7 @@ class SmilesFault:
     help: str | None = None
 
 
-@dataclass(frozen=True, slots=True)
-class Atoms:
+class Atoms(NamedTuple):
     """The count of a structure.
 
     Attributes:
@@ -100,8 +99,7 @@ def _counted(atoms: list[Atom]) -> Atoms | SmilesFault:
     return Atoms(hill_order(total), sum(atom.charge for atom in atoms))
 
 
-@dataclass(slots=True)
-class _Ring:
+class _Ring(NamedTuple):
     """A ring left open: its atom, its bond sign or none, its place."""
 
     atom: int
@@ -148,10 +146,10 @@ class _Reader:
         sign = self.text[self.at]
         if sign == "[":
             return self._bracket()
-        if found := _PLAIN.match(self.text, self.at):
+        if found := re.compile(_PLAIN).match(self.text, self.at):
             symbol = found[0].capitalize()
             return self._add(Atom(symbol, found[0].islower(), 0, None, self.at, found.end()))
-        if found := _RING.match(self.text, self.at):
+        if found := re.compile(_RING).match(self.text, self.at):
             return self._ring(found[0].lstrip("%").lstrip("0") or "0", found.end())
         if sign in _BONDS:
             if self.bond or self.previous is None:
@@ -194,12 +192,12 @@ class _Reader:
         closing = self.text.find("]", self.at)
         if closing < 0:
             return self._fault("`[` is not closed")
-        found = _BRACKET.match(self.text, self.at)
+        found = re.compile(_BRACKET).match(self.text, self.at)
         end = closing + 1
         if found is None:
             shown = self.text[self.at : end] if end - self.at <= LONGEST_ATOM else "[…]"
-            help_ = "write an atom in brackets as `[NH4+]` or `[Fe+3]`"
-            return self._fault(f"`{shown}` is no atom", self.at, end, help_)
+            example = "write an atom in brackets as `[NH4+]` or `[Fe+3]`"
+            return self._fault(f"`{shown}` is no atom", self.at, end, example)
         isotope, written, count, charge = found.group("isotope", "symbol", "hydrogens", "charge")
         symbol = written.capitalize()
         if symbol not in ELEMENTS or symbol in ("D", "T"):

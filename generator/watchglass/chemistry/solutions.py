@@ -187,10 +187,13 @@ def solute_units(solid: Formula, solute: Formula) -> Fraction | None:
         How many; 1 where they are the same; None where the solid is not the solute and water, so
         that no mass is worked out for what may be another substance.
     """
+    if solid.charge == solute.charge and solid.composition == solute.composition:
+        return Fraction(1)
     atoms, units = dict(solid.composition), dict(solute.composition)
     marking = next((symbol for symbol in units if symbol not in ("H", "O")), None)
-    if marking is None:
-        return Fraction(1) if atoms == units and solid.charge == solute.charge else None
+    if marking is None or "·" not in solid.text:
+        # By atoms alone NaOH is half Na2O and half water; only a formula with a dot is a hydrate.
+        return None
     number = Fraction(atoms.get(marking, 0)) / units[marking]
     if number <= 0 or solid.charge != solute.charge * number:
         return None

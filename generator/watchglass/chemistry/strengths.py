@@ -95,8 +95,8 @@ class Known:
 def mass_concentration(strength: Strength, known: Known) -> MassConcentration | Needs:
     """Express a strength as mass of solute over volume of solution.
 
-    >>> mass_concentration(MassFraction(0.26), Known(density=1197.2))
-    MassConcentration(value=311.272)
+    >>> mass_concentration(MassFraction(0.25), Known(density=1200.0))
+    MassConcentration(value=300.0)
     """
     match strength:
         case MassConcentration():

@@ -50,16 +50,19 @@ class InlineReader:
             return ()
         return read_passage(prose, self)
 
-    def acts(self, start: int, end: int) -> tuple[syntax.Act, ...] | None:
-        """Read the mark whose braces stand from `start` to `end`; None beyond the bound."""
-        if self.marks >= MAX_MARKS:
-            if not self.too_many:
-                self.too_many = True
-                place = self.source.span(start, end)
-                self.findings.append(messages.too_many_marks(place, MAX_MARKS))
-            return None
+    def has_room(self, mark: Span) -> bool:
+        """Tell whether one more mark may be read; report the first that may not."""
+        if self.marks < MAX_MARKS:
+            return True
+        if not self.too_many:
+            self.too_many = True
+            self.findings.append(messages.too_many_marks(mark, MAX_MARKS))
+        return False
+
+    def acts(self, mark: Span) -> tuple[syntax.Act, ...]:
+        """Read a mark, braces included in its span."""
         self.marks += 1
-        acts, findings = self.parse_mark(self.source, start + 1, end - 1)
+        acts, findings = self.parse_mark(self.source, mark.start + 1, mark.end - 1)
         self.findings.extend(findings)
         return acts
 

@@ -217,7 +217,7 @@ class _Passage:
     def link(self, opener: Opener, at: int, tail: Tail) -> int:
         children, depth = self.build(opener.index + 1, opener.run)
         if self.too_deep(depth + 1, opener.start, tail.end):
-            return self.plain(at, at + 1)
+            return self.give_up(at)
         del self.items[opener.index :]
         span = self.span(opener.start, tail.end)
         if opener.image:
@@ -233,21 +233,27 @@ class _Passage:
 
     def words(self, opener: Opener, at: int, end: int) -> int:
         """Close the words of a mark that ends at `end`."""
+        mark = self.span(at + 1, end)
+        if not self.reader.has_room(mark):
+            return self.plain(at, at + 1)
         children, depth = self.build(opener.index + 1, opener.run)
         start = opener.after - 1
         if self.too_deep(depth + 1, start, end):
-            return self.plain(at, at + 1)
+            return self.give_up(at)
         children = self.reader.take_back(children, opener.findings, "words")
-        mark = self.span(at + 1, end)
-        acts = self.reader.acts(mark.start, mark.end)
-        if acts is None:
-            return self.plain(at, at + 1)
+        acts = self.reader.acts(mark)
         del self.items[opener.index :]
         if opener.image:
             self.items.append((opener.start, start))
         marked = syntax.Marked(children, acts, mark, self.span(start, end))
         self.items.append(Built(marked, depth + 1))
         return end
+
+    def give_up(self, at: int) -> int:
+        """Leave a bracket plain that closes too deep a nest, and with it all those around."""
+        self.brackets.clear()
+        self.link_floor = 0
+        return self.plain(at, at + 1)
 
     # -- braces --------------------------------------------------------------------------------
 
@@ -257,10 +263,9 @@ class _Passage:
             self.report_open(at)
             return self.plain(at, at + 1)
         span = self.span(at, found.end())
-        acts = self.reader.acts(span.start, span.end)
-        if acts is None:
+        if not self.reader.has_room(span):
             return self.plain(at, found.end())
-        self.items.append(syntax.Marked(None, acts, span, span))
+        self.items.append(syntax.Marked(None, self.reader.acts(span), span, span))
         return found.end()
 
     def report_open(self, at: int) -> None:

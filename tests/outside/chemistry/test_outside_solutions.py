@@ -1,0 +1,296 @@
+"""Density tables, labels of concentrated reagents, and preparations."""
+
+from __future__ import annotations
+
+from typing import Any
+
+import pytest
+
+from outside.published import cases, kinds
+from outside.tolerances import within, wrong
+from watchglass.chemistry.formulas import Formula, parse_formula
+from watchglass.chemistry.solutions import (
+    Portions,
+    dilute_by_mass,
+    solid_to_weigh,
+    solute_amount,
+    solute_mass,
+    solute_units,
+    stock_volume,
+    strength_after_dilution,
+)
+from watchglass.chemistry.stoichiometry import (
+    mass_of_amount,
+    relative_difference,
+    volume_of_amount,
+)
+from watchglass.chemistry.strengths import (
+    AmountConcentration,
+    Known,
+    MassConcentration,
+    MassFraction,
+    Molality,
+    amount_concentration,
+    mass_concentration,
+    mass_fraction,
+    molality,
+)
+
+#: Litres and millilitres in the files, cubic metres here.
+ML = 1e-6
+G = 1e-3
+
+
+def formula(text: str) -> Formula:
+    read = parse_formula(text)
+    assert isinstance(read, Formula)
+    return read
+
+
+def molar_mass(text: str) -> float:
+    mass = formula(text).molar_mass_si
+    assert mass is not None
+    return mass
+
+
+def known(inputs: dict[str, Any], key: str = "density_g_per_mL") -> Known:
+    return Known(molar_mass=molar_mass(inputs["formula"]), density=inputs[key] * 1e3)
+
+
+def molarity(percent: float, about: Known) -> float:
+    """Express a percentage by mass as mol/L."""
+    found = amount_concentration(MassFraction(percent / 100), about)
+    assert isinstance(found, AmountConcentration)
+    return found.value * 1e-3
+
+
+def test_every_kind_of_case_is_tested_here() -> None:
+    assert kinds("solutions.json") == {
+        "table_point",
+        "label_to_molarity",
+        "label_inconsistent",
+        "prepare:dilute_stock",
+        "prepare:final_concentration",
+        "prepare:solute_mass_for_solution",
+        "prepare:percent_dilution_by_mass",
+        "prepare:mass_percent_of_impure_solid",
+        "prepare:solute_mass_in_volume",
+        "prepare:weigh_hydrate",
+        "prepare:dilute_concentrated",
+        "prepare:percent_basis",
+        "prepare:saturated_brine",
+    }
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "table_point"))
+def test_percentage_becomes_the_tabulated_molarity(case: dict[str, Any]) -> None:
+    about = known(case["inputs"] | case["expected"])
+    found = molarity(case["inputs"]["mass_percent"], about)
+
+    tolerance = case["tolerance"]["molarity_from_percent_and_density"]
+    assert within(found, case["expected"]["molarity_mol_per_L"], tolerance)
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "table_point"))
+def test_tabulated_molarity_becomes_the_percentage(case: dict[str, Any]) -> None:
+    about = known(case["inputs"] | case["expected"])
+    concentration = AmountConcentration(case["expected"]["molarity_mol_per_L"] * 1e3)
+    found = mass_fraction(concentration, about)
+
+    assert isinstance(found, MassFraction)
+    tolerance = case["tolerance"]["percent_from_molarity_and_density"]
+    assert within(found.value * 100, case["inputs"]["mass_percent"], tolerance)
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "table_point"))
+def test_percentage_becomes_the_tabulated_molality(case: dict[str, Any]) -> None:
+    fraction = MassFraction(case["inputs"]["mass_percent"] / 100)
+    found = molality(fraction, Known(molar_mass=molar_mass(case["inputs"]["formula"])))
+
+    assert isinstance(found, Molality)
+    expected = case["expected"]["molality_mol_per_kg"]
+    assert within(found.value, expected, case["tolerance"]["molality"])
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "table_point"))
+def test_percentage_becomes_the_tabulated_mass_concentration(case: dict[str, Any]) -> None:
+    fraction = MassFraction(case["inputs"]["mass_percent"] / 100)
+    found = mass_concentration(fraction, known(case["inputs"] | case["expected"]))
+
+    assert isinstance(found, MassConcentration)
+    # No tolerance is stated; the table has five figures.
+    assert within(found.value, case["expected"]["mass_concentration_g_per_L"], {"rel": 1e-4})
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "label_to_molarity"))
+def test_label_of_a_concentrated_reagent_gives_its_molarity(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    about = known(inputs)
+    found = molarity(inputs["mass_percent"], about)
+    assert about.molar_mass is not None
+    assert about.density is not None
+    volume = volume_of_amount(
+        amount=1.0,
+        density=about.density,
+        molar_mass=about.molar_mass,
+        purity=inputs["mass_percent"] / 100,
+    )
+    computed = {
+        "molarity_mol_per_L": found,
+        "published_mol_per_L": found,
+        "volume_for_1_mol_mL": volume / ML,
+    }
+
+    assert case["expected"].keys() <= computed.keys()
+    assert wrong(case, computed) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "label_inconsistent"))
+def test_label_that_disagrees_with_itself_shows_by_how_much(case: dict[str, Any]) -> None:
+    found = molarity(case["inputs"]["mass_percent"], known(case["inputs"]))
+    difference = relative_difference(stated=case["inputs"]["stated_mol_per_L"], computed=found)
+
+    assert wrong(case, {"molarity_mol_per_L": found, "relative_difference": difference}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:dilute_stock"))
+def test_stock_is_diluted(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    volume = stock_volume(
+        stock=inputs["stock_mol_per_L"] * 1e3,
+        target=inputs["target_mol_per_L"] * 1e3,
+        volume=inputs["target_volume_mL"] * ML,
+    )
+
+    assert isinstance(volume, float)
+    assert wrong(case, {"stock_volume_mL": volume / ML}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:final_concentration"))
+def test_diluted_stock_has_its_final_concentration(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    found = strength_after_dilution(
+        stock=inputs["stock_mol_per_L"],
+        volume=inputs["stock_volume_mL"] * ML,
+        made_up_to=inputs["final_volume_mL"] * ML,
+    )
+
+    assert wrong(case, {"final_mol_per_L": found}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:solute_mass_for_solution"))
+def test_solute_is_weighed_for_a_solution(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    amount = solute_amount(
+        concentration=inputs["target_mol_per_L"] * 1e3, volume=inputs["volume_mL"] * ML
+    )
+    mass = mass_of_amount(amount=amount, molar_mass=molar_mass(inputs["formula"]))
+
+    assert wrong(case, {"solute_mass_g": mass / G}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:percent_dilution_by_mass"))
+def test_stock_is_diluted_by_mass(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    found = dilute_by_mass(
+        stock=inputs["stock_mass_percent"] / 100,
+        target=inputs["target_mass_percent"] / 100,
+        mass=inputs["target_mass_g"] * G,
+    )
+
+    assert isinstance(found, Portions)
+    assert wrong(case, {"stock_mass_g": found.stock / G, "water_mass_g": found.diluent / G}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:mass_percent_of_impure_solid"))
+def test_impure_solid_is_weighed_for_a_percentage(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    solute = solute_mass(
+        fraction=inputs["target_mass_percent"] / 100,
+        density=inputs["density_g_per_mL"] * 1e3,
+        volume=inputs["volume_mL"] * ML,
+    )
+    mass = molar_mass(inputs["formula"])
+    solid = solid_to_weigh(
+        amount=solute / mass, molar_mass=mass, purity=inputs["purity_mass_percent"] / 100
+    )
+
+    assert wrong(case, {"solid_mass_g": solid / G}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:solute_mass_in_volume"))
+def test_volume_of_a_concentrated_reagent_holds_its_solute(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    solute = solute_mass(
+        fraction=inputs["mass_percent"] / 100,
+        density=inputs["density_g_per_mL"] * 1e3,
+        volume=inputs["volume_mL"] * ML,
+    )
+
+    assert wrong(case, {"solute_mass_g": solute / G}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:weigh_hydrate"))
+def test_hydrate_is_weighed_with_its_water(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    solute = inputs.get("solute", inputs["formula"])
+    units = solute_units(formula(inputs["formula"]), formula(solute))
+    assert units is not None
+    amount = solute_amount(
+        concentration=inputs["target_mol_per_L"] * 1e3, volume=inputs["volume_mL"] * ML
+    )
+    solid = solid_to_weigh(
+        amount=amount, molar_mass=molar_mass(inputs["formula"]), solute_units=units
+    )
+    anhydrous = mass_of_amount(amount=amount, molar_mass=molar_mass(solute))
+
+    computed = {"solid_mass_g": solid / G, "anhydrous_equivalent_g": anhydrous / G}
+    assert wrong(case, computed) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:dilute_concentrated"))
+def test_concentrated_acid_is_diluted_by_volume(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    stock = molarity(inputs["stock_mass_percent"], known(inputs, "stock_density_g_per_mL"))
+    volume = stock_volume(
+        stock=stock, target=inputs["target_mol_per_L"], volume=inputs["volume_mL"] * ML
+    )
+
+    assert isinstance(volume, float)
+    assert wrong(case, {"stock_volume_mL": volume / ML}) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:percent_basis"))
+def test_percentage_in_volume_and_by_mass_differ(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    about = known(inputs, "density_w_w_g_per_mL")
+    in_volume = MassConcentration(inputs["percent"] * 10)
+    by_mass = mass_concentration(MassFraction(inputs["percent"] / 100), about)
+    assert isinstance(by_mass, MassConcentration)
+    molarities = [amount_concentration(strength, about) for strength in (in_volume, by_mass)]
+    values = [m.value * 1e-3 for m in molarities if isinstance(m, AmountConcentration)]
+    volume = inputs["volume_mL"] * ML
+    computed = {
+        "w_v_solute_mass_g": in_volume.value * volume / G,
+        "w_w_solute_mass_g": by_mass.value * volume / G,
+        "w_v_molarity": values[0],
+        "w_w_molarity": values[1],
+    }
+
+    assert case["expected"].keys() == computed.keys()
+    assert wrong(case, computed) == {}
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "prepare:saturated_brine"))
+def test_saturated_brine_holds_salt_and_water(case: dict[str, Any]) -> None:
+    inputs = case["inputs"]
+    volume, density = inputs["volume_mL"] * ML, inputs["density_g_per_mL"] * 1e3
+    salt = solute_mass(fraction=inputs["mass_percent"] / 100, density=density, volume=volume)
+    computed = {
+        "solute_mass_g": salt / G,
+        "molarity_mol_per_L": molarity(inputs["mass_percent"], known(inputs)),
+        "water_mass_g": (density * volume - salt) / G,
+    }
+
+    assert case["expected"].keys() == computed.keys()
+    assert wrong(case, computed) == {}
