@@ -2,7 +2,7 @@
 
     python tests/bench/fuzz_positions.py [--marks 100000] [--seed 1]
 
-Run by hand: it takes about a minute. The same laws run on fewer marks with the tests.
+Run by hand: it takes half a minute. The same laws run on fewer marks with the tests.
 """
 
 from __future__ import annotations

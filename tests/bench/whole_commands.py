@@ -61,12 +61,17 @@ def main() -> None:
             ("watchglass --help", seconds([TOOL, "--help"], cwd=work)),
             ("check one file", seconds([TOOL, "check", str(SAMPLES[-1])], cwd=work)),
             (f"check {number} procedures", seconds([TOOL, "check", str(many)], cwd=work, runs=3)),
-            ("build the demo, both editions", seconds([TOOL, "build", str(site)], cwd=work, runs=3)),
+            (
+                "build the demo, both editions",
+                seconds([TOOL, "build", str(site)], cwd=work, runs=3),
+            ),
         ]
         for name, taken in rows:
             sys.stdout.write(f"{name:34} {taken * 1e3:9.1f} ms {taken / bare:9.1f} x bare\n")
         each = rows[3][1] / number
-        sys.stdout.write(f"{'one of many procedures':34} {each * 1e3:9.2f} ms {each / bare:9.2f} x bare\n")
+        sys.stdout.write(
+            f"{'one of many procedures':34} {each * 1e3:9.2f} ms {each / bare:9.2f} x bare\n"
+        )
     finally:
         shutil.rmtree(work)
 

@@ -7,8 +7,8 @@ import json
 import pytest
 
 from tools.name_index import make
-from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.base.spans import Source
+from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.decode import decode_substances
 from watchglass.catalogue.substances import Substance
 from watchglass.catalogue.ware import decode_glassware, decode_indicator
@@ -20,7 +20,9 @@ SOURCES = substance_sources()
 def decoded(source: Source) -> tuple[tuple[Substance, ...], list[str]]:
     node, findings = read_yaml(source)
     substances, more = decode_substances(node)
-    return substances, [f"{f.code.number} {f.span.position().line}: {f.message}" for f in (*findings, *more)]
+    return substances, [
+        f"{f.code.number} {f.span.position().line}: {f.message}" for f in (*findings, *more)
+    ]
 
 
 ALL = tuple(substance for source in SOURCES for substance in decoded(source)[0])

@@ -154,6 +154,10 @@ def test_balance_with_a_species_that_takes_no_part_is_impossible() -> None:
     assert balance(formulas("H2", "O2", "He"), formulas("H2O")) == Impossible()
 
 
+def test_balance_runs_the_same_with_its_sides_exchanged() -> None:
+    assert balance(formulas("H2O"), formulas("H2", "O2")) == Balanced((2, 2, 1))
+
+
 def test_balance_with_a_species_on_the_wrong_side_is_impossible() -> None:
     assert balance(formulas("H2", "H2O"), formulas("O2")) == Impossible()
 
@@ -190,6 +194,13 @@ def test_suggestion_names_a_forgotten_reactant_on_the_left() -> None:
     assert found.lacking == Lacking("left", formula("HCl"), 1)
     assert found.only_right == ("Cl",)
     assert found.only_left == ()
+
+
+def test_suggestion_offers_no_part_of_a_molecule() -> None:
+    # Half an O2 would do, but a molecule is whole.
+    found = suggest(terms((1, "H2O2")), terms((1, "H2O")))
+
+    assert found.lacking is None
 
 
 def test_suggestion_never_mends_a_charge_with_electrons() -> None:

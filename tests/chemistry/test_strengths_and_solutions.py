@@ -73,6 +73,8 @@ def formula(text: str) -> Formula:
         (VolumeFraction(0.5), MassConcentration, (Need.SOLUTE_DENSITY,)),
         (VolumeFraction(0.5), MassFraction, (Need.SOLUTE_DENSITY, Need.DENSITY)),
         (VolumeFraction(0.5), AmountConcentration, (Need.MOLAR_MASS, Need.SOLUTE_DENSITY)),
+        (VolumeFraction(0.5), Molality, (Need.MOLAR_MASS, Need.SOLUTE_DENSITY, Need.DENSITY)),
+        (MassConcentration(10.0), VolumeFraction, (Need.SOLUTE_DENSITY,)),
         (Molality(1.0), MassFraction, (Need.MOLAR_MASS,)),
         (Molality(1.0), MassConcentration, (Need.MOLAR_MASS, Need.DENSITY)),
     ],
@@ -116,6 +118,24 @@ def test_strength_to_another_measure_and_back_is_the_same(
 
     assert isinstance(back, MassFraction)
     assert back.value == pytest.approx(fraction)
+
+
+@pytest.mark.parametrize(
+    ("strength", "target", "known", "needs"),
+    [
+        (Molality(1.0), MassConcentration, Known(density=1000.0), (Need.MOLAR_MASS,)),
+        (Molality(1.0), MassConcentration, Known(molar_mass=0.1), (Need.DENSITY,)),
+        (VolumeFraction(0.5), MassFraction, Known(density=1000.0), (Need.SOLUTE_DENSITY,)),
+        (VolumeFraction(0.5), MassFraction, Known(solute_density=800.0), (Need.DENSITY,)),
+        (MassFraction(0.1), VolumeFraction, Known(solute_density=800.0), (Need.DENSITY,)),
+        (MassFraction(0.1), AmountConcentration, Known(molar_mass=0.1), (Need.DENSITY,)),
+        (MassFraction(0.1), AmountConcentration, Known(density=1000.0), (Need.MOLAR_MASS,)),
+    ],
+)
+def test_conversion_names_only_what_it_lacks(
+    strength: Strength, target: type[Strength], known: Known, needs: tuple[Need, ...]
+) -> None:
+    assert CONVERSIONS[target](strength, known) == Needs(needs)
 
 
 def test_pure_substance_has_no_molality() -> None:
@@ -170,6 +190,9 @@ def test_water_weakens_a_mixture() -> None:
         ("NaOH", "Na2O", None),
         ("Na2CO3", "Na2CO3·H2O", None),
         ("H2O2", "H2O", None),
+        ("KCl·H2O", "NaCl", None),
+        ("NaCl·H2O2", "NaCl", None),
+        ("H2O2·H2O", "H2O2", None),
     ],
 )
 def test_units_of_solute_are_counted_only_in_its_hydrates(

@@ -89,7 +89,7 @@ class Maker:
         if draw < 0.3 or depth > (1 if self.common else 3):
             return self.paragraph()
         if draw < 0.5:
-            return self.list(depth)
+            return self.items(depth)
         if draw < 0.65:
             quoted = self.block(depth + 1)
             sign = self.chance.choice(("> ",) if self.common else ("> ", "> ", ">", ">\t"))
@@ -115,7 +115,7 @@ class Maker:
         end = [":::"] if self.chance.random() < 0.93 else []
         return [f":::{kind}", *self.block(depth + 1), *end]
 
-    def list(self, depth: int) -> list[str]:
+    def items(self, depth: int) -> list[str]:
         chance = self.chance
         signs = ("- ", "* ", "1. ", "12) ")
         sign = chance.choice(signs if self.common else (*signs, "-   ", "-\t"))

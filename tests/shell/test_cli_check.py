@@ -128,7 +128,7 @@ def test_paths_are_handed_on_as_given(
         ("set/laboratory.yml", "is no procedure: its name does not end in .md\n"),
     ],
 )
-def test_unfit_path_is_refused_with_what_would_do(  # noqa: PLR0917 - fixtures
+def test_unfit_path_is_refused_with_what_would_do(
     monkeypatch: pytest.MonkeyPatch,
     capsys: pytest.CaptureFixture[str],
     tmp_path: Path,

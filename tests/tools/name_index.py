@@ -22,7 +22,9 @@ def make() -> str:
         decoded, more = decode_substances(node)
         for finding in (*findings, *more):
             place = finding.span.position()
-            sys.stderr.write(f"{source.name}:{place.line}: {finding.code.number} {finding.message}\n")
+            sys.stderr.write(
+                f"{source.name}:{place.line}: {finding.code.number} {finding.message}\n"
+            )
         substances += decoded
     index, findings = name_index(substances)
     for finding in findings:

@@ -8,8 +8,7 @@ from __future__ import annotations
 
 import re
 
-# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
-# meet none of these.
+# Expressions are compiled where they are used, and `re` keeps them: start-up is felt.
 _FORM = r"([1-9][0-9]{1,6})-([0-9]{2})-([0-9])"
 
 

@@ -30,8 +30,7 @@ if TYPE_CHECKING:
 LONGEST = 2000
 MOST_SPECIES = 20
 
-# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
-# meet none of these.
+# Expressions are compiled where they are used, and `re` keeps them: start-up is felt.
 _ARROW = r"(?<!\S)(->|→|<=>|⇌)(?!\S)"
 _LIKE_ARROW = r"<?[-=]*[-=]>|<-+>?|[→⇌⇒⟶⟹⇄⇋↔]|(?<!\S)=+(?!\S)"
 _PLUS = r"(?<!\S)\+(?!\S)"
@@ -270,8 +269,6 @@ def balance(left: Sequence[Formula], right: Sequence[Formula]) -> Balanced | Not
         feasible = positive_solution(matrix, len(left) + len(right))
         return NotUnique(len(basis)) if feasible else Impossible()
     vector = basis[0]
-    if all(number < 0 for number in vector):
-        vector = tuple(-number for number in vector)
     if any(number <= 0 for number in vector):
         return Impossible()
     return Balanced(vector)

@@ -20,11 +20,11 @@ LONGEST = 400
 DEEPEST = 8
 MOST_DIGITS = 4
 
-# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
-# meet none of these.
+# Expressions are compiled where they are used, and `re` keeps them: start-up is felt.
 _SIGNS = r"([A-Z][a-z]?)([0-9]*)|([(\[])|([)\]])([0-9]*)"
 _MULTIPLIER = r"[0-9]+(?:\.[0-9]+)?"
 _CHARGE = r"([1-9][0-9]?)?([+-])"
+_BARE_CHARGE = r"[+-]+[0-9]?"
 _PARTNER = {")": "(", "]": "["}
 
 
@@ -193,6 +193,8 @@ def _unreadable(text: str, at: int, end: int) -> FormulaFault:
         while stop < end and "0" <= text[stop] <= "9":
             stop += 1
         return FormulaFault(f"`{text[at:stop]}` has nothing before it to count", at, stop)
+    if re.compile(_BARE_CHARGE).fullmatch(text, at) and at:
+        return FormulaFault(f"`{text}` has a charge without `^`", 0, len(text))
     if "a" <= sign <= "z":
         while stop < end and "a" <= text[stop] <= "z":
             stop += 1

@@ -31,8 +31,7 @@ __all__ = [
     "parse_species",
 ]
 
-# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
-# meet none of these.
+# Expressions are compiled where they are used, and `re` keeps them: start-up is felt.
 _PARTS = r"([A-Z][a-z]?|e)|([(\[])|([)\]])|(·)|\^(.+)|(?<![·0-9.])(?!^)([0-9]+)|([0-9.]+)"
 
 

@@ -23,8 +23,7 @@ LONGEST = 600
 DEEPEST = 100
 LONGEST_ATOM = 20
 
-# Expressions are compiled where they are used (`re` keeps them): start-up is felt, and most runs
-# meet none of these.
+# Expressions are compiled where they are used, and `re` keeps them: start-up is felt.
 _PLAIN = r"Cl|Br|[BCNOPSFI]|[bcnops]"
 _BRACKET = (
     r"\[(?P<isotope>[0-9]+)?(?P<symbol>[A-Z][a-z]?|se|as|[bcnops])(?:@@?)?"

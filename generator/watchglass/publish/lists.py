@@ -63,5 +63,5 @@ def _side_words(reaction: Reaction, *, formulas: bool) -> tuple[m.Words, ...]:
 def _species(species: Species, *, formulas: bool) -> tuple[m.Words, ...]:
     is_formula = species.formula is not None and species.written == species.formula.text
     if species.formula is not None and (formulas or is_formula):
-        return formula_words(species.formula.text)
+        return formula_words(species.formula)
     return (m.Run(species.substance.name if species.substance else species.written),)

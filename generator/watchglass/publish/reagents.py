@@ -106,7 +106,7 @@ def _substance(composition: model.Composition) -> Substance | None:
 
 
 def _formula(substance: Substance | None) -> tuple[m.Words, ...]:
-    return formula_words(substance.formula.text) if substance and substance.formula else ()
+    return formula_words(substance.formula) if substance and substance.formula else ()
 
 
 def _molar_mass(substance: Substance | None) -> str:
@@ -175,13 +175,11 @@ def _portions(used: Usage | None) -> str:
 
 
 def _equivalents(found: list[Role], *, several: bool) -> tuple[tuple[str, str, bool], ...]:
+    """Give what a material is to each reaction whose limiting reactant can be told."""
     return tuple(
-        (
-            role.reaction if several else "",
-            shown(role.equivalents, role.figures) if role.equivalents is not None else "unknown",
-            role.limiting,
-        )
+        (role.reaction if several else "", shown(role.equivalents, role.figures), role.limiting)
         for role in found
+        if role.equivalents is not None
     )
 
 

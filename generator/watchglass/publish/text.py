@@ -6,6 +6,7 @@ import re
 from typing import TYPE_CHECKING
 
 from watchglass.base.quantities import Kind
+from watchglass.chemistry.formulas import PartKind
 from watchglass.publish.model import Lowered, Raised, Run
 
 if TYPE_CHECKING:
@@ -14,8 +15,6 @@ if TYPE_CHECKING:
     from watchglass.publish.model import Words
 
 NBSP = "\N{NO-BREAK SPACE}"
-_MULTIPLIER = re.compile(r"\d+(?:\.\d+)?")
-_COUNTS = re.compile(r"\d+|\D+")
 _JOIN = "\N{WORD JOINER}"
 _POWER = re.compile(r"\^\(?(-?\d+)\)?|([⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+)")
 _PLAIN = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
@@ -102,31 +101,18 @@ def quantity_words(quantity: Quantity) -> tuple[Words, ...]:
     return joined(words)
 
 
-def formula_words(formula: Formula | str) -> tuple[Words, ...]:
-    """Set a formula: counts lowered, charge raised, the dot of a hydrate between thin spaces."""
-    text = formula if isinstance(formula, str) else formula.text
+def formula_words(formula: Formula) -> tuple[Words, ...]:
+    """Set a formula: counts lowered, charge raised, all else on the line."""
     words: list[Words] = []
-    body, caret, charge = text.partition("^")
-    for index, unit in enumerate(body.split("·")):
-        if index:
-            words.append(Run("·"))
-        words += _formula_unit(unit, hydrate=index > 0)
-    if caret:
-        words.append(Raised(charge.replace("-", "−")))
+    for kind, text in formula.parts:
+        match kind:
+            case PartKind.COUNT:
+                words.append(Lowered(text))
+            case PartKind.CHARGE:
+                words.append(Raised(text.replace("-", "−")))
+            case _:
+                words.append(Run(text))
     return joined(words)
-
-
-def _formula_unit(text: str, *, hydrate: bool) -> list[Words]:
-    """Set one unit of a formula; the number before a hydrate's unit stays on the line."""
-    words: list[Words] = []
-    if found := _MULTIPLIER.match(text) if hydrate else None:
-        words.append(Run(found[0]))
-        text = text[found.end() :]
-    words += [
-        Lowered(found[0]) if found[0].isdigit() else Run(found[0])
-        for found in _COUNTS.finditer(text)
-    ]
-    return words
 
 
 def joined(words: list[Words] | tuple[Words, ...]) -> tuple[Words, ...]:

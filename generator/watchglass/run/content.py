@@ -12,6 +12,11 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import dimensions as dim
 from watchglass.base.figures import CATALOGUE_FIGURES
+from watchglass.chemistry.stoichiometry import (
+    amount_in_solution,
+    amount_of_mass,
+    mass_of_amount,
+)
 from watchglass.resolve import model
 
 if TYPE_CHECKING:
@@ -82,17 +87,19 @@ def _one(found: Content | Missing) -> tuple[Content, ...] | Missing:
 
 
 def _of_mass(substance: Substance, mass: float, figures: int) -> Content | Missing:
-    molar_mass = substance.molar_mass
+    molar_mass = substance.formula.molar_mass_si if substance.formula else None
     if molar_mass is None:
         return Missing("formula", substance)
-    return Content(substance, mass / (molar_mass * 1e-3), mass, min(figures, CATALOGUE_FIGURES))
+    moles = amount_of_mass(mass=mass, molar_mass=molar_mass)
+    return Content(substance, moles, mass, min(figures, CATALOGUE_FIGURES))
 
 
 def _of_moles(substance: Substance, moles: float, figures: int) -> Content | Missing:
-    molar_mass = substance.molar_mass
+    molar_mass = substance.formula.molar_mass_si if substance.formula else None
     if molar_mass is None:
         return Missing("formula", substance)
-    return Content(substance, moles, moles * molar_mass * 1e-3, min(figures, CATALOGUE_FIGURES))
+    mass = mass_of_amount(amount=moles, molar_mass=molar_mass)
+    return Content(substance, moles, mass, min(figures, CATALOGUE_FIGURES))
 
 
 def _of_volume(substance: Substance, volume: float, figures: int) -> Content | Missing:
@@ -124,7 +131,7 @@ def _solution(
         return _of_moles(solute, value, figures)
     if dimension == dim.VOLUME:
         if basis == dim.CONCENTRATION:
-            return _of_moles(solute, by * value, shown)
+            return _of_moles(solute, amount_in_solution(volume=value, concentration=by), shown)
         if basis == dim.MASS_CONCENTRATION:
             return _of_mass(solute, by * value, shown)
         if basis == dim.VOLUME_FRACTION:

@@ -5,6 +5,7 @@ from __future__ import annotations
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
+from watchglass.chemistry.stoichiometry import Reactant, equivalents, limit
 from watchglass.run.content import Content, Missing, contents
 from watchglass.run.usage import total_of
 
@@ -23,8 +24,7 @@ class Role(NamedTuple):
         material: The material's local name.
         substance: The substance's key.
         moles: Amount of substance taken over all passes, mol.
-        equivalents: Amount over stoichiometric number, relative to the limiting reactant; None
-            where no limiting reactant can be told.
+        equivalents: Moles over moles of the limiting reactant; None where none can be told.
         limiting: Whether it limits.
         figures: Figures the equivalents may show.
     """
@@ -66,45 +66,47 @@ def roles(procedure: model.Procedure, used: Mapping[str, Usage]) -> tuple[Role, 
     return tuple(found)
 
 
-class _Reactant(NamedTuple):
-    material: str
-    content: Content
-    turns: float  # amount over stoichiometric number, mol
-
-
 def _of_reaction(
     reaction: model.Reaction, procedure: model.Procedure, used: Mapping[str, Usage]
 ) -> list[Role]:
-    reactants: list[_Reactant] = []
-    whole = True
-    for species in reaction.left:
-        taken = used.get(species.material)
-        if taken is not None and taken.as_needed:
-            continue
-        content = _held(species, procedure, used)
-        if content is None:
-            whole = False
-        else:
-            turns = content.moles / float(species.coefficient)
-            reactants.append(_Reactant(species.material, content, turns))
-    declared = next((r for r in reactants if r.material == reaction.limiting), None)
-    first = min(reactants, key=lambda r: r.turns) if reactants and whole else None
-    limit = declared or first
+    """Compare what is taken of each reactant; one taken as needed is in excess by design."""
+    needed = {name for name, usage in used.items() if usage.as_needed}
+    species = [s for s in reaction.left if s.material not in needed]
+    held = [_held(s, procedure, used) for s in species]
+    reactants = [
+        Reactant(s.coefficient, content.moles if content else None)
+        for s, content in zip(species, held, strict=True)
+    ]
+    known = None if None in held else limit(reactants)
+    index = known.indices[0] if known else None
+    for place, s in enumerate(species):
+        if reaction.limiting and s.material == reaction.limiting and held[place]:
+            index = place
+    reference = held[index] if index is not None else None
     return [
         Role(
             reaction.name,
-            r.material,
-            r.content.substance.key,
-            r.content.moles,
-            r.turns / limit.turns if limit and limit.turns > 0 else None,
-            limit is not None
-            and len(reactants) > 1
-            and r.turns <= limit.turns * (1 + 1e-9)
-            and (declared is None or r is declared),
-            min(r.content.figures, limit.content.figures) if limit else r.content.figures,
+            s.material,
+            content.substance.key,
+            content.moles,
+            _equivalents(content, reference),
+            limiting=len(reactants) > 1
+            and (
+                place == index
+                or (not reaction.limiting and known is not None and place in known.indices)
+            ),
+            figures=min(content.figures, reference.figures) if reference else content.figures,
         )
-        for r in reactants
+        for place, (s, content) in enumerate(zip(species, held, strict=True))
+        if content is not None
     ]
+
+
+def _equivalents(content: Content, reference: Content | None) -> float | None:
+    """Moles over moles of the limiting reactant, as reagent tables print them."""
+    if reference is None or reference.moles <= 0:
+        return None
+    return equivalents(amount=content.moles, limiting_amount=reference.moles)
 
 
 def _held(
