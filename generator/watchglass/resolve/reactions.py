@@ -12,11 +12,11 @@ from watchglass.base.yaml import YamlText
 from watchglass.catalogue import texts
 from watchglass.chemistry.equations import (
     EquationFault,
-    balance,
     check_balance,
     split_equation,
 )
-from watchglass.chemistry.formulas import Formula, parse_formula
+from watchglass.chemistry.formulas import Formula, parse_species
+from watchglass.chemistry.suggestions import suggest
 from watchglass.resolve.model import (
     Material,
     Mixture,
@@ -37,7 +37,7 @@ if TYPE_CHECKING:
     from watchglass.base.yaml import YamlEntry
     from watchglass.catalogue.catalogue import Catalogue
     from watchglass.catalogue.substances import Substance
-    from watchglass.chemistry.equations import Term
+    from watchglass.chemistry.equations import Term, Terms
 
 FIELDS: dict[str, Field] = {
     "equation": Field(Shape.TEXT, "the equation, by catalogue names or formulas", required=True),
@@ -123,12 +123,13 @@ class ReactionReader:
         if substance is not None:
             holder = self._holder(substance)
             return Species(term.coefficient, term.text, substance.formula, substance, holder, span)
-        formula = parse_formula(term.text)
+        formula = parse_species(term.text)
         if isinstance(formula, Formula):
             return self._by_formula(term, formula, span)
         near = did_you_mean(term.text, (*self.materials, *self.catalogue.words()))
-        looks_like_formula = term.text[:1].isupper() and any(
-            c.isupper() or c.isdigit() for c in term.text[1:]
+        start = term.text.lstrip("0123456789")
+        looks_like_formula = start[:1].isupper() and any(
+            c.isupper() or c.isdigit() for c in start[1:]
         )
         if looks_like_formula and not near:
             self._add(
@@ -195,23 +196,31 @@ class ReactionReader:
             node.span,
             "the equation does not balance: "
             + _excess(checked.excess_left, checked.charge_excess_left),
-            self._mended(left, right) or "add what is missing, or mend a formula",
+            self._mended(left, right, (terms_left, terms_right)),
         )
         return False
 
-    def _mended(self, left: tuple[Species, ...], right: tuple[Species, ...]) -> str | None:
-        found = balance(
-            [s.formula for s in left if s.formula], [s.formula for s in right if s.formula]
-        )
-        coefficients = getattr(found, "coefficients", None)
-        if coefficients is None:
-            return None
-        words = [
-            f"{count} {species.written}" if count != 1 else species.written
-            for count, species in zip(coefficients, (*left, *right), strict=True)
-        ]
-        sides = " + ".join(words[: len(left)]), " + ".join(words[len(left) :])
-        return f"write `{sides[0]} -> {sides[1]}`"
+    def _mended(
+        self, left: tuple[Species, ...], right: tuple[Species, ...], terms: tuple[Terms, Terms]
+    ) -> str:
+        """Say how the equation might be mended: a forgotten molecule, coefficients, or where to look."""
+        found = suggest(*terms)
+        if found.lacking is not None:
+            side, formula, count = found.lacking.side, found.lacking.formula, found.lacking.count
+            many = f"{count} " if count != 1 else ""
+            return f"add `{many}{formula.text}` on the {side}"
+        if found.coefficients is not None:
+            words = [
+                f"{count} {species.written}" if count != 1 else species.written
+                for count, species in zip(found.coefficients, (*left, *right), strict=True)
+            ]
+            sides = " + ".join(words[: len(left)]), " + ".join(words[len(left) :])
+            return f"write `{sides[0]} -> {sides[1]}`"
+        for elements, here in ((found.only_left, "left"), (found.only_right, "right")):
+            if elements:
+                named = ", ".join(elements)
+                return f"see what becomes of {named}, which stands on the {here} only"
+        return "add what is missing, or mend a formula"
 
     def _limiting(self, record: Record, left: tuple[Species, ...]) -> str:
         node = record.text("limiting")

@@ -17,8 +17,8 @@ Lines and columns count from 1, offsets from 0. All count Unicode code points in
 byte order mark removed and its line ends made `\n`; an `end` is the first place after the span,
 so an empty span has equal ends. `severity` is `error`, `warning` or `note`. Findings are in the
 order of their paths and offsets, repeats are dropped, keys stand in the order shown and none is
-left out. `path` is the name of the source within its set, with forward slashes. Applying a `fix`
-replaces what lies between its ends with `text`.
+left out. `path` begins with the path that `check` was given, with forward slashes. Applying a
+`fix` replaces what lies between its ends with `text`.
 
 `version` rises when a key is taken away or changes its meaning; keys may be added without, so a
 reader should pass over those it does not know. Everything beyond printable ASCII is escaped, so
