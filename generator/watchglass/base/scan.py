@@ -24,6 +24,7 @@ if TYPE_CHECKING:
     from watchglass.base.findings import Code
 
 _DIGITS = re.compile(r"[+\-−]?(?:\d+(?:\.\d+)?|\.\d+)")
+_PRODUCT = re.compile(r"\s*[×x*]\s*\d[\d.]*")
 _POWER = re.compile(r"[eE]([+\-−]?\d+)(?![\w.])|\s*[×x]\s*10(?:\^([+\-−]?\d+)|([⁻⁺]?[⁰¹²³⁴-⁹]+))")
 _ABOUT = re.compile(r"(?:ca\.?|approx\.?|about|[~≈])\s*(?=[\d.+\-−])")
 _BOUND = re.compile(r"(>=|<=|≥|≤|>|<)\s*")
@@ -42,7 +43,8 @@ _WORDS = re.compile(r"([^\W\d_][\w-]*)(?: [^\W\d_][\w-]*)?")
 _LONGEST = 40
 #: No quantity is longer than this many characters; only so much is looked at.
 _WINDOW = 200
-_LARGEST_POWER = 30
+_LARGEST_PRODUCT = re.compile(r"\s*[×x*]\s*\d[\d.]*")
+_POWER = 30
 _SIGNED = frozenset((dim.NUMBER, dim.VOLTAGE, dim.CURRENT, dim.ENERGY, dim.MOLAR_ENERGY))
 
 
@@ -90,6 +92,7 @@ def scan_quantity(
     end: int | None = None,
     *,
     measures: Mapping[str, float | None] | None = None,
+    factor: bool = False,
 ) -> Scan:
     """Read the quantity that begins at an offset.
 
@@ -98,13 +101,14 @@ def scan_quantity(
         at: Where the quantity begins; leading blanks are not skipped.
         end: Where to stop; the end of the text by default.
         measures: Countable measures (`drop`, `spatula tip`) that may stand for a unit.
+        factor: Whether a sign of multiplication may follow, as in an expression.
 
     Returns:
         The quantity and the offset after it (a number without a unit has `measured` false and
         `units.NONE`), the fault, or None where no number begins.
     """
     stop = len(text) if end is None else end
-    found = _scan(text[at : min(stop, at + _WINDOW)], measures)
+    found = _scan(text[at : min(stop, at + _WINDOW)], measures, factor=factor)
     match found:
         case Found(quantity, after, measured):
             return Found(quantity, at + after, measured)
@@ -114,7 +118,7 @@ def scan_quantity(
             return None
 
 
-def _scan(text: str, measures: Mapping[str, float | None] | None) -> Scan:
+def _scan(text: str, measures: Mapping[str, float | None] | None, *, factor: bool) -> Scan:
     """Read the quantity at the start of a text; offsets count from there."""
     at = here = 0
     kind, bound = Kind.EXACT, None
@@ -123,13 +127,13 @@ def _scan(text: str, measures: Mapping[str, float | None] | None) -> Scan:
     elif found := _BOUND.match(text, here):
         kind, here = Kind.BOUND, found.end()
         bound = {"≥": ">=", "≤": "<="}.get(found[1], found[1])
-    number = _number(text, here)
+    number = _number(text, here, factor=factor)
     if not isinstance(number, tuple):
         return number
     value, here = number
     second: Number | None = None
     if kind is Kind.EXACT and (found := _RANGE.match(text, here)):
-        high = _number(text, found.end())
+        high = _number(text, found.end(), factor=factor)
         if isinstance(high, Fault):
             return high
         if high is not None:
@@ -143,7 +147,7 @@ def _scan(text: str, measures: Mapping[str, float | None] | None) -> Scan:
                     f"write `{second.text}–{value.text}`",
                 )
     elif kind is Kind.EXACT and (found := _TOLERANCE.match(text, here)):
-        margin = _number(text, found.end())
+        margin = _number(text, found.end(), factor=factor)
         if not isinstance(margin, tuple):
             return margin or Fault(
                 codes.NUMBER_NOT_READ,
@@ -237,7 +241,7 @@ def unknown_unit(word: str, start: int) -> Fault:
 # ------------------------------------------------------------------------------ numbers
 
 
-def _number(text: str, at: int) -> tuple[Number, int] | Fault | None:
+def _number(text: str, at: int, *, factor: bool) -> tuple[Number, int] | Fault | None:
     if found := _VULGAR.match(text, at):
         return Fault(
             codes.NUMBER_NOT_READ,
@@ -249,7 +253,7 @@ def _number(text: str, at: int) -> tuple[Number, int] | Fault | None:
     found = _DIGITS.match(text, at)
     if found is None:
         return None
-    return _comma_or_groups(text, at, found.end()) or _with_power(text, at, found)
+    return _comma_or_groups(text, at, found.end()) or _with_power(text, at, found, factor=factor)
 
 
 def _comma_or_groups(text: str, at: int, after: int) -> Fault | None:
@@ -277,13 +281,15 @@ def _comma_or_groups(text: str, at: int, after: int) -> Fault | None:
     return None
 
 
-def _with_power(text: str, at: int, found: re.Match[str]) -> tuple[Number, int] | Fault:
+def _with_power(
+    text: str, at: int, found: re.Match[str], *, factor: bool
+) -> tuple[Number, int] | Fault:
     digits, after, power = found[0].replace("−", "-"), found.end(), 0
     if ten := _POWER.match(text, after):
         written = ten[1] or ten[2] or ten[3].translate(_SUPERSCRIPT)
         after = ten.end()
         power = int(written.replace("−", "-")) if len(written) <= 4 else 999
-    elif times := re.compile(r"\s*[×x*]\s*\d[\d.]*").match(text, after):
+    elif not factor and (times := _PRODUCT.match(text, after)):
         return Fault(
             codes.NUMBER_NOT_READ,
             at,

@@ -195,13 +195,13 @@ class Cursor:
         self.blanks()
         return words
 
-    def quantity(self) -> Measured | None:
-        """Read a quantity if one begins here; stop at a faulty one."""
+    def quantity(self, *, factor: bool = False) -> Measured | None:
+        """Read a quantity if one begins here; stop at a faulty one. `factor`: it may be multiplied."""
         if self.done or not starts_quantity(self.text, self.at):
             return None
         if NAME.match(self.text, self.at, self.end) and not self.text[self.at].isalpha():
             return None  # `2-propanol`
-        found = scan_quantity(self.text, self.at, self.end, measures=self.measures)
+        found = scan_quantity(self.text, self.at, self.end, measures=self.measures, factor=factor)
         if isinstance(found, Fault):
             self.stop(
                 found.code, self.source.span(found.start, found.end), found.message, found.help
@@ -348,7 +348,7 @@ class ExpressionReader:
             return Negative(self.read(_BINDS_SIGN), cursor.span(start))
         if cursor.text[start] == '"':
             return cursor.quoted()
-        value = cursor.quantity()
+        value = cursor.quantity(factor=True)
         if value is not None:
             return value
         if not NAME.match(cursor.text, start, cursor.end):

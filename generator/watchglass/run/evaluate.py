@@ -152,10 +152,36 @@ class Evaluator:
             return self._molar_mass(thing)
         if name in ("density", "melts", "boils"):
             return self._property(name, thing)
+        component = self._component(thing)
+        if component is not None:
+            return self._from_content(name, component)
         taken = self._taken(thing)
         if isinstance(taken, NotKnown):
             return taken
         return self._measure(name, *taken)
+
+    def _component(self, thing: Expression) -> Content | None:
+        """Give what one pass takes of a substance that stands in just one mixture."""
+        if not isinstance(thing, Name) or thing.text in self.procedure.names:
+            return None
+        substance = self.catalogue.find(thing.text)
+        held = []
+        for material in self.procedure.materials.values():
+            if substance is None or not isinstance(material.composition, model.Mixture):
+                continue
+            taken = self._taken(Name(material.name, thing.span))
+            if isinstance(taken, NotKnown):
+                continue
+            held += [c for c in self._contents(*taken) if c.substance.key == substance.key]
+        return held[0] if len(held) == 1 else None
+
+    def _contents(self, material: model.Material, use: Use) -> tuple[Content, ...]:
+        quantity = use.quantity or material.provided
+        if quantity is None or use.of_all in ("half", "rest"):
+            return ()
+        value = quantity.middle * self.procedure.head.scale
+        found = contents(material, quantity.dimension, value, quantity.figures)
+        return found if isinstance(found, tuple) else ()
 
     def _substance(self, thing: Expression) -> Substance | None:
         text = thing.text if isinstance(thing, Name | Words) else ""
