@@ -43,8 +43,7 @@ _WORDS = re.compile(r"([^\W\d_][\w-]*)(?: [^\W\d_][\w-]*)?")
 _LONGEST = 40
 #: No quantity is longer than this many characters; only so much is looked at.
 _WINDOW = 200
-_LARGEST_PRODUCT = re.compile(r"\s*[×x*]\s*\d[\d.]*")
-_POWER = 30
+_LARGEST_POWER = 30
 _SIGNED = frozenset((dim.NUMBER, dim.VOLTAGE, dim.CURRENT, dim.ENERGY, dim.MOLAR_ENERGY))
 
 
