@@ -14,6 +14,8 @@ if TYPE_CHECKING:
     from watchglass.judge.case import Case
 
 _SHOWN = 3
+#: Verbs of time alone: all that they do is counted against the period.
+_DONE = frozenset(("take", "wait", "next period"))
 
 
 def not_yet_run(case: Case) -> Iterator[Finding]:
@@ -24,7 +26,7 @@ def not_yet_run(case: Case) -> Iterator[Finding]:
         for event in step.events
         if isinstance(event, model.Operation | model.Transfer | model.Aliquot)
     ]
-    waiting = [(event.span, _word(event)) for event in events if _word(event) != "next period"]
+    waiting = [(event.span, _word(event)) for event in events if _word(event) not in _DONE]
     waiting += [(e.span, "expect") for e in case.procedure.expectations]
     if not waiting:
         return

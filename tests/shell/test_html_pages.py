@@ -1,0 +1,211 @@
+"""Whole pages through the theme: escaping in every field, landmarks, headings, editions."""
+
+from __future__ import annotations
+
+import dataclasses
+import re
+import types
+import typing
+from itertools import pairwise
+
+import pytest
+
+from shell.site_builder import Reading
+from watchglass.publish import model as m
+from watchglass.shell.site.html import NotForStudents
+from watchglass.shell.site.render import Frame, NavEntry, Renderer, make_environment
+from watchglass.shell.site.theme import find_themes
+
+HOSTILE = """<b onclick="x">&'{{ 7*7 }}"""
+FRAME = Frame(
+    laboratory="Laboratory",
+    institution="College",
+    edition="student",
+    main=(NavEntry("Start", "index.html"), NavEntry("Courses", "courses.html")),
+    pages=(NavEntry("Safety", "pages/safety.html"),),
+)
+ENVIRONMENT = make_environment([str(find_themes() / "handbook")])
+PAGES = (m.StudentPage, m.InstructorPage, m.OrdinaryPage, m.ListPage, m.StartPage)
+_SMALL: tuple[object, ...] = (m.Para((m.Run(HOSTILE),)),)
+
+
+def hostile(kind: typing.Any) -> typing.Any:
+    """Make a value of a type with hostile text wherever a text may stand."""
+    if kind is str:
+        return HOSTILE
+    if kind in (int, bool):
+        return kind(1)
+    if dataclasses.is_dataclass(kind):
+        hints = typing.get_type_hints(kind)
+        made = {f.name: hostile(hints[f.name]) for f in dataclasses.fields(kind)}
+        if "address" in made:
+            made["address"] = "procedures/x.html"
+        return typing.cast("typing.Any", kind)(**made)
+    origin, arguments = typing.get_origin(kind), typing.get_args(kind)
+    if origin is tuple:
+        if arguments[-1] is not Ellipsis:
+            return tuple(hostile(argument) for argument in arguments)
+        return (hostile(arguments[0]), hostile(arguments[0]))
+    if origin in (types.UnionType, typing.Union):
+        if m.Run in arguments:
+            return m.Run(HOSTILE)
+        if m.Para in arguments:
+            return m.Para((m.Run(HOSTILE),))
+        return hostile(arguments[0])
+    raise TypeError(kind)
+
+
+def render(page: typing.Any, frame: Frame = FRAME) -> str:
+    edition = "instructor" if isinstance(page, m.InstructorPage) else frame.edition
+    return Renderer(ENVIRONMENT, dataclasses.replace(frame, edition=edition)).render(page)
+
+
+@pytest.mark.parametrize("kind", PAGES)
+def test_hostile_text_in_every_field_stays_text(kind: type) -> None:
+    html = render(hostile(kind))
+    reading = Reading(html)
+
+    assert "<b" not in html.replace("<body>", "").replace("<br>", "").replace("<blockquote>", "")
+    assert "onclick" not in [name for name, _ in reading.attributes]
+    assert HOSTILE in reading.text
+
+
+def test_hostile_frame_stays_text() -> None:
+    frame = Frame(
+        laboratory=HOSTILE,
+        institution=HOSTILE,
+        edition="student",
+        main=(NavEntry(HOSTILE, HOSTILE),),
+        pages=(NavEntry(HOSTILE, HOSTILE),) * 9,
+        styles=(HOSTILE,),
+        scripts=(HOSTILE,),
+    )
+    reading = Reading(render(m.OrdinaryPage(title="T", address="t.html", body=()), frame))
+
+    assert "b" not in reading.tags
+    assert "onclick" not in [name for name, _ in reading.attributes]
+
+
+@pytest.mark.parametrize("kind", PAGES)
+def test_page_has_its_landmarks_and_one_main_heading(kind: type) -> None:
+    reading = Reading(render(hostile(kind)))
+
+    assert reading.tags.count("main") == 1
+    assert reading.tags.count("h1") == 1
+    assert reading.tags.count("footer") == 1
+    assert reading.values("lang")[0] == "en"
+    assert "#content" in reading.values("href")
+    assert "content" in reading.values("id")
+
+
+@pytest.mark.parametrize("kind", PAGES)
+def test_headings_leave_out_no_level(kind: type) -> None:
+    levels = [
+        int(tag[1]) for tag in Reading(render(hostile(kind))).tags if re.fullmatch("h[1-6]", tag)
+    ]
+
+    assert levels[0] == 1
+    assert all(after <= before + 1 for before, after in pairwise(levels))
+
+
+@pytest.mark.parametrize("kind", PAGES)
+def test_no_page_fetches_or_runs_anything(kind: type) -> None:
+    html = render(hostile(kind))
+    reading = Reading(html)
+
+    assert not {"script", "iframe", "object", "embed", "style"} & set(reading.tags)
+    assert not [name for name, _ in reading.attributes if name.startswith("on") or name == "style"]
+    assert "http" not in "".join(reading.values("href", "src"))
+
+
+def page_of(kind: type, **changes: object) -> typing.Any:
+    return dataclasses.replace(hostile(kind), **changes)
+
+
+@pytest.mark.parametrize(
+    "block",
+    [
+        m.InstructorPanel("answer", (m.Para((m.Run("KEPT"),)),)),
+        m.Para((m.ExpectedBlank(m.Blank("a", "b", ()), (m.Run("KEPT"),)),)),
+    ],
+)
+@pytest.mark.parametrize("part", ["before", "body"])
+def test_no_student_page_is_made_of_what_instructors_see(part: str, block: m.Blocks) -> None:
+    with pytest.raises(NotForStudents):
+        render(page_of(m.StudentPage, **{part: (block,)}))
+
+
+def test_instructor_edition_is_named_as_such_on_every_page() -> None:
+    html = render(
+        m.OrdinaryPage(title="T", address="t.html", body=()),
+        dataclasses.replace(FRAME, edition="instructor"),
+    )
+
+    assert "Instructor edition" in Reading(html).text
+    assert 'content="noindex"' in html
+
+
+def test_student_edition_says_nothing_of_another() -> None:
+    html = render(m.OrdinaryPage(title="T", address="t.html", body=()))
+
+    assert "nstructor" not in html
+
+
+ROW = m.ReagentRow(
+    name=(m.Run("butan-1-ol"),),
+    local="alcohol",
+    formula=(m.Run("C"), m.Lowered("4"), m.Run("H"), m.Lowered("10"), m.Run("O")),
+    molar_mass="74.12",
+    used=(m.Run("7.45 g"),),
+    portions="",
+    amount=(m.Run("101 mmol"),),
+    equivalents=(("", "1.00", True),),
+    strength=(),
+    provided=(),
+)
+
+
+def test_limiting_reactant_is_marked_in_words_and_weight() -> None:
+    html = render(page_of(m.StudentPage, reagents=(ROW,)))
+
+    assert '<tr role="row" class="limiting">' in html
+    assert '1.00 <strong class="limits">limiting</strong>' in html
+
+
+def test_caption_speaks_of_a_limiting_reactant_only_where_there_is_one() -> None:
+    none = dataclasses.replace(ROW, equivalents=(("", "1.00", False),))
+
+    assert "in bold" in render(page_of(m.StudentPage, reagents=(ROW,)))
+    assert "in bold" not in render(page_of(m.StudentPage, reagents=(none,)))
+
+
+def test_columns_that_no_material_fills_are_left_out() -> None:
+    bare = dataclasses.replace(ROW, formula=(), molar_mass="", amount=(), equivalents=())
+    html = render(page_of(m.StudentPage, reagents=(bare,)))
+
+    assert re.findall(r'<th role="columnheader"[^>]*>(.*?)</th>', html) == ["Material", "Used"]
+
+
+def test_row_of_materials_says_each_figure_with_its_name() -> None:
+    html = render(page_of(m.StudentPage, reagents=(ROW,)))
+
+    assert re.findall(r'data-name="(.*?)"', html) == [
+        "Formula", "M in g/mol", "Used", "n", "Equivalents",
+    ]  # fmt: skip
+
+
+def test_current_page_is_marked_in_the_navigation() -> None:
+    html = render(m.OrdinaryPage(title="T", address="pages/safety.html", body=()))
+
+    assert '<a href="../pages/safety.html" aria-current="page">Safety</a>' in html
+    assert html.count("aria-current") == 1
+
+
+def test_many_pages_fold_away_in_the_navigation() -> None:
+    frame = dataclasses.replace(
+        FRAME, pages=tuple(NavEntry(f"P{n}", f"p{n}.html") for n in range(9))
+    )
+    html = render(m.OrdinaryPage(title="T", address="t.html", body=()), frame)
+
+    assert "<summary>Pages</summary>" in html
+    assert html.count('href="p') == 9
