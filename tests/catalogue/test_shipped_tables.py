@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import json
+from typing import TYPE_CHECKING
 
 import pytest
 
@@ -10,9 +11,11 @@ from tools.name_index import make
 from watchglass.base.spans import Source
 from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.decode import decode_substances
-from watchglass.catalogue.substances import Substance
 from watchglass.catalogue.ware import decode_glassware, decode_indicator
 from watchglass.shell.shipped import DATA, shipped, substance_sources
+
+if TYPE_CHECKING:
+    from watchglass.catalogue.substances import Substance
 
 SOURCES = substance_sources()
 

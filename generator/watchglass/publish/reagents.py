@@ -53,7 +53,7 @@ def _material(
     rows = [
         m.ReagentRow(
             name=_first_words(material),
-            local=material.name,
+            local=_local(material),
             formula=_formula(substance),
             molar_mass=_molar_mass(substance),
             used=_used(used),
@@ -89,6 +89,13 @@ def _component(content: Content, found: list[Role], several: bool) -> m.ReagentR
         strength=(),
         provided=(),
     )
+
+
+def _local(material: model.Material) -> str:
+    """Give the name the steps use, where the reader's words do not say it already."""
+    local = material.name.replace("-", " ")
+    said = "".join(w.text for w in material_words(material) if isinstance(w, m.Run)).casefold()
+    return "" if local.casefold() in said.removeprefix("the ").split(" of ") else local
 
 
 def _first_words(material: model.Material) -> tuple[m.Words, ...]:
@@ -177,7 +184,11 @@ def _portions(used: Usage | None) -> str:
 def _equivalents(found: list[Role], *, several: bool) -> tuple[tuple[str, str, bool], ...]:
     """Give what a material is to each reaction whose limiting reactant can be told."""
     return tuple(
-        (role.reaction if several else "", shown(role.equivalents, role.figures), role.limiting)
+        (
+            role.reaction.replace("-", " ") if several else "",
+            shown(role.equivalents, role.figures),
+            role.limiting,
+        )
         for role in found
         if role.equivalents is not None
     )
