@@ -1,4 +1,4 @@
-"""What all tests share: golden files, and the option that rewrites them."""
+"""What all tests share: golden files, the option that rewrites them, how properties are tried."""
 
 from __future__ import annotations
 
@@ -6,11 +6,16 @@ from pathlib import Path
 from typing import TYPE_CHECKING
 
 import pytest
+from hypothesis import settings
 
 if TYPE_CHECKING:
     from collections.abc import Callable
 
 GOLDEN = Path(__file__).parent / "golden"
+
+# Nothing is left to chance, and a slow machine is no fault; long runs are made by hand.
+settings.register_profile("ci", deadline=None, derandomize=True, max_examples=200)
+settings.load_profile("ci")
 
 
 def pytest_addoption(parser: pytest.Parser) -> None:

@@ -23,18 +23,20 @@ if TYPE_CHECKING:
 
     from watchglass.base.findings import Code
 
+#: Blanks within a line: the no-break and thin spaces that typesetters put before a unit count too.
+BLANKS = " \t\xa0\u2009\u202f"
 _DIGITS = re.compile(r"[+\-−]?(?:\d+(?:\.\d+)?|\.\d+)")
 _PRODUCT = re.compile(r"\s*[×x*]\s*\d[\d.]*")
 _POWER = re.compile(r"[eE]([+\-−]?\d+)(?![\w.])|\s*[×x]\s*10(?:\^([+\-−]?\d+)|([⁻⁺]?[⁰¹²³⁴-⁹]+))")
 _ABOUT = re.compile(r"(?:ca\.?|approx\.?|about|[~≈])\s*(?=[\d.+\-−])")
 _BOUND = re.compile(r"(>=|<=|≥|≤|>|<)\s*")
 _RANGE = re.compile(r"\s*[–—]\s*|(?<=\d)-(?=\.?\d)|\s+to\s+(?=[+\-−.\d])")
-_TOLERANCE = re.compile(r"\s*(?:±|\+/-)\s*")
+_TOLERANCE = re.compile(r"\s*(±|\+/-)\s*")
 _SYMBOL = re.compile(r"[A-Za-zµμÅ°℃℉%‰][A-Za-zµμ]*")
 _EXPONENT = re.compile(r"\^\(?(-?\d)\)?|([⁻]?[²³¹⁴])")
 _BASIS = re.compile(r"\s*\(?\s*(w/w|w/v|v/v|m/m|m/v|wt|vol)\b(?:\s*\))?")
-_GROUPED = re.compile(r"[  '’](\d{3})(?!\d)")
-_COMMA = re.compile(r"\d+(?:[., ]\d{3})*,\d+|\d{1,3}(?:,\d{3})+(?:\.\d+)?")
+_GROUPED = re.compile(r"(?:[ \xa0\u2009\u202f'’]\d{3}(?!\d))+(?:[.,]\d+)?")
+_COMMA = re.compile(r"\d{1,3}(?:,\d{3})+(?![\d,])(?:\.\d+)?|\d+(?:[., ]\d{3})*,\d+")
 _NAME_GOES_ON = re.compile(r"[\w-]")
 _SUPERSCRIPT = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺", "0123456789-+")
 _VULGAR = re.compile(r"\d*[½⅓¼¾⅔⅛]")
@@ -150,8 +152,8 @@ def _scan(text: str, measures: Mapping[str, float | None] | None, *, factor: boo
         if not isinstance(margin, tuple):
             return margin or Fault(
                 codes.NUMBER_NOT_READ,
-                found.start(),
-                found.end(),
+                found.start(1),
+                found.end(1),
                 "no number follows `±`",
                 "write `2.00 ± 0.05 g`",
             )
@@ -261,6 +263,11 @@ def _comma_or_groups(text: str, at: int, after: int) -> Fault | None:
         written = found[0]
         if re.fullmatch(r"\d+,\d{1,2}|\d+,\d{4,}|0,\d+", written):
             help_ = f"write `{written.replace(',', '.')}`"
+        elif re.fullmatch(r"\d+(?:[. ]\d{3})+,\d+", written):
+            whole, _, decimals = written.partition(",")
+            help_ = f"write `{''.join(c for c in whole if c.isdigit())}.{decimals}`"
+        elif "." in written:
+            help_ = f"write `{written.replace(',', '')}`"
         else:
             plain = "".join(c for c in written if c.isdigit())
             help_ = f"write `{plain}` without commas, or a decimal point for the comma"
@@ -269,7 +276,7 @@ def _comma_or_groups(text: str, at: int, after: int) -> Fault | None:
         )
     if (found := _GROUPED.match(text, after)) and text[at:after].isdigit():
         written = text[at : found.end()]
-        plain = "".join(c for c in written if c.isdigit())
+        plain = "".join(c for c in written.replace(",", ".") if c.isdigit() or c == ".")
         return Fault(
             codes.DIGITS_APART,
             at,
@@ -322,7 +329,7 @@ def _unit(
     text: str, at: int, measures: Mapping[str, float | None] | None
 ) -> tuple[Unit, int] | Fault | None:
     here = at
-    while here < len(text) and text[here] in " \t  ":
+    while here < len(text) and text[here] in BLANKS:
         here += 1
     if here == at and text[at : at + 1] == "-":
         return None  # `2-propanol` is a name; the mark's reader never comes here for it
@@ -460,8 +467,22 @@ def _compound(text: str, at: int) -> tuple[Unit, int] | Fault | None:
     if _word_goes_on(text, after):
         return None
     if text[after : after + 1] == "/" and (word := _SYMBOL.match(text, after + 1)):
+        if read[0].offset:
+            return _point_divided(text, at, word.end())
         return unknown_unit(word[0], after + 1)
     return read
+
+
+def _point_divided(text: str, start: int, end: int) -> Fault:
+    """Refuse `°C/min`: a temperature point has no share in a rate, a difference has."""
+    kelvin = "K" + text[start:end].partition("/")[1] + text[start:end].partition("/")[2]
+    return Fault(
+        codes.UNIT_UNKNOWN,
+        start,
+        end,
+        f"`{text[start:end]}` divides a temperature point",
+        f"write the difference in kelvin: `{kelvin}`",
+    )
 
 
 # ------------------------------------------------------------------------------ sense

@@ -28,7 +28,7 @@ if TYPE_CHECKING:
     from watchglass.resolve.model import Procedure
 
 _ROWS = re.compile(r"(\d+)\s+rows?")
-_SENTENCE_END = re.compile(r"[.!?:]\s*$")
+_SENTENCE_END = re.compile(r"[.!?]\s*$")
 _HIDES = frozenset(("theoretical-yield",))
 
 

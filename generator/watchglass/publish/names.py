@@ -70,19 +70,31 @@ def vessel_short(vessel: Vessel) -> str:
 
 def material_words(material: Material) -> tuple[Words, ...]:
     """Call a material as the reader knows it: strength and substance, or its own name."""
-    composition = material.composition
-    match composition:
+    match material.composition:
         case model.Solution(strength, _, _):
-            rest = material.written[len(strength.quantity.text) :]
-            if material.written.startswith(strength.quantity.text):
-                return joined((*quantity_words(strength.quantity), Run(_upright(rest))))
-            return (*quantity_words(strength.quantity), Run(f" {composition.solute.name}"))
+            return joined((*quantity_words(strength.quantity), Run(" "), *solute_words(material)))
+        case model.Saturated() if material.written.startswith("saturated"):
+            return joined((Run("saturated "), *solute_words(material)))
+        case _:
+            return solute_words(material)
+
+
+def solute_words(material: Material) -> tuple[Words, ...]:
+    """Call a material without its strength, for where the strength stands beside it."""
+    written = material.written
+    match material.composition:
+        case model.Solution(strength, solute, _):
+            if written.startswith(strength.quantity.text):
+                return (Run(_upright(written.removeprefix(strength.quantity.text).strip())),)
+            return (Run(solute.name),)
+        case model.Saturated():
+            return (Run(_upright(written.removeprefix("saturated").strip())),)
         case model.Mixture() | model.Continued():
             return (Run(f"the {material.name.replace('-', ' ')}"),)
         case model.Secret():
             return (Run("the sample"),)
         case _:
-            return (Run(_upright(material.written or material.name)),)
+            return (Run(_upright(written or material.name)),)
 
 
 def _upright(written: str) -> str:

@@ -11,7 +11,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import dimensions as dim
 from watchglass.base.figures import shown
 from watchglass.publish import model as m
-from watchglass.publish.names import material_words
+from watchglass.publish.names import material_words, solute_words
 from watchglass.publish.text import NBSP, formula_words, quantity_words, value_words
 from watchglass.resolve import model
 from watchglass.run.content import Content, Missing
@@ -52,7 +52,7 @@ def _material(
         amount = _amount(contents, used)
     rows = [
         m.ReagentRow(
-            name=_first_words(material),
+            name=solute_words(material),
             local=_local(material),
             formula=_formula(substance),
             molar_mass=_molar_mass(substance),
@@ -96,10 +96,6 @@ def _local(material: model.Material) -> str:
     local = material.name.replace("-", " ")
     said = "".join(w.text for w in material_words(material) if isinstance(w, m.Run)).casefold()
     return "" if local.casefold() in said.removeprefix("the ").split(" of ") else local
-
-
-def _first_words(material: model.Material) -> tuple[m.Words, ...]:
-    return material_words(material)
 
 
 def _substance(composition: model.Composition) -> Substance | None:

@@ -13,7 +13,7 @@ from typing import TYPE_CHECKING, NamedTuple, NoReturn
 
 from watchglass.base import codes, units
 from watchglass.base.findings import Finding
-from watchglass.base.scan import Fault, Found, scan_quantity, starts_quantity
+from watchglass.base.scan import BLANKS, Fault, Found, scan_quantity, starts_quantity
 from watchglass.read.syntax import Measured, Name, Words
 from watchglass.read.words import NAME
 
@@ -118,7 +118,7 @@ class Cursor:
     def blanks(self) -> None:
         """Skip blanks."""
         text, at, end = self.text, self.at, self.end
-        while at < end and text[at] in " \t\xa0\u202f":
+        while at < end and text[at] in BLANKS:
             at += 1
         self.at = at
 
@@ -130,14 +130,14 @@ class Cursor:
     def span(self, start: int) -> Span:
         """Give the span from `start` to here, without blanks at its end."""
         end = self.at
-        while end > start and self.text[end - 1] in " \t\xa0\u202f":
+        while end > start and self.text[end - 1] in BLANKS:
             end -= 1
         return self.source.span(start, end)
 
     def rest(self) -> Span:
         """Give the span of what is left, at least one character where there is any."""
         end = self.end
-        while end > self.at and self.text[end - 1] in " \t\xa0\u202f":
+        while end > self.at and self.text[end - 1] in BLANKS:
             end -= 1
         if end > self.at:
             return self.source.span(self.at, end)
