@@ -221,7 +221,9 @@ def test_temperature_point_and_difference_are_two_things() -> None:
     assert quantity("20 °C").dimension != quantity("20 K").dimension
 
 
-@pytest.mark.parametrize("text", ["-5 V", "-20 mA", "-56 kJ/mol", "-5 kJ", "-0.5", "-10 °C", "-3 °F"])
+@pytest.mark.parametrize(
+    "text", ["-5 V", "-20 mA", "-56 kJ/mol", "-5 kJ", "-0.5", "-10 °C", "-3 °F"]
+)
 def test_what_can_be_negative_may_be(text: str) -> None:
     assert quantity(text).number.value < 0
 

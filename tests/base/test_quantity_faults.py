@@ -83,9 +83,7 @@ FAULTS = [
 
 
 @pytest.mark.parametrize(("text", "code", "marked", "help_"), FAULTS)
-def test_spelling_of_two_readings_is_refused(
-    text: str, code: str, marked: str, help_: str
-) -> None:
+def test_spelling_of_two_readings_is_refused(text: str, code: str, marked: str, help_: str) -> None:
     refused = fault(text)
 
     assert refused.code.number == code
@@ -148,7 +146,7 @@ def test_text_that_is_to_be_one_quantity_holds_nothing_else(
     ("text", "help_"),
     [
         ("5 mmoll", "did you mean `mmol` or `mol`?"),
-        ("5 kPaa", "did you mean `kPa`, `MPa` or `hPa`?"),
+        ("5 kPaa", "did you mean `kPa`?"),
         ("5 zorkmids", "take one of the units in the list, such as `g`, `mL`, `mmol`, `min`"),
     ],
 )

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import re
-from typing import Any, NamedTuple
+from typing import TYPE_CHECKING, Any, NamedTuple
 
 import pytest
 
@@ -11,7 +11,9 @@ from cases.harness import above_note, check_files, told
 from outside.published import cases
 from outside.tolerances import within
 from watchglass.base.scan import Found, scan_quantity
-from watchglass.base.units import Unit
+
+if TYPE_CHECKING:
+    from watchglass.base.units import Unit
 
 #: Spellings of the cases that the notation writes in another way.
 _WRITTEN = {

@@ -11,7 +11,7 @@ from enum import Enum
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
-from watchglass.base.findings import Finding, did_you_mean
+from watchglass.base.findings import Finding, did_you_mean, near
 from watchglass.base.yaml import YamlList, YamlMapping, YamlNode, YamlText
 
 if TYPE_CHECKING:
@@ -100,12 +100,14 @@ def read_fields(
     findings: list[Finding] = []
     values: dict[str, YamlNode] = {}
     keys: dict[str, Span] = {}
+    meant: set[str] = set()  # fields that a misspelt one was to be: not reported as missing too
     for entry in node:
         name = entry.key.text
         field = fields.get(name)
         if field is None and "->" in name:
             continue  # a mark without quotes: reported where the YAML was read
         if field is None:
+            meant.update(near(name, fields, most=1))
             findings.append(
                 Finding(
                     code=codes.FIELD_UNKNOWN,
@@ -121,6 +123,8 @@ def read_fields(
             keys[name] = entry.key.span
             findings.append(unfit(entry.value, f"`{name}`", field.shape))
     for name, field in fields.items():
+        if name in meant and name not in keys:
+            continue
         if field.required and (name not in keys or (name in values and _empty(values[name]))):
             findings.append(
                 Finding(

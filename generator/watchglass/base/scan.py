@@ -32,7 +32,9 @@ _ABOUT = re.compile(r"(?:ca\.?|approx\.?|about|[~≈])\s*(?=[\d.+\-−])")
 _BOUND = re.compile(r"(>=|<=|≥|≤|>|<)\s*")
 _RANGE = re.compile(r"\s*[–—]\s*|(?<=\d)-(?=\.?\d)|\s+to\s+(?=[+\-−.\d])")
 _TOLERANCE = re.compile(r"\s*(±|\+/-)\s*")
-_SYMBOL = re.compile(r"[A-Za-zµμÅ°℃℉%‰][A-Za-zµμ]*")
+_SYMBOL = re.compile(r"[A-Za-zµμÅ°º˚℃℉%‰][A-Za-zµμ]*")
+#: The degree sign, and two that look like it.
+_DEGREES = "°º˚"
 _EXPONENT = re.compile(r"\^\(?(-?\d)\)?|([⁻]?[²³¹⁴])")
 _BASIS = re.compile(r"\s*\(?\s*(w/w|w/v|v/v|m/m|m/v|wt|vol)\b(?:\s*\))?")
 _GROUPED = re.compile(r"(?:[ \xa0\u2009\u202f'’]\d{3}(?!\d))+(?:[.,]\d+)?")
@@ -341,7 +343,7 @@ def _unit(
     word = found[0]
     if word == "in" and _INTO.match(text, found.end()):
         return None  # `5 in A`, `2 in mL`: the clause word, not the inch
-    if word[0] == "°" and word not in UNITS:
+    if word[0] in _DEGREES and word not in UNITS:
         return _degree(text, here, word)
     if word == "N" and not _word_goes_on(text, found.end()):
         return _normality(text, here)
@@ -360,7 +362,15 @@ def _word_goes_on(text: str, at: int) -> bool:
 
 def _degree(text: str, at: int, word: str) -> Fault:
     after = at + len(word)
-    if word == "°" and (letter := re.compile(r"\s*([CF])\b").match(text, after)):
+    if word[1:] in ("C", "F"):
+        return Fault(
+            codes.UNIT_UNKNOWN,
+            at,
+            after,
+            f"`{word}` is written with another sign than the degree sign",
+            f"write `°{word[1:]}`",
+        )
+    if len(word) == 1 and (letter := re.compile(r"\s*([CF])\b").match(text, after)):
         return Fault(
             codes.UNIT_AMBIGUOUS,
             at,

@@ -24,7 +24,7 @@ MOST_CHARACTERS = 1_000_000
 DEEPEST = 32
 _INDENT = re.compile(r"^ {128}", re.MULTILINE)
 _DASHES = re.compile(rf"(?:[-?] +){{{DEEPEST}}}")
-_SPECIAL = re.compile(r"(?:^|[\s\[{,:-])[&*!]\S|^\s*<<\s*:", re.MULTILINE)
+_SPECIAL = re.compile(r"(?:^|[\s\[{,:-])(?:[&*]\S|!)|^\s*<<\s*:", re.MULTILINE)
 _ANCHOR = re.compile(r"&\S+")
 _UNPRINTABLE = re.compile(r"[\x00-\x08\x0b-\x1f\x7f-\x84\x86-\x9f\ud800-\udfff\ufffe\uffff]")
 
@@ -47,13 +47,18 @@ class YamlText(NamedTuple):
 
         Where folding hides the exact place the whole scalar is given.
         """
-        raw = self.span.text
+        end = min(end, len(self.text))
+        start, raw = min(start, end), self.span.text
         if not self.style and raw == self.text:
             return self.span.part(start, end)
         table = offsets(raw, self.style, self.text)
-        if table is None or start >= len(table):
+        if table is None:
             return self.span
-        last = table[end - 1] + 1 if end > start else table[start]
+        last = table[start]
+        if end > start:
+            at = table[end - 1]
+            escaped = raw[at : at + 1] == {'"': "\\", "'": "'"}.get(self.style)
+            last = table[end] if escaped else at + 1
         return self.span.part(table[start], max(last, table[start]))
 
 
@@ -207,6 +212,7 @@ def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
     while at > 0 and (at >= len(text) or text[at] == "\n"):
         at -= 1
     problem = str(getattr(error, "problem", None) or "it cannot be read").rstrip(".")
+    problem = problem.removeprefix("but ")
     line_start = text.rfind("\n", 0, at) + 1
     line = text[line_start : text.find("\n", at) if "\n" in text[at:] else len(text)]
     help_ = "see that lists and values are set in by blanks alike"
@@ -253,9 +259,11 @@ class _Builder:
         return YamlMapping(tuple(entries.values()), self.span(node))
 
     def entry(self, key_node: Any, value_node: Any, entries: dict[str, YamlEntry]) -> None:
+        known = len(self.findings)
         key = self.build(key_node)
         if not isinstance(key, YamlText):
-            self.findings.append(_mark_as_key(key.span))
+            if len(self.findings) == known:
+                self.findings.append(_mark_as_key(key.span))
             return
         before = entries.get(key.text)
         if before is not None:

@@ -17,7 +17,7 @@ from watchglass.read.words import CLAUSE_WORDS, CLOSURES, MEASURES_OF_ALL, NAME,
 if TYPE_CHECKING:
     from watchglass.read.expressions import Cursor
 
-_PH = re.compile(r"p[Hh]\s+(?=[\d.])")
+_PH = re.compile(r"p[Hh](?![^\W\d]|-)")
 _ALL_COMMA = tuple(sorted((*CLOSURES, *SETTINGS), key=len, reverse=True))
 
 
@@ -39,9 +39,26 @@ def read_place(cursor: Cursor) -> syntax.Place:
     return syntax.Place(name, None, cursor.span(start))
 
 
-def read_clauses(cursor: Cursor) -> tuple[syntax.Clause, ...]:
-    """Read clauses as long as they follow; each at most once in an act."""
-    clauses: list[syntax.Clause] = []
+def read_object(cursor: Cursor) -> syntax.Place:
+    """Read the place that a verb or a clause is about, where no clause word can stand."""
+    if cursor.peek_word() in CLAUSE_WORDS:
+        cursor.stop(codes.MARK_NOT_READ, cursor.rest(), f"a name is expected{cursor.here()}")
+    return read_place(cursor)
+
+
+def read_clauses(
+    cursor: Cursor, earlier: tuple[syntax.Clause, ...] = ()
+) -> tuple[syntax.Clause, ...]:
+    """Read clauses as long as they follow; each at most once in an act.
+
+    Args:
+        cursor: Where they stand.
+        earlier: Those of the same act that stood before its arrow.
+
+    Returns:
+        The earlier ones and those read here.
+    """
+    clauses = list(earlier)
     while not cursor.done:
         start = cursor.at
         if cursor.text[start] == ",":
@@ -104,15 +121,23 @@ def _after_comma(cursor: Cursor) -> syntax.Clause | None:  # noqa: RET503 - `sto
 def _value(cursor: Cursor, word: str) -> syntax.ClauseValue:
     start = cursor.at
     if cursor.done:
-        span = cursor.rest()
-        cursor.stop(codes.MARK_NOT_READ, span, f"nothing follows `{word}`", "add what it is about")
+        cursor.stop(
+            codes.MARK_NOT_READ, cursor.rest(), f"nothing follows `{word}`", "add what it is about"
+        )
     if cursor.text[start] == '"':
         return cursor.quoted()
     if word == "to" and (found := _PH.match(cursor.text, start, cursor.end)):
         cursor.at = found.end()
-        measured = cursor.quantity()
+        apart = cursor.text[cursor.at : cursor.at + 1].isspace()
+        cursor.blanks()
+        measured = cursor.quantity() if apart else None
         if measured is None:
-            cursor.stop(codes.MARK_NOT_READ, cursor.rest(), "`pH` needs a number")
+            cursor.stop(
+                codes.MARK_NOT_READ,
+                cursor.source.span(start, found.end()) if cursor.done else cursor.rest(),
+                "`pH` needs a number after a blank",
+                "write it as in `to pH 10`",
+            )
         return syntax.Ph(measured.quantity, cursor.span(start))
     if word == "until":
         cursor.stop(
@@ -128,7 +153,7 @@ def _value(cursor: Cursor, word: str) -> syntax.ClauseValue:
         return syntax.Amount(all_of, name, cursor.span(start))
     measured = cursor.quantity()
     if measured is None:
-        return read_place(cursor)
+        return read_object(cursor)
     following = NAME.match(cursor.text, cursor.at, cursor.end)
     if following and (following[0] == "of" or following[0] not in CLAUSE_WORDS):
         return read_amount(cursor, start, measured)

@@ -27,6 +27,9 @@ DEEPEST = 40
 _COMPARISONS = ("<=", ">=", "≤", "≥", "<", ">")
 _POWERS = {"+": 10, "-": 10, "*": 20, "·": 20, "×": 20, "/": 20, "^": 40}
 _BINDS_COMPARISON, _BINDS_AFTER, _BINDS_IN, _BINDS_SIGN = 2, 4, 6, 30
+#: A last word, an arrow or another sign.
+_LAST = re.compile(r"(?:[^\W_](?:[\w-]*[^\W_])?|->|\S)\Z")
+_LONGEST_WORD = 60
 _WORD_TIE = re.compile(r"(in|on|after|of)\b")
 
 
@@ -135,14 +138,18 @@ class Cursor:
         return self.source.span(start, end)
 
     def rest(self) -> Span:
-        """Give the span of what is left, at least one character where there is any."""
+        """Give the span of what is left; at the end that of the last word or sign before it."""
         end = self.end
         while end > self.at and self.text[end - 1] in BLANKS:
             end -= 1
         if end > self.at:
             return self.source.span(self.at, end)
-        at = max(0, min(self.at, len(self.text)) - 1)
-        return self.source.span(at, at + 1)
+        end = min(self.at, len(self.text))
+        while end > 1 and self.text[end - 1] in BLANKS:
+            end -= 1
+        found = _LAST.search(self.text, max(0, end - _LONGEST_WORD), end)
+        start = found.start() if found else max(0, end - 1)
+        return self.source.span(start, max(end, start + 1))
 
     def takes(self, literal: str) -> bool:
         """Go past `literal` and blanks after it, if it stands here."""

@@ -10,11 +10,11 @@ import re
 from typing import TYPE_CHECKING, NoReturn
 
 from watchglass.base import codes
-from watchglass.base.findings import Finding, did_you_mean
+from watchglass.base.findings import Finding, Related, did_you_mean
 from watchglass.base.scan import unknown_unit
 from watchglass.base.units import REFUSED
 from watchglass.read import syntax
-from watchglass.read.clauses import read_amount, read_clauses, read_place
+from watchglass.read.clauses import read_amount, read_clauses, read_object, read_place
 from watchglass.read.expressions import (
     Cursor,
     Expression,
@@ -23,7 +23,7 @@ from watchglass.read.expressions import (
     cut,
     ends_in_unit,
 )
-from watchglass.read.words import MEASURES_OF_ALL, NAME, OTHER_ACTS, VERBS
+from watchglass.read.words import CLAUSE_WORDS, MEASURES_OF_ALL, OTHER_ACTS, VERBS
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
@@ -143,7 +143,7 @@ def _measured(cursor: Cursor, start: int, measured: syntax.Measured) -> syntax.A
         origin = read_place(cursor)
         clauses = read_clauses(cursor)
         target = _arrow(cursor)
-        clauses += read_clauses(cursor)
+        clauses = read_clauses(cursor, clauses)
         return syntax.AliquotAct(measured, origin, target, clauses, cursor.span(start))
     if cursor.done:
         if not measured.quantity.unit.symbol:
@@ -176,7 +176,7 @@ def _amounts(cursor: Cursor, start: int, first: syntax.Amount) -> syntax.Act:
     if cursor.done and len(amounts) == 1 and not clauses:
         return syntax.StatedAct(first, cursor.span(start))
     target = _arrow(cursor)
-    clauses += read_clauses(cursor)
+    clauses = read_clauses(cursor, clauses)
     return syntax.ChargeAct(tuple(amounts), target, clauses, cursor.span(start))
 
 
@@ -216,7 +216,7 @@ def _named(cursor: Cursor, start: int) -> syntax.Act:
     clauses = read_clauses(cursor)
     if cursor.text.startswith(("->", "→"), cursor.at):
         target = _arrow(cursor)
-        clauses += read_clauses(cursor)
+        clauses = read_clauses(cursor, clauses)
         return syntax.TransferAct(place, target, clauses, cursor.span(start))
     word = place.name
     if place.part is None and before < cursor.end:
@@ -245,7 +245,7 @@ def _verb(cursor: Cursor, start: int, verb: str) -> syntax.VerbAct:
         cursor.takes_word("for")
         target = target or cursor.quantity()
     elif not cursor.done:
-        target = read_place(cursor)
+        target = read_object(cursor)
     if target is None:
         wanted = "a time" if verb in ("take", "wait") else "what it is done to"
         cursor.stop(
@@ -256,7 +256,7 @@ def _verb(cursor: Cursor, start: int, verb: str) -> syntax.VerbAct:
             if wanted == "a time"
             else f"name the vessel, as in `{verb} flask`",
         )
-    if verb == "test" and NAME.match(cursor.text, cursor.at, cursor.end):
+    if verb == "test" and cursor.peek_word() not in ("", *CLAUSE_WORDS):
         subject = cursor.name("what is tested")
     clauses = read_clauses(cursor)
     return syntax.VerbAct(verb, verb_span, target, clauses, cursor.span(start), subject)
@@ -301,15 +301,21 @@ def _again(cursor: Cursor, start: int) -> syntax.AgainAct:
     steps: list[syntax.StepRange] = []
     times, at_most, fresh = 1, None, False
     exchanges: tuple[tuple[syntax.Name, syntax.Name], ...] = ()
+    said: dict[str, Span] = {}
     while not cursor.done:
+        before = cursor.at
         if found := _COUNT.match(cursor.text, cursor.at, cursor.end):
             times = _count(cursor, found)
+            _once(cursor, said, "more times", before)
         elif found := _AT_MOST.match(cursor.text, cursor.at, cursor.end):
             at_most = _count(cursor, found)
+            _once(cursor, said, "at most", before)
         elif cursor.takes_word("fresh"):
             fresh = True
+            _once(cursor, said, "fresh", before)
         elif cursor.takes_word("with"):
             exchanges = _exchanges(cursor)
+            _once(cursor, said, "with", before)
         else:
             steps.append(_steps(cursor))
         divided = cursor.takes(",")
@@ -323,6 +329,22 @@ def _again(cursor: Cursor, start: int) -> syntax.AgainAct:
             "write `again 3–4`",
         )
     return syntax.AgainAct(tuple(steps), times, at_most, fresh, exchanges, cursor.span(start))
+
+
+def _once(cursor: Cursor, said: dict[str, Span], what: str, start: int) -> None:
+    """Note what `again` says, and refuse to be told it twice."""
+    span = cursor.span(start)
+    if what in said:
+        raise StopReading(
+            Finding(
+                code=codes.CLAUSE_TWICE,
+                span=span,
+                message=f"`{what}` stands twice in one act",
+                related=(Related(said[what], "it stood here first"),),
+                help="keep one of the two",
+            )
+        )
+    said[what] = span
 
 
 def _count(cursor: Cursor, found: re.Match[str]) -> int:
@@ -444,7 +466,7 @@ def _label_and_unit(cursor: Cursor, start: int, end: int) -> tuple[str, syntax.N
         span = inner.rest()
         if ends_in_unit(inner):
             words = cursor.text[start : found.end()].rstrip()[: -len("in")]
-            return " ".join(words.split()), syntax.Name(span.text, span)
+            return " ".join(words.split()).strip('"'), syntax.Name(span.text, span)
         if span.text in REFUSED:
             fault = unknown_unit(span.text, span.start)
             cursor.stop(fault.code, span, fault.message, fault.help)
