@@ -8,7 +8,7 @@ from read.mark_shapes import shape
 from watchglass.read.words import CLOSURES, PARTS, SETTINGS, VERBS
 
 # fmt: off
-AMOUNTS = [
+AMOUNTS_READ = [
     ("15 min", "quantity 15 min"),
     ("65 °C", "quantity 65 °C"),
     ("0.1 mg", "quantity 0.1 mg"),
@@ -43,7 +43,7 @@ AMOUNTS = [
     ("5 mL acid -> A , under  drying  tube", "charge [5 mL of acid] to A {closure <under drying tube>}"),
     ("10 mL from A by pipette -> B.lower", "aliquot 10 mL of A to B.lower {by pipette}"),
 ]
-PLACES = [
+PLACES_READ = [
     ("funnel", "name funnel"),
     ("acid", "name acid"),
     ("A.aqueous", "name A.aqueous"),
@@ -54,7 +54,7 @@ PLACES = [
     ("A.organic -> B through paper", "transfer A.organic to B {through paper}"),
     ("funnel.lower -> A, open", "transfer funnel.lower to A {closure <open>}"),
 ]
-VERBS = [
+VERBS_READ = [
     ("stir A", "verb stir A"),
     ("stir A for 5 min", "verb stir A {for (5 min)}"),
     ("stir A for 5 min at 300 rpm with bar, open", "verb stir A {for (5 min); at (300 rpm); with bar; closure <open>}"),
@@ -106,7 +106,7 @@ VERBS = [
     ("weigh A on balance to 0.5 g", "verb weigh A {on balance; to (0.5 g)}"),
     ("test A with litmus", "verb test A {with litmus}"),
 ]
-AGAIN = [
+AGAIN_READ = [
     ("again 3", "again 3 x1"),
     ("again 3–4", "again 3..4 x1"),
     ("again 3-4", "again 3..4 x1"),
@@ -123,7 +123,7 @@ AGAIN = [
     ("again 3–4, washing, 2 more times, at most 4, fresh with A as B", "again 3..4, washing x2 at most 4 fresh A/B"),
     ("again 3 – 4 , 1 more time", "again 3..4 x1"),
 ]
-FIGURES = [
+FIGURES_READ = [
     ("= 5 g", "value 5 g"),
     ("= mass(standard) in mg", "value mass(standard) in mg"),
     ("= 5 g / 2 mL in g/mL", "value (5 g / 2 mL) in g/mL"),
@@ -147,38 +147,38 @@ FIGURES = [
     ("? colour of the tube, in words", "record <colour of the tube, in words>"),
     ("? m-1: mass in mL/g", "record m-1: <mass> in mL/g"),
 ]
-SEVERAL = [
+SEVERAL_READ = [
     ("stir A; vent A; A -> B", "verb stir A; verb vent A; transfer A to B"),
 ]
 # fmt: on
 
 
-@pytest.mark.parametrize(("mark", "nodes"), AMOUNTS)
+@pytest.mark.parametrize(("mark", "nodes"), AMOUNTS_READ)
 def test_amount_is_stated_charged_or_taken_as_written(mark: str, nodes: str) -> None:
     assert shape(mark) == nodes
 
 
-@pytest.mark.parametrize(("mark", "nodes"), PLACES)
+@pytest.mark.parametrize(("mark", "nodes"), PLACES_READ)
 def test_name_stands_alone_or_is_poured(mark: str, nodes: str) -> None:
     assert shape(mark) == nodes
 
 
-@pytest.mark.parametrize(("mark", "nodes"), VERBS)
+@pytest.mark.parametrize(("mark", "nodes"), VERBS_READ)
 def test_verb_has_its_object_and_its_clauses(mark: str, nodes: str) -> None:
     assert shape(mark) == nodes
 
 
-@pytest.mark.parametrize(("mark", "nodes"), AGAIN)
+@pytest.mark.parametrize(("mark", "nodes"), AGAIN_READ)
 def test_again_says_which_steps_how_often_and_with_what(mark: str, nodes: str) -> None:
     assert shape(mark) == nodes
 
 
-@pytest.mark.parametrize(("mark", "nodes"), FIGURES)
+@pytest.mark.parametrize(("mark", "nodes"), FIGURES_READ)
 def test_figure_and_record_have_words_expression_and_unit(mark: str, nodes: str) -> None:
     assert shape(mark) == nodes
 
 
-@pytest.mark.parametrize(("mark", "nodes"), SEVERAL)
+@pytest.mark.parametrize(("mark", "nodes"), SEVERAL_READ)
 def test_acts_divided_by_semicolons_are_read_in_order(mark: str, nodes: str) -> None:
     assert shape(mark) == nodes
 
@@ -200,7 +200,9 @@ def test_each_closure_stands_after_a_comma(closure: str) -> None:
 
 @pytest.mark.parametrize("setting", SETTINGS)
 def test_each_setting_stands_after_a_comma(setting: str) -> None:
-    assert shape(f"stir A, {setting}, open") == f"verb stir A {{setting <{setting}>; closure <open>}}"
+    assert (
+        shape(f"stir A, {setting}, open") == f"verb stir A {{setting <{setting}>; closure <open>}}"
+    )
 
 
 @pytest.mark.parametrize(

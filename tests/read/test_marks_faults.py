@@ -141,13 +141,12 @@ def test_faulty_mark_gives_one_finding_in_its_place(
     assert (finding.message, finding.help) == (message, help_)
 
 
-@pytest.mark.parametrize(("mark", "code", "marked", "message", "help_"), FAULTS)
-def test_faulty_act_is_broken_and_spares_its_neighbours(
-    mark: str, code: str, marked: str, message: str, help_: str | None
-) -> None:
-    if not mark.strip() or ";" in mark or '"' in mark:
-        mark = "zzz A"
-    del code, marked, message, help_
+#: Faults that end with their act: those of a quote or of the mark itself reach further.
+ALONE = [mark for mark, *_ in FAULTS if mark.strip() and ";" not in mark and '"' not in mark]
+
+
+@pytest.mark.parametrize("mark", ALONE)
+def test_faulty_act_is_broken_and_spares_its_neighbours(mark: str) -> None:
     found = read(f"vent A; {mark}; A -> B")
 
     assert [written(act) for act in found.acts] == ["verb vent A", "broken", "transfer A to B"]

@@ -24,9 +24,13 @@ if TYPE_CHECKING:
     from watchglass.base.spans import Source, Span
 
 DEEPEST = 40
+#: Operators of one expression: a longer chain is a tree too deep to be walked.
+MOST_OPERATORS = 100
 _COMPARISONS = ("<=", ">=", "≤", "≥", "<", ">")
 _POWERS = {"+": 10, "-": 10, "*": 20, "·": 20, "×": 20, "/": 20, "^": 40}
 _BINDS_COMPARISON, _BINDS_AFTER, _BINDS_IN, _BINDS_SIGN = 2, 4, 6, 30
+_GLUED = re.compile(r"(\d[\d.]*)-(\d[\d.]*)")
+_ONE_A_LINE = "write one to a line"
 #: A last word, an arrow or another sign.
 _LAST = re.compile(r"(?:[^\W_](?:[\w-]*[^\W_])?|->|\S)\Z")
 _LONGEST_WORD = 60
@@ -252,6 +256,7 @@ class ExpressionReader:
         self.cursor = cursor
         self.unit_follows = unit_follows
         self.depth = 0
+        self.operators = 0
 
     def read(self, binding: int = 0) -> Expression:
         """Read an expression whose operators bind tighter than `binding`."""
@@ -266,6 +271,11 @@ class ExpressionReader:
             if longer is None:
                 break
             left = longer
+            self.operators += 1
+            if self.operators > MOST_OPERATORS:
+                self._stop(
+                    cursor.span(start), f"the expression has more than {MOST_OPERATORS} operators"
+                )
         self.depth -= 1
         return left
 
@@ -275,8 +285,16 @@ class ExpressionReader:
             if cursor.text.startswith(sign, cursor.at, cursor.end):
                 if binding >= _BINDS_COMPARISON:
                     return None
+                if isinstance(left, Compare | Within):
+                    self._stop(
+                        cursor.source.span(cursor.at, cursor.at + len(sign)),
+                        "two comparisons stand in one expression",
+                        _ONE_A_LINE,
+                    )
                 cursor.takes(sign)
                 right = self.read(_BINDS_COMPARISON)
+                if isinstance(right, Within):
+                    self._stop(right.span, "two comparisons stand in one expression", _ONE_A_LINE)
                 operator = {"≤": "<=", "≥": ">="}.get(sign, sign)
                 return Compare(operator, left, right, cursor.span(start))
         sign = cursor.text[cursor.at]
@@ -303,10 +321,22 @@ class ExpressionReader:
                 "a minus sign needs a blank on both sides",
                 "write ` - `",
             )
+        if sign == "^" and isinstance(left, Measured) and left.span.start == start:
+            self._signed_power(left)
         cursor.at += 1
         cursor.blanks()
         right = self.read(power - 1 if sign == "^" else power)
         return Binary({"·": "*", "×": "*"}.get(sign, sign), left, right, cursor.span(start))
+
+    def _signed_power(self, left: Measured) -> None:
+        """Refuse `-2 ^ 2`, which some read as 4 and some as -4."""
+        digits = left.quantity.text
+        if digits[:1] in "-−+":
+            self._stop(
+                left.span,
+                f"`{digits} ^` does not say whether the sign is raised too",
+                f"write `({digits}) ^ …` or `{digits[0]} ({digits[1:]} ^ …)`",
+            )
 
     def _word_tie(self, left: Expression, start: int, binding: int) -> Expression | None:
         cursor = self.cursor
@@ -355,6 +385,7 @@ class ExpressionReader:
             return Negative(self.read(_BINDS_SIGN), cursor.span(start))
         if cursor.text[start] == '"':
             return cursor.quoted()
+        self._glued()
         value = cursor.quantity(factor=True)
         if value is not None:
             return value
@@ -366,6 +397,18 @@ class ExpressionReader:
             )
         name = cursor.name("a name")
         return self._call(name, start) if cursor.takes("(") else name
+
+    def _glued(self) -> None:
+        """Refuse `5-3`: within an expression it may be meant as a range or as a difference."""
+        cursor = self.cursor
+        found = _GLUED.match(cursor.text, cursor.at, cursor.end)
+        if found and not NAME.match(cursor.text, cursor.at, cursor.end):
+            low, high = found[1], found[2]
+            self._stop(
+                found_span(cursor, found),
+                f"`{found[0]}` can be a range or a difference",
+                f"write `{low} - {high}` for the difference, `{low}–{high}` for the range",
+            )
 
     def _call(self, name: Name, start: int) -> Call:
         cursor = self.cursor

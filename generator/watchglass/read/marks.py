@@ -284,7 +284,8 @@ def _suppose(cursor: Cursor, start: int, verb_span: Span) -> syntax.VerbAct:
         )
     span = cursor.source.span
     outcome = syntax.Words(found[1], span(found.start(1), found.end(1)))
-    reason = syntax.Words(found[2].strip(), span(found.start(2), found.end(2)))
+    said = found[2].rstrip()
+    reason = syntax.Words(said, span(found.start(2), found.start(2) + len(said)))
     clauses += [
         syntax.Clause("is", outcome, outcome.span),
         syntax.Clause("because", reason, reason.span),

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from dataclasses import dataclass, field
 from typing import TYPE_CHECKING
 
@@ -34,6 +35,7 @@ FIELDS: dict[str, Field] = {
     "waste": Field(Shape.MAPPING, "waste streams by name with what goes into them"),
     "rules": Field(Shape.TEXT_OR_LIST, "local rules, in words"),
 }
+_COUNT = re.compile(r"[0-9]{1,6}")
 #: Baths every laboratory has. Common practice, no source.
 BATHS = ("ice", "ice-salt", "water-bath", "oil-bath", "sand-bath", "steam-bath", "heating-mantle")
 
@@ -109,7 +111,7 @@ def _quantity(
 def _count(node: YamlText | None, findings: list[Finding]) -> int | None:
     if node is None:
         return None
-    if node.text.isdigit() and len(node.text) <= 6:
+    if _COUNT.fullmatch(node.text):
         return int(node.text)
     findings.append(
         Finding(

@@ -10,7 +10,14 @@ from watchglass.base import dimensions as dim
 from watchglass.base.fields import Field, Record, Shape, read_fields
 from watchglass.base.findings import Finding, did_you_mean
 from watchglass.base.quantities import Kind
-from watchglass.base.scan import Fault, Found, read_quantity, scan_quantity, starts_quantity
+from watchglass.base.scan import (
+    Fault,
+    Found,
+    read_quantity,
+    scan_quantity,
+    starts_quantity,
+    unknown_unit,
+)
 from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
 from watchglass.resolve.model import (
@@ -72,7 +79,10 @@ class MaterialReader:
         """Read one entry of `materials:`; what cannot be read is unknown, with a finding."""
         name, value = entry.key.text, entry.value
         if isinstance(value, YamlText):
-            composition, stock = self.described(value)
+            said = bool(value.text.strip())
+            composition, stock = (
+                self.described(value) if said else self._unsaid(name, entry.key.span)
+            )
             return Material(
                 name=name,
                 written=value.text,
@@ -116,6 +126,10 @@ class MaterialReader:
     def _composition(self, entry: YamlEntry, record: Record) -> tuple[Composition, str, str]:
         name = entry.key.text
         is_ = record.text("is")
+        for field in ("contains", "one-of"):
+            if (node := record.mapping(field)) is not None and not node.entries:
+                self._unsaid(name, record.keys[field])
+                return Unknown(name, declared=False), "", ""
         if (contains := record.mapping("contains")) is not None:
             written = ", ".join(e.key.text for e in contains)
             return self._contains(contains, record.text("in")), "", written
@@ -137,13 +151,17 @@ class MaterialReader:
             described, stock = self.described(is_)
             return described, stock, is_.text
         if record.keys and not (set(record.keys) - set(record.values)):
-            self._add(
-                codes.FIELD_MISSING,
-                entry.key.span,
-                f"`{name}` does not say what it is",
-                "add `is: 3.0 M hydrochloric acid` or `contains: {…}`",
-            )
+            self._unsaid(name, entry.key.span)
         return Unknown(name, declared=False), "", ""
+
+    def _unsaid(self, name: str, span: Span) -> tuple[Composition, str]:
+        self._add(
+            codes.FIELD_MISSING,
+            span,
+            f"`{name}` does not say what it is",
+            "add `is: 3.0 M hydrochloric acid` or `contains: {…}`",
+        )
+        return Unknown(name, declared=False), ""
 
     def described(self, node: YamlText, *, seen: tuple[str, ...] = ()) -> tuple[Composition, str]:
         """Read `[strength] substance [in solvent]` or a stock's name.
@@ -172,12 +190,22 @@ class MaterialReader:
             return unknown, ""
         strength = self._strength(node, scanned.quantity)
         start = scanned.end + len(text[scanned.end :]) - len(text[scanned.end :].lstrip())
+        if not scanned.measured and (fault := self._misspelt_unit(text, start)):
+            self.findings.append(texts.fault_at(node, fault))
+            return unknown, ""
         found = self._substance_in(node, start) if text[start:] else None
         if not text[start:]:
             self._nothing(node)
         if strength is None or found is None:
             return unknown, ""
         return Solution(strength, *found), ""
+
+    def _misspelt_unit(self, text: str, start: int) -> Fault | None:
+        """Tell a unit that is none, in `3.0 mollar hydrochloric acid`, from one that is missing."""
+        word, _, rest = text[start:].partition(" ")
+        if self.catalogue.find(text[start:]) or not self.catalogue.find(rest):
+            return None
+        return unknown_unit(word, start)
 
     def _pure(self, node: YamlText, substance: Substance, solvent: Substance) -> Composition:
         written = node.text.casefold()
@@ -271,7 +299,7 @@ class MaterialReader:
             codes.SUBSTANCE_UNKNOWN,
             node.part(start, end),
             f"`{word}` is not in the catalogue",
-            did_you_mean(word, self.catalogue.words())
+            did_you_mean(word, (w for w in self.catalogue.words() if w != word))
             or "add it to a file in `substances/`, or name it as the catalogue does",
         )
 
@@ -280,7 +308,15 @@ class MaterialReader:
         if isinstance(read, Fault):
             self.findings.append(texts.fault_at(node, read))
             return None
-        if read.dimension not in (dim.MASS, dim.VOLUME, dim.AMOUNT, dim.COUNT, dim.NUMBER):
+        if read.dimension == dim.NUMBER:
+            self._add(
+                codes.UNIT_MISSING,
+                node.part(0, len(read.text)),
+                f"`{read.text}` has no unit",
+                f"write what a station is handed, as in `{read.text} g`",
+            )
+            return None
+        if read.dimension not in (dim.MASS, dim.VOLUME, dim.AMOUNT, dim.COUNT):
             self._add(
                 codes.DIMENSION_WRONG,
                 node.part(0, len(read.text)),
@@ -376,7 +412,7 @@ class MaterialReader:
             if rest.strip():
                 self._add(
                     codes.MATERIAL_NOT_READ,
-                    node.part(at, len(node.text)),
+                    node.part(at + len(rest) - len(rest.lstrip()), len(node.text)),
                     f"`{rest.strip()}` cannot stand here",
                     "write `as: 1 % w/v in ethanol`",
                 )

@@ -6,7 +6,9 @@ import re
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
+from watchglass.base import codes
 from watchglass.base.fields import Record, Shape, read_fields, unfit
+from watchglass.base.findings import Finding
 from watchglass.base.yaml import YamlMapping, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.ware import read_vessel
@@ -22,13 +24,13 @@ from watchglass.resolve.typing import Typer
 if TYPE_CHECKING:
     from collections.abc import Mapping
 
-    from watchglass.base.findings import Finding
+    from watchglass.base.spans import Span
     from watchglass.base.yaml import YamlEntry, YamlNode
     from watchglass.catalogue.catalogue import Catalogue
     from watchglass.read.syntax import ProcedureSyntax
     from watchglass.resolve.laboratory import Laboratory
 
-_FAMILY = re.compile(r"(\d+)\s*[-–]\s*(\d+)")
+_FAMILY = re.compile(r"(\d{1,6})\s*[-–]\s*(\d{1,6})")
 MOST_MEMBERS = 200
 
 
@@ -128,10 +130,13 @@ class _Resolver:
             findings.append(unfit(member.value, f"`{name}`", Shape.TEXT))
             return
         found = _FAMILY.fullmatch(member.key.text)
-        if found and int(found[1]) <= int(found[2]) < int(found[1]) + MOST_MEMBERS:
+        if found is None:
+            members = [f"{name}-{member.key.text}"]
+        elif int(found[1]) <= int(found[2]) < int(found[1]) + MOST_MEMBERS:
             members = [f"{name}-{n}" for n in range(int(found[1]), int(found[2]) + 1)]
         else:
-            members = [f"{name}-{member.key.text}"]
+            findings.append(_family_unfit(member.key))
+            return
         first, *others = members
         self._vessel(first, name, entry, member.value, scope, vessels, findings)
         for other in others:
@@ -158,7 +163,7 @@ class _Resolver:
         if not scope.declare(name, "vessel", entry.key.span):
             return
         type_, found = read_vessel(value, self.catalogue.glassware)
-        findings += found
+        findings += found if value.text.strip() else (_vessel_unsaid(name, entry.key.span),)
         vessels[name] = model.Vessel(
             name=name, type=type_, written=value.text, family=family, span=entry.key.span
         )
@@ -210,3 +215,21 @@ class _Resolver:
     def _lines(self, node: YamlNode | None, findings: list[Finding]) -> tuple[YamlText, ...]:
         del findings
         return texts.words(node)
+
+
+def _family_unfit(key: YamlText) -> Finding:
+    return Finding(
+        code=codes.NAME_UNFIT,
+        span=key.span,
+        message=f"`{key.text}` numbers no family of vessels",
+        help=f"write the first and the last number, as in `1-5`; at most {MOST_MEMBERS} of them",
+    )
+
+
+def _vessel_unsaid(name: str, span: Span) -> Finding:
+    return Finding(
+        code=codes.FIELD_MISSING,
+        span=span,
+        message=f"`{name}` does not say what vessel it is",
+        help="write type and size, as in `conical flask 100 mL`",
+    )

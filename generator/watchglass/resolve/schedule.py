@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
@@ -23,6 +24,7 @@ FIELDS: dict[str, Field] = {
     "stations": Field(Shape.TEXT, "stations laid out for one section"),
     "note": Field(Shape.TEXT, "a remark"),
 }
+_COUNT = re.compile(r"[0-9]{1,5}")
 
 
 class Slot(NamedTuple):
@@ -74,7 +76,7 @@ def _slot(record: Record, week: int, findings: list[Finding]) -> Slot:
 def _count(node: YamlText | None, findings: list[Finding]) -> int | None:
     if node is None:
         return None
-    if node.text.isdigit() and 0 < int(node.text[:9]) < 100_000:
+    if _COUNT.fullmatch(node.text) and int(node.text) > 0:
         return int(node.text)
     findings.append(
         Finding(

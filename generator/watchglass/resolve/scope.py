@@ -154,7 +154,19 @@ class Scope:
     def _unknown(self, name: Name, allowed: tuple[str, ...]) -> None:
         if self.broken:
             return
-        known = self._of(allowed) or list(self.kinds)
+        known = self._known(allowed)
+        self.findings.append(
+            Finding(
+                code=codes.NAME_UNKNOWN,
+                span=name.span,
+                message=f"`{name.text}` is declared nowhere",
+                help=did_you_mean(name.text, known or self.kinds) or _how(allowed, known),
+            )
+        )
+
+    def _known(self, allowed: tuple[str, ...]) -> list[str]:
+        """Give the names that could stand in a place."""
+        known = self._of(allowed)
         if "stream" in allowed:
             known += self.laboratory.streams
         if "bath" in allowed:
@@ -163,23 +175,26 @@ class Scope:
             known += self.catalogue.aids
         if "indicator" in allowed:
             known += self.catalogue.indicators
-        first = KINDS[allowed[0]] if allowed else "a name"
-        where = {
-            "material": "`materials:`",
-            "vessel": "`vessels:`",
-            "equipment": "`equipment:`",
-            "reaction": "`reactions:`",
-        }.get(allowed[0] if allowed else "")
-        self.findings.append(
-            Finding(
-                code=codes.NAME_UNKNOWN,
-                span=name.span,
-                message=f"`{name.text}` is declared nowhere",
-                help=did_you_mean(name.text, known)
-                or (
-                    f"declare it under {where}"
-                    if where
-                    else f"name {first}: " + ", ".join(f"`{k}`" for k in known[:8])
-                ),
-            )
-        )
+        return known
+
+
+_DECLARED = {
+    "material": "declare it under `materials:`",
+    "vessel": "declare it under `vessels:`",
+    "equipment": "declare it under `equipment:`",
+    "reaction": "declare it under `reactions:`",
+}
+_MADE = {
+    "label": "name a state that is labelled, as with `{label end}`",
+    "record": "name a record that stands before it, as in `{? m: mass in g}`, or write a quantity",
+}
+
+
+def _how(allowed: tuple[str, ...], known: list[str]) -> str:
+    """Say how a name that is nothing near to any known one comes to be."""
+    first = allowed[0]
+    if first in _DECLARED:
+        return _DECLARED[first]
+    if known:
+        return f"name {KINDS[first]}: " + ", ".join(f"`{name}`" for name in known[:8])
+    return _MADE.get(first, f"name {KINDS[first]}")
