@@ -9,7 +9,6 @@ from typing import TYPE_CHECKING, NamedTuple
 from watchglass.base.findings import Severity
 from watchglass.base.spans import Source
 from watchglass.judge.accept import settle
-from watchglass.publish.model import InstructorPage, StudentPage
 from watchglass.publish.pages import Neighbours, instructor_page, student_page
 from watchglass.shell.pipeline import Analysis, Judged, Surroundings, analyse, analyse_procedure
 from watchglass.shell.pipeline import surroundings as read_surroundings
@@ -19,6 +18,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping
 
     from watchglass.base.findings import Finding
+    from watchglass.publish.model import InstructorPage, StudentPage
     from watchglass.resolve import model
 
 GOLDEN = Path(__file__).parent / "golden" / "procedures"

@@ -69,6 +69,10 @@ _EXAMPLE = {
     "point": "pH 10",
     "vessel": "flask",
     "stream": "aqueous-acid",
+    "thing": "paper",
+    "ware": "cylinder",
+    "reaction": "ester",
+    "reagent": "alkali",
 }
 
 
@@ -252,9 +256,7 @@ class ActReader:
         for word in needed:
             if word not in given:
                 takes = VERBS[act.verb].clauses[word].split("|")[0]
-                example = {"reagent": "a material", "point": "pH 10"}.get(
-                    takes, _EXAMPLE.get(takes, "…")
-                )
+                example = _EXAMPLE.get(takes, "…")
                 self._add(
                     codes.CLAUSE_MISSING,
                     act.verb_span,

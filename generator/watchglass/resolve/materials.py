@@ -188,11 +188,11 @@ class MaterialReader:
             if isinstance(scanned, Fault):
                 self.findings.append(texts.fault_at(node, scanned))
             return unknown, ""
-        strength = self._strength(node, scanned.quantity)
         start = scanned.end + len(text[scanned.end :]) - len(text[scanned.end :].lstrip())
         if not scanned.measured and (fault := self._misspelt_unit(text, start)):
             self.findings.append(texts.fault_at(node, fault))
             return unknown, ""
+        strength = self._strength(node, scanned.quantity)
         found = self._substance_in(node, start) if text[start:] else None
         if not text[start:]:
             self._nothing(node)
