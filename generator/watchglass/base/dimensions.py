@@ -43,9 +43,14 @@ class Dimension(NamedTuple):
         return self.exponents == _NOUGHT
 
     @property
+    def si(self) -> str:
+        """Its SI units, as `kg·m^-1·s^-2`; `1` for a plain number."""
+        return _spell(self.exponents)
+
+    @property
     def words(self) -> str:
         """Words for a finding; a rare dimension is spelt out by its SI units."""
-        return self.name or "a quantity in " + _spell(self.exponents)
+        return self.name or "a quantity in " + self.si
 
 
 def _spell(exponents: tuple[int, ...]) -> str:

@@ -35,14 +35,14 @@ _TOLERANCE = re.compile(r"\s*(±|\+/-)\s*")
 _SYMBOL = re.compile(r"[A-Za-zµμÅ°º˚℃℉%‰][A-Za-zµμ]*")
 #: The degree sign, and two that look like it.
 _DEGREES = "°º˚"
-_EXPONENT = re.compile(r"\^\(?(-?\d)\)?|([⁻]?[²³¹⁴])")
+_EXPONENT = re.compile(r"\^(?:\((-?\d)\)|(-?\d))|([⁻]?[²³¹⁴])")
 _BASIS = re.compile(r"\s*\(?\s*(w/w|w/v|v/v|m/m|m/v|wt|vol)\b(?:\s*\))?")
 _GROUPED = re.compile(r"(?:[ \xa0\u2009\u202f'’]\d{3}(?!\d))+(?:[.,]\d+)?")
 _COMMA = re.compile(r"\d{1,3}(?:,\d{3})+(?![\d,])(?:\.\d+)?|\d+(?:[., ]\d{3})*,\d+")
 _NAME_GOES_ON = re.compile(r"[\w-]")
 _SUPERSCRIPT = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻⁺", "0123456789-+")
 _VULGAR = re.compile(r"\d*[½⅓¼¾⅔⅛]")
-_INTO = re.compile(r"\s+[^\W\d_%(]|\s*[%°]")
+_INTO = re.compile(r"\s+[^\W\d_%(]|\s*[%°]|\s+1(?![\w.])")
 _WORDS = re.compile(r"([^\W\d_][\w-]*)(?: [^\W\d_][\w-]*)?")
 _LONGEST = 40
 #: No quantity is longer than this many characters; only so much is looked at.
@@ -445,7 +445,7 @@ def _atom(text: str, at: int) -> tuple[Unit, int] | None:
         return None  # `m2`, `g3`: not a unit and an exponent
     if (raised := _EXPONENT.match(text, after)) is not None:
         symbol = text[at : raised.end()]
-        lifted = units.power(unit, units.exponent_of(raised[1] or raised[2]), symbol=symbol)
+        lifted = units.power(unit, units.exponent_of(raised[raised.lastindex or 0]), symbol=symbol)
         if lifted is not None:
             return lifted, raised.end()
     return unit, after

@@ -64,6 +64,34 @@ STRENGTHS: dict[str, Unit] = {
     "v/v": Unit("% v/v", dim.VOLUME_FRACTION, 1e-2),
 }
 
+#: What a computed figure is shown in where its author names no unit. Customary at the bench.
+CUSTOMARY: dict[Dimension, str] = {
+    dim.SHARE: "%",
+    dim.MASS_FRACTION: "% w/w",
+    dim.VOLUME_FRACTION: "% v/v",
+    dim.MASS: "g",
+    dim.VOLUME: "mL",
+    dim.AMOUNT: "mmol",
+    dim.CONCENTRATION: "mol/L",
+    dim.MASS_CONCENTRATION: "g/mL",
+    dim.MOLAR_MASS: "g/mol",
+    dim.MOLALITY: "mol/kg",
+    dim.TEMPERATURE: "°C",
+    dim.DIFFERENCE: "K",
+    dim.TIME: "min",
+    dim.PRESSURE: "kPa",
+    dim.RATE: "mL/min",
+    dim.ROTATION: "rpm",
+    dim.FREQUENCY: "Hz",
+    dim.LENGTH: "cm",
+    dim.AREA: "cm^2",
+    dim.ENERGY: "kJ",
+    dim.MOLAR_ENERGY: "kJ/mol",
+    dim.POWER: "W",
+    dim.CURRENT: "mA",
+    dim.VOLTAGE: "V",
+}
+
 #: Spellings that are refused, with what to write.
 REFUSED: dict[str, str] = {
     "C": "°C",
@@ -135,6 +163,14 @@ REFUSED: dict[str, str] = {
     "inches": "in",
     "percent": "%",
 }
+
+
+def customary(dimension: Dimension) -> str:
+    """Give the unit a computed figure is shown in: never a bare number for what has a dimension."""
+    if dimension.plain and dimension not in CUSTOMARY:
+        return ""
+    return CUSTOMARY.get(dimension) or dimension.si
+
 
 _SUPERSCRIPTS = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
 

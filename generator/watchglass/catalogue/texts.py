@@ -73,6 +73,7 @@ EXAMPLES = {
     "a temperature difference": "20 K",
     "a rate of flow": "2 mL/min",
     "a pressure": "20 mbar",
+    "an energy per amount": "-56 kJ/mol",
 }
 
 

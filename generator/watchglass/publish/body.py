@@ -11,10 +11,13 @@ import re
 from dataclasses import dataclass, field
 from typing import TYPE_CHECKING
 
-from watchglass.base.figures import shown
+from watchglass.base import dimensions as dim
+from watchglass.base.figures import MOST_FIGURES, shown
+from watchglass.base.quantities import Kind
+from watchglass.base.units import customary
 from watchglass.judge.sets import leaves_the_set, resolve_link
 from watchglass.publish import model as m
-from watchglass.publish.text import NBSP, joined, unit_words, value_words
+from watchglass.publish.text import NBSP, joined, quantity_words, unit_words, value_words
 from watchglass.publish.wording import act_words, mark_words
 from watchglass.read import syntax
 from watchglass.read.expressions import Binary, Call, Compare, Held, Negative
@@ -228,18 +231,28 @@ class BodyBuilder:
             and "yield" not in self.procedure.head.show
         ):
             return (m.Said("figure", (m.Run("(see your instructor)"),)),)
-        words = self._computed(self.evaluator.value(expression), unit)
+        words = self._computed(expression, unit)
         return (m.Said("figure", words or (m.Run("not assessed"),)),)
 
-    def _computed(self, found: Value | NotKnown, unit: str) -> tuple[m.Words, ...] | None:
+    def _computed(self, expression: Expression, unit: str) -> tuple[m.Words, ...] | None:
+        """Set the value of an expression; a quantity that stands alone as its author wrote it."""
+        if isinstance(expression, syntax.Measured):
+            quantity = expression.quantity
+            if quantity.unit.symbol and unit in ("", quantity.unit.symbol):
+                return quantity_words(quantity)
+        return self._figures(self.evaluator.value(expression), unit or _unit_of(expression))
+
+    def _figures(self, found: Value | NotKnown, unit: str) -> tuple[m.Words, ...] | None:
         if isinstance(found, NotKnown):
             return None
+        unit = unit or customary(found.dimension)
         number = in_unit(found, "" if unit == "1" else unit)
         if number is None:
             return None
-        if unit in ("", "1"):
-            return value_words(shown(number, found.figures), unit if found.dimension.plain else "")
-        return value_words(shown(number, found.figures), unit)
+        digits = shown(number, found.figures)
+        if found.dimension == dim.NUMBER and found.figures >= MOST_FIGURES and "." in digits:
+            digits = digits.rstrip("0").rstrip(".")  # numbers alone are exact: 2 × 3 is 6
+        return value_words(digits, "" if unit == "1" else unit)
 
     def _record(self, act: syntax.RecordAct, step: int) -> tuple[m.Words, ...]:
         self._blanks += 1
@@ -249,20 +262,34 @@ class BodyBuilder:
             f"record-{name or self._blanks}",
             act.label,
             unit_words(unit),
-            max(1, self.runs.get(step, 1)),
+            max(1, self.runs.get(step, 1)) * _ends(act.expression),
         )
         if not self.instructor:
             return (blank,)
-        found: Value | NotKnown = NotKnown("measured")
-        if act.expression is not None:
-            found = self.evaluator.value(act.expression)
         if name:
-            self.evaluator.records[name] = found
+            self.evaluator.records[name] = (
+                self.evaluator.value(act.expression) if act.expression else NotKnown("measured")
+            )
         if act.expression is None:
             return (m.ExpectedBlank(blank, (m.Run("measured, nothing expected"),)),)
         if isinstance(act.expression, syntax.Words):
             return (m.ExpectedBlank(blank, (m.Run(act.expression.text),)),)
-        return (m.ExpectedBlank(blank, self._computed(found, unit)),)
+        return (m.ExpectedBlank(blank, self._computed(act.expression, unit)),)
+
+
+def _ends(expression: Expression | None) -> int:
+    """Count the blanks that a value takes: two for a range."""
+    ranged = isinstance(expression, syntax.Measured) and expression.quantity.kind is Kind.RANGE
+    return 2 if ranged else 1
+
+
+def _unit_of(expression: Expression) -> str:
+    """Give the unit that an expression itself names: of `convert(v, mL)`."""
+    match expression:
+        case Call(syntax.Name("convert"), (_, unit), _):
+            return unit.span.text
+        case _:
+            return ""
 
 
 def _calls(node: Expression, names: frozenset[str]) -> bool:

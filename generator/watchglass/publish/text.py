@@ -16,7 +16,7 @@ if TYPE_CHECKING:
 
 NBSP = "\N{NO-BREAK SPACE}"
 _JOIN = "\N{WORD JOINER}"
-_POWER = re.compile(r"\^\(?(-?\d+)\)?|([⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+)")
+_POWER = re.compile(r"\^(?:\((-?\d+)\)|(-?\d+))|([⁻]?[⁰¹²³⁴⁵⁶⁷⁸⁹]+)")
 _PLAIN = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
 _ALIKE = {
     "ml": "mL",
@@ -46,7 +46,7 @@ def unit_words(symbol: str) -> tuple[Words, ...]:
     for found in _POWER.finditer(symbol):
         if found.start() > at:
             words.append(Run(symbol[at : found.start()]))
-        words.append(Raised((found[1] or found[2].translate(_PLAIN)).replace("-", "−")))
+        words.append(Raised(found[found.lastindex or 0].translate(_PLAIN).replace("-", "−")))
         at = found.end()
     if at < len(symbol):
         words.append(Run(symbol[at:]))

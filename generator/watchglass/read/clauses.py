@@ -134,7 +134,9 @@ def _value(cursor: Cursor, word: str) -> syntax.ClauseValue:
         if measured is None:
             cursor.stop(
                 codes.MARK_NOT_READ,
-                cursor.source.span(start, found.end()) if cursor.at >= cursor.end else cursor.rest(),
+                cursor.source.span(start, found.end())
+                if cursor.at >= cursor.end
+                else cursor.rest(),
                 "`pH` needs a number after a blank",
                 "write it as in `to pH 10`",
             )

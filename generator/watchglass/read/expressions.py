@@ -32,7 +32,7 @@ _BINDS_COMPARISON, _BINDS_AFTER, _BINDS_IN, _BINDS_SIGN = 2, 4, 6, 30
 _GLUED = re.compile(r"(\d[\d.]*)-(\d[\d.]*)")
 _ONE_A_LINE = "write one to a line"
 #: A last word, an arrow or another sign.
-_LAST = re.compile(r"(?:[^\W_](?:[\w-]*[^\W_])?|->|\S)\Z")
+_LAST = re.compile(r"(?:[^\W_](?:[\w-]*[^\W_])?|->|[<>]=|\S)\Z")
 _LONGEST_WORD = 60
 _WORD_TIE = re.compile(r"(in|on|after|of)\b")
 
@@ -415,7 +415,7 @@ class ExpressionReader:
         arguments: list[Expression] = []
         if not cursor.takes(")"):
             while True:
-                arguments.append(self._argument(name))
+                arguments.append(self._argument(name, len(arguments)))
                 if cursor.takes(")"):
                     break
                 if not cursor.takes(","):
@@ -428,10 +428,10 @@ class ExpressionReader:
                     )
         return Call(name, tuple(arguments), cursor.span(start))
 
-    def _argument(self, name: Name) -> Expression:
-        """Read an argument; of `molar-mass`, `balance`, `moles` formulas and equations stay words."""
+    def _argument(self, name: Name, place: int) -> Expression:
+        """Read an argument; an equation of `balance` and the unit of `convert` stay words."""
         cursor = self.cursor
-        if name.text == "balance":
+        if name.text == "balance" or (name.text == "convert" and place == 1 and not cursor.done):
             return self._raw_words()
         unit = self.unit_follows
         self.unit_follows = False
@@ -453,6 +453,12 @@ class ExpressionReader:
                 break
             depth += {"(": 1, ")": -1}.get(char, 0)
             cursor.at += 1
+        if not cursor.text[start : cursor.at].strip():
+            self._stop(
+                cursor.rest(),
+                f"something is expected{cursor.here()}",
+                "write it, or take the `,` out",
+            )
         return Words(cursor.text[start : cursor.at].strip(), cursor.span(start))
 
     def _stop(self, span: Span, message: str, help_: str | None = None) -> NoReturn:

@@ -22,7 +22,7 @@ _HOLDERS = ("vessel",)
 _WARE = ("vessel", "equipment", "aid")
 _THINGS = ("vessel", "equipment", "aid", "bath", "material")
 _REAGENTS = ("material", "aid")
-_PORTIONS = (dim.MASS, dim.VOLUME, dim.AMOUNT, dim.COUNT)
+PORTIONS = (dim.MASS, dim.VOLUME, dim.AMOUNT, dim.COUNT)
 _SETTINGS = (
     dim.TEMPERATURE,
     dim.RATE,
@@ -104,7 +104,7 @@ class ActReader:
             return model.Portion(amount.material.text, None, amount.measure, per, amount.span)
         quantity = amount.measure.quantity
         span = amount.measure.span
-        fits = quantity.dimension in _PORTIONS
+        fits = quantity.dimension in PORTIONS
         bare = quantity.dimension == dim.NUMBER
         if bare and kind == "material":
             self._add(

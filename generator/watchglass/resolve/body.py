@@ -14,9 +14,11 @@ from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding, Related
 from watchglass.base.scan import Found, scan_quantity
 from watchglass.read import syntax
+from watchglass.read.expressions import Compare, Within
 from watchglass.resolve import model, prose
 from watchglass.resolve.acts import ActReader
 from watchglass.resolve.charges import charge_table
+from watchglass.resolve.scope import KINDS
 from watchglass.resolve.typing import Typer
 
 if TYPE_CHECKING:
@@ -255,8 +257,7 @@ class BodyReader:
                 return None
             steps += range(first, last + 1)
         for new, old in act.exchanges:
-            self.scope.take(new, ("vessel", "material"))
-            self.scope.take(old, ("vessel", "material"))
+            self._exchanged(new, old)
         exchanges = tuple((new.text, old.text) for new, old in act.exchanges)
         return model.Again(
             tuple(dict.fromkeys(steps)),
@@ -267,6 +268,18 @@ class BodyReader:
             walk.step,
             act.span,
         )
+
+    def _exchanged(self, new: syntax.Name, old: syntax.Name) -> None:
+        """Check that two names stand for things of one kind."""
+        kinds = ("vessel", "material")
+        one, other = self.scope.take(new, kinds), self.scope.take(old, kinds)
+        if one and other and one != other:
+            self._add(
+                codes.NAME_OF_OTHER_KIND,
+                new.span,
+                f"`{new.text}` is {KINDS[one]}, `{old.text}` {KINDS[other]}: they cannot be exchanged",
+                "exchange a vessel for a vessel, a material for a material",
+            )
 
     def _number(self, word: str, item: syntax.StepRange, walk: Walk) -> int | None:
         """Give the number of a step named by number or label; only earlier steps can be repeated."""
@@ -283,7 +296,15 @@ class BodyReader:
             return None
         if word in self.labels:
             self.scope.used.add(word)
-            return self.labels[word]
+            if 0 < self.labels[word] <= walk.step:
+                return self.labels[word]
+            self._add(
+                codes.STEP_UNKNOWN,
+                item.span,
+                f"`{word}` labels no step before this place",
+                "name a step that stands before, by its number or its label",
+            )
+            return None
         self.scope.take(syntax.Name(word, item.span), ("label",))
         return None
 
@@ -292,7 +313,16 @@ class BodyReader:
     def _value(
         self, expression: Expression, unit: syntax.Name | None, span: Span
     ) -> Dimension | None:
-        typed = Typer(self.scope, self.record_dimensions).type(expression)
+        typer = Typer(self.scope, self.record_dimensions)
+        if isinstance(expression, Compare | Within):
+            self._add(
+                codes.EXPRESSION_NOT_READ,
+                expression.span,
+                "a comparison has no figure to show",
+                "move it to a line of `expect:` in the front matter",
+            )
+            return None
+        typed = typer.type(expression)
         if unit is not None and typed is not None:
             self._unit_fits(typed, unit)
         del span
@@ -304,12 +334,21 @@ class BodyReader:
         else:
             found = scan_quantity("1 " + unit.text, 0)
             wanted = found.quantity.dimension if isinstance(found, Found) else None
-        if wanted is not None and wanted.exponents != typed.exponents:
+        if wanted is None:
+            return
+        if wanted.exponents != typed.exponents:
             self._add(
                 codes.DIMENSION_WRONG,
                 unit.span,
                 f"the value is {typed.words}; `{unit.text}` is the unit of {wanted.words}",
                 "name a unit of the value, or mend the expression",
+            )
+        elif wanted == dim.TEMPERATURE and typed == dim.DIFFERENCE:
+            self._add(
+                codes.DIMENSION_WRONG,
+                unit.span,
+                f"the value is {typed.words}; `{unit.text}` is the unit of {wanted.words}",
+                "write `in K` for a difference",
             )
 
     def _record(self, act: syntax.RecordAct, walk: Walk) -> None:

@@ -10,7 +10,7 @@ from watchglass.base.findings import Finding
 from watchglass.base.scan import Fault, read_quantity
 from watchglass.read import syntax
 from watchglass.resolve import model
-from watchglass.resolve.acts import ActReader
+from watchglass.resolve.acts import PORTIONS, ActReader
 
 if TYPE_CHECKING:
     from watchglass.base.findings import Code
@@ -95,8 +95,33 @@ def _material(cell: syntax.Cell, scope: Scope) -> tuple[syntax.Name, str] | None
             "write the head as `acid / mL`",
         )
         return None
-    name = syntax.Name(found[1], cell.span)
-    return (name, found[2]) if scope.take(name, ("material", "aid")) else None
+    name = syntax.Name(found[1], _part(cell, found.span(1)))
+    if scope.take(name, ("material", "aid")) is None:
+        return None
+    unit = read_quantity(f"1 {found[2]}", measures=scope.catalogue.measures)
+    if isinstance(unit, Fault):
+        _add(scope, unit.code, _part(cell, found.span(2)), unit.message, unit.help)
+        return None
+    if unit.dimension not in PORTIONS:
+        _add(
+            scope,
+            codes.DIMENSION_WRONG,
+            _part(cell, found.span(2)),
+            f"`{found[2]}` is the unit of {unit.dimension.words};"
+            " a mass, a volume, an amount or a count belongs here",
+            f"write the head as `{found[1]} / mL`",
+        )
+        return None
+    return name, found[2]
+
+
+def _part(cell: syntax.Cell, at: tuple[int, int]) -> Span:
+    """Give the place of part of a cell's words, where the cell is words alone."""
+    match cell.children:
+        case (syntax.Text(text, span),) if text == text.strip():
+            return span.part(*at)
+        case _:
+            return cell.span
 
 
 def _portion(

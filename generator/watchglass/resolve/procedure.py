@@ -12,7 +12,7 @@ from watchglass.base.findings import Finding
 from watchglass.base.yaml import YamlMapping, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.ware import read_vessel
-from watchglass.read.expressions import read_expression
+from watchglass.read.expressions import Compare, Within, read_expression
 from watchglass.resolve import model
 from watchglass.resolve.body import BodyReader
 from watchglass.resolve.head import FIELDS, read_acceptances, read_head, read_intended
@@ -207,7 +207,9 @@ class _Resolver:
             end = text_start + len(node.text) if raw == node.text else node.span.end
             expression, found = read_expression(source, text_start, end, self.catalogue.measures)
             findings += found
-            if expression is not None:
+            if expression is not None and not isinstance(expression, Compare | Within):
+                findings.append(_no_expectation(expression.span))
+            elif expression is not None:
                 Typer(scope, body.record_dimensions).type(expression)
                 expectations.append(model.Expectation(expression, node.text, node.span))
         return tuple(expectations)
@@ -232,4 +234,13 @@ def _vessel_unsaid(name: str, span: Span) -> Finding:
         span=span,
         message=f"`{name}` does not say what vessel it is",
         help="write type and size, as in `conical flask 100 mL`",
+    )
+
+
+def _no_expectation(span: Span) -> Finding:
+    return Finding(
+        code=codes.EXPRESSION_NOT_READ,
+        span=span,
+        message="an expectation compares a value with another, or says in which range it lies",
+        help="write it as in `benzocaine in A >= 95 %` or `pH of A in 9–11`",
     )

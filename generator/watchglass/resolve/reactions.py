@@ -26,6 +26,7 @@ from watchglass.resolve.model import (
     Secret,
     Solution,
     Species,
+    Unknown,
 )
 
 if TYPE_CHECKING:
@@ -119,6 +120,8 @@ class ReactionReader:
                 return Species(
                     term.coefficient, term.text, held[0].formula, held[0], material.name, span
                 )
+            self._no_single(material, held, span)
+            return None
         substance = self.catalogue.find(term.text)
         if substance is not None:
             holder = self._holder(substance)
@@ -146,6 +149,20 @@ class ReactionReader:
                 near or "write its formula, or add it to a file in `substances/`",
             )
         return None
+
+    def _no_single(self, material: Material, held: tuple[Substance, ...], span: Span) -> None:
+        """Report a material that brings several substances, or none that is known."""
+        if isinstance(material.composition, Unknown) and not material.composition.declared:
+            return  # it could not be read, and a finding says so
+        several = f"`{material.name}` holds several substances"
+        self._add(
+            codes.SPECIES_UNKNOWN,
+            span,
+            several if held else f"what `{material.name}` holds is not known",
+            "name the one that reacts: " + ", ".join(f"`{s.key}`" for s in held)
+            if held
+            else "name the substance itself, or write its formula",
+        )
 
     def _by_formula(self, term: Term, formula: Formula, span: Span) -> Species | None:
         """Bind a bare formula to the one material whose substance has just these atoms."""

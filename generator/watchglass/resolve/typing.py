@@ -11,6 +11,7 @@ from typing import TYPE_CHECKING, NamedTuple
 from watchglass.base import codes
 from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding, did_you_mean
+from watchglass.base.scan import Found, scan_quantity, unknown_unit
 from watchglass.read.expressions import (
     After,
     Binary,
@@ -133,6 +134,8 @@ class Typer:
                 self.scope.take(thing, ("material", "substance"))
             case Held():
                 self._held(node)
+            case Measured(quantity, span):
+                self._unfit(span, f"`{quantity.text}` does not say of what", "moles")
             case _:
                 self.type(node)
 
@@ -163,7 +166,7 @@ class Typer:
     def _binary(self, node: Binary) -> Dimension | None:
         left, right = self.type(node.left), self.type(node.right)
         if node.operator == "^":
-            return self._power(node, left)
+            return self._power(node, left, right)
         if left is None or right is None:
             return None
         if node.operator in "+-":
@@ -201,8 +204,13 @@ class Typer:
         self._clash(span, f"{left.words} and {right.words} {verb}", help_)
         return False
 
-    def _power(self, node: Binary, left: Dimension | None) -> Dimension | None:
+    def _power(
+        self, node: Binary, left: Dimension | None, right: Dimension | None
+    ) -> Dimension | None:
         exponent = node.right
+        if right is not None and not right.plain:
+            self._clash(node.right.span, f"{right.words} is no exponent")
+            return None
         sign = 1
         if isinstance(exponent, Negative):
             sign, exponent = -1, exponent.operand
@@ -242,6 +250,8 @@ class Typer:
             return function.gives
         if variadic:
             return self._alike(node)
+        if name == "convert":
+            return self._converted(node)
         first: Dimension | None = None
         for argument, kind in zip(node.arguments, function.arguments, strict=True):
             typed = self._argument(argument, kind, name)
@@ -254,7 +264,7 @@ class Typer:
         if name == "sqrt":
             halves = tuple(e // 2 for e in first.exponents)
             return dim.named(halves) if all(e % 2 == 0 for e in first.exponents) else None
-        return first if name in ("round", "convert") else None
+        return first if name == "round" else None
 
     def _alike(self, node: Call) -> Dimension | None:
         first: Dimension | None = None
@@ -285,9 +295,22 @@ class Typer:
                     )
             case "value":
                 return self.type(node)
-            case _:  # an equation or a unit: words, read where they are evaluated
+            case _:  # an equation: words, read where they are evaluated
                 pass
         return None
+
+    def _converted(self, node: Call) -> Dimension | None:
+        """Type `convert(v, mL)`: the unit is one of the list, and of the value's dimension."""
+        value, unit = node.arguments
+        typed = self.type(value)
+        found = scan_quantity("1 " + unit.span.text, 0)
+        whole = isinstance(found, Found) and found.measured
+        if not isinstance(found, Found) or not whole or found.end != len(unit.span.text) + 2:
+            fault = unknown_unit(unit.span.text, unit.span.start)
+            self._add(fault.code, unit.span, fault.message, fault.help)
+            return typed
+        self._same(typed, found.quantity.dimension, unit.span, "stand together")
+        return typed
 
     # ------------------------------------------------------------------ findings
 

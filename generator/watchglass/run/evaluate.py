@@ -91,12 +91,9 @@ class Evaluator:
         try:
             match node.operator:
                 case "+":
-                    return Value(left.si + right.si, left.dimension, figures)
+                    return _sum(left, right, 1)
                 case "-":
-                    both = left.dimension == right.dimension == dim.TEMPERATURE
-                    return Value(
-                        left.si - right.si, dim.DIFFERENCE if both else left.dimension, figures
-                    )
+                    return _sum(left, right, -1)
                 case "*":
                     return Value(left.si * right.si, left.dimension.times(right.dimension), figures)
                 case "/":
@@ -317,6 +314,38 @@ class Evaluator:
             return NotKnown("data")
         turns = limiting.moles / float(reactant.coefficient)
         return Value(turns * float(product.coefficient) * mass * 1e-3, dim.MASS, limiting.figures)
+
+
+def _place(value: Value) -> int | None:
+    """Give the power of ten, in SI units, of the last figure of a value; None for an exact number."""
+    if value.dimension.plain and value.figures >= MOST_FIGURES:
+        return None
+    size = _size(value)
+    return math.floor(math.log10(size) + 1e-9) - value.figures + 1 if size > 0 else None
+
+
+def _size(value: Value) -> float:
+    """Give the size that a value's figures are counted on: of a temperature its degrees Celsius."""
+    return abs(value.si - 273.15) if value.dimension == dim.TEMPERATURE else abs(value.si)
+
+
+def _sum(left: Value, right: Value, sign: int) -> Value:
+    """Add or take away: the last figure is that of the coarser of the two."""
+    points = left.dimension == right.dimension == dim.TEMPERATURE
+    total = Value(
+        left.si + sign * right.si,
+        dim.DIFFERENCE if points and sign < 0 else left.dimension,
+        MOST_FIGURES,
+    )
+    known = [place for place in (_place(left), _place(right)) if place is not None]
+    size = _size(total)
+    if not known:
+        figures = min(left.figures, right.figures)
+    elif size <= 0:
+        figures = 1
+    else:
+        figures = max(1, min(MOST_FIGURES, math.floor(math.log10(size) + 1e-9) - max(known) + 1))
+    return Value(total.si, total.dimension, figures)
 
 
 def in_unit(value: Value, symbol: str) -> float | None:
