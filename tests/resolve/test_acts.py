@@ -18,15 +18,16 @@ SOUND = [
     "stir A in ice-salt", "heat A to 330 K", "heat A by 20 K", "heat A at 65 °C", "heat A below 65 K",
     "cool A to -10 °C with ice-salt", "react neutral in A", "react neutral in A to 5 %",
     "adjust A to pH 7 with acid", "adjust A to phenolphthalein with acid", "adjust A to pH 7 with 5 mL acid",
-    "titrate A with base from burette to phenolphthalein giving 5 mL", "titrate A with base as neutral",
-    "fill A to mark with water", "fill A to 100 mL with water", "dry A with 2 g salt", "dry A with salt",
-    "dry A with ice", "filter A on B into B", "filter A through cotton", "decant A into B",
-    "evaporate A to 5 mL", "distil A into B at 79–84 °C, leaving 2 mL", "distil A into B to 84 °C",
-    "collect lamp", "weigh A", "rinse A with 10 mL water into B", "rinse A with water",
-    "discard A to aqueous-acid", "discard A into B", "discard A.upper", "vent A", "test A ph", "test A zz",
-    "test ether peroxides", "take 5 min", "wait 5 min", "next period",
-    "suppose 80 % salt in A is solid: reason", "stir A, in hood", 'stir A until "clear"', "label x",
-    "A.upper", "lamp", "ice", "aqueous-acid", "neutral", "ice-salt", "benzocaine", '"iron(III) chloride"',
+    "titrate A with base from burette to phenolphthalein giving 5 mL",
+    "titrate A with base from burette as neutral", "fill A to mark with water", "fill A to 100 mL with water",
+    "dry A with 2 g salt", "dry A with salt", "dry A with ice", "filter A on funnel into B",
+    "filter A through cotton into B", "decant A into B", "evaporate A to 5 mL",
+    "distil A into B at 79–84 °C, leaving 2 mL", "distil A into B to 84 °C", "collect lamp", "weigh A",
+    "rinse A with 10 mL water into B", "rinse A with water", "discard A to aqueous-acid", "discard A into B",
+    "discard A.upper", "vent A", "test A ph", "test A zz", "test ether peroxides", "take 5 min", "wait 5 min",
+    "next period", "suppose 80 % salt in A is solid: reason", "stir A, in hood", 'stir A until "clear"',
+    "label x", "A.upper", "lamp", "ice", "aqueous-acid", "neutral", "ice-salt", "benzocaine",
+    '"iron(III) chloride"', "adjust A to pH -1 with acid", "react neutral in A to 100 %",
     "stir A for 5 min over 5 min", "stir A with 5 g acid", "discard A.upper to aqueous-acid",
 ]
 #: What stands in the braces, code, what is underlined, message, help.
@@ -36,8 +37,8 @@ FAULTS = [
     ("5 % acid -> A", "Q109", "5 %", "`5 %` is a share; a mass, a volume, an amount or a count belongs here", "write how much of it, as in `15 mL acid`"),
     ("5 g acid to 5 g -> A", "N116", "to 5 g", "a charge or a transfer takes no `to`", "take one of `at`, `below`, `by`, `for`, `from`, `on`, `over`, `through`, `until`, `with`"),
     ("5 g acid for 5 g -> A", "Q109", "5 g", "`5 g` is a mass; a time belongs here", "write it as in `5 min`"),
-    ("60 kg acid -> A", "Q113", "60 kg", "`60 kg` is more than 50 kg", "see whether the unit is meant"),
-    ("500 L acid -> A", "Q113", "500 L", "`500 L` is more than 200 L", "see whether the unit is meant"),
+    ("11 kg acid -> A", "Q113", "11 kg", "`11 kg` is more than 10 kg", "see whether the unit is meant"),
+    ("60 L acid -> A", "Q113", "60 L", "`60 L` is more than 50 L", "see whether the unit is meant"),
     ("5 min from A -> B", "Q109", "5 min", "`5 min` is a time; an aliquot is a volume or a mass", "write `10 mL from …`"),
     ("stir A for 5 mL", "Q109", "5 mL", "`5 mL` is a volume; a time belongs here", "write it as in `5 min`"),
     ("stir A for 5", "Q104", "5", "`5` after `for` has no unit", "write it with its unit, as in `5 min`"),
@@ -52,8 +53,8 @@ FAULTS = [
     ("adjust A to pH 7", "N118", "adjust", "`adjust` lacks `with`", "add `with alkali`"),
     ("adjust A with acid", "N118", "adjust", "`adjust` lacks `to`", "add `to pH 10`"),
     ("adjust A to 7 with acid", "N116", "7", "`to` takes a pH or an indicator here", "write it as in `to pH 10`"),
-    ("titrate A with base giving 5 g", "Q109", "5 g", "`5 g` is a mass; a volume belongs here", "write it as in `10 mL`"),
-    ("titrate A", "N118", "titrate", "`titrate` lacks `with`", "add `with alkali`"),
+    ("titrate A with base from burette giving 5 g", "Q109", "5 g", "`5 g` is a mass; a volume belongs here", "write it as in `10 mL`"),
+    ("titrate A from burette", "N118", "titrate", "`titrate` lacks `with`", "add `with alkali`"),
     ("fill A to 100 g with water", "Q109", "100 g", "`100 g` is a mass; a volume belongs here", "write it as in `10 mL`"),
     ("fill A", "N118", "fill", "`fill` lacks `with`", "add `with alkali`"),
     ("decant A", "N118", "decant", "`decant` lacks `into`", "add `into flask`"),
@@ -62,6 +63,15 @@ FAULTS = [
     ("take 5 mL", "Q109", "5 mL", "`5 mL` is a volume; a time belongs here", "write it as in `5 min`"),
     ("take 5", "Q104", "5", "`5` after `take` has no unit", "write it with its unit, as in `5 min`"),
     ("5 min salt", "Q109", "5 min", "`5 min` is a time; a mass, a volume, an amount or a count belongs here", "write how much of it, as in `15 mL salt`"),
+    ("titrate A with base", "N118", "titrate", "`titrate` lacks `from`", "add `from flask`"),
+    ("filter A on funnel", "N118", "filter", "`filter` lacks `into`", "add `into flask`"),
+    ("0 mL acid -> A", "Q119", "0 mL", "`0 mL` of `acid` is nothing", "write how much is taken, or take the mark out"),
+    ("0.0 g salt + 5 mL acid -> A", "Q119", "0.0 g", "`0.0 g` of `salt` is nothing", "write how much is taken, or take the mark out"),
+    ("adjust A to pH 100 with acid", "Q118", "pH 100", "no solution at the bench has pH 100", "give a pH from -2 to 16"),
+    ("adjust A to pH 5 mL with acid", "Q109", "pH 5 mL", "`5 mL` is a volume; a pH is a plain number", "write `pH 5`"),
+    ("adjust A to pH 4–17 with acid", "Q118", "pH 4–17", "no solution at the bench has pH 4–17", "give a pH from -2 to 16"),
+    ("react neutral in A to 120 %", "Q117", "120 %", "`120 %` is more than the whole", "give a share of at most 100 %"),
+    ("stir A at 70000 rpm", "Q113", "70000 rpm", "`70000 rpm` is more than 60000 rpm", "see whether the unit is meant"),
     ("5 g acid over 5 g -> A", "Q109", "5 g", "`5 g` is a mass; a time belongs here", "write it as in `5 min`"),
     ("stir A for acid", "N116", "acid", "`for` takes a time here", "write it as in `for 5 min`"),
     ("stir A at acid", "N116", "acid", "`at` takes a temperature, a rate or a length here", "write it as in `at 40 °C`"),
@@ -71,8 +81,8 @@ FAULTS = [
     ("cool A to 5 min", "Q109", "5 min", "`5 min` is a time; a temperature belongs here", "write it as in `65 °C`"),
     ("stir A by 5 g", "N116", "5 g", "`by` takes a measuring vessel here", "write it as in `by cylinder`"),
     ("discard A to 5 g", "N116", "5 g", "`to` takes a waste stream here", "write it as in `to aqueous-acid`"),
-    ("filter A on 5 mL", "N116", "5 mL", "`on` takes a thing by its name here", "write it as in `on paper`"),
-    ("filter A with 5 °C", "N116", "5 °C", "`with` takes a thing by its name here", "write it as in `with paper`"),
+    ("filter A on 5 mL into B", "N116", "5 mL", "`on` takes a thing by its name here", "write it as in `on paper`"),
+    ("filter A with 5 °C into B", "N116", "5 °C", "`with` takes a thing by its name here", "write it as in `with paper`"),
     ("rinse lamp with 5 min water", "Q109", "5 min", "`5 min` is a time; a mass, a volume, an amount or a count belongs here", "write how much of it, as in `15 mL water`"),
     ("5 mL from A over 5 g -> B", "Q109", "5 g", "`5 g` is a mass; a time belongs here", "write it as in `5 min`"),
     ("weigh A to 5 °C", "Q109", "5 °C", "`5 °C` is a temperature; a mass or a volume belongs here", "write it as in `2 mL`"),
@@ -82,7 +92,7 @@ FAULTS = [
     ("fill A to 100 mL", "N118", "fill", "`fill` lacks `with`", "add `with alkali`"),
     ("adjust A to pH 7", "N118", "adjust", "`adjust` lacks `with`", "add `with alkali`"),
     ("adjust A to 5 % with acid", "N116", "5 %", "`to` takes a pH or an indicator here", "write it as in `to pH 10`"),
-    ("titrate A with base to 5 mL", "N116", "5 mL", "`to` takes a pH or an indicator here", "write it as in `to pH 10`"),
+    ("titrate A with base from burette to 5 mL", "N116", "5 mL", "`to` takes a pH or an indicator here", "write it as in `to pH 10`"),
 ]
 # fmt: on
 
@@ -224,9 +234,9 @@ def test_quantity_beyond_any_laboratory_is_doubted_wherever_it_stands(mark: str)
 @pytest.mark.parametrize("verb", sorted(set(VERBS) - {"suppose", "next period", "take", "wait"}))
 def test_every_verb_takes_words_and_a_time(verb: str) -> None:
     target = "neutral in A" if verb == "react" else "A"
-    needed = {"reagent": "with water", "point": "to pH 7", "vessel": "into B"}
+    example = {"reagent": "water", "point": "pH 7", "vessel": "B"}
     clauses = [
-        needed[VERBS[verb].clauses[word].split("|")[0]]
+        f"{word} {example[VERBS[verb].clauses[word].split('|')[0]]}"
         for word in VERBS[verb].needed
         if word != "in"
     ]

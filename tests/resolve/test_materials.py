@@ -46,7 +46,7 @@ SOUND = [
     ("{contains: {benzocaine: 1 g, benzoic-acid: 2 g}, provided: 3 g}", "mixture by mass benzocaine 1 g, benzoic-acid 2 g"),
     ("{contains: {ethanol: 1 mL, water: 2 mL}}", "mixture by volume ethanol 1 mL, water 2 mL"),
     ("{contains: {sodium-chloride: 0.1 M, potassium-chloride: 0.2 M}, in: water}", "mixture by strength sodium-chloride 0.1 M, potassium-chloride 0.2 M in water"),
-    ("{is: 3.0 M hydrochloric acid, provided: 5 mL}", "3.0 M hydrogen-chloride in water"),
+    ("{is: 3.0 M hydrochloric acid, provided: 5 g}", "3.0 M hydrogen-chloride in water"),
     ("{is: water, provided: 5 g for the class}", "pure water"),
     ("{is: water, provided: 3 drops}", "pure water"),
     ("ammonia", "pure ammonia"),
@@ -109,7 +109,7 @@ def front(description: str) -> str:
 
 
 def material(description: str) -> model.Material:
-    entry = judged("1. Use {0.5 g x -> A}.", front(description), FILES)
+    entry = judged("1. Here is {x}.", front(description), FILES)
     assert places(faults(entry)) == []
     return entry.procedure.materials["x"]
 
@@ -146,7 +146,7 @@ def test_description_is_understood(description: str, composition: str) -> None:
 def test_description_that_cannot_be_understood_is_one_finding_in_its_place(
     description: str, code: str, marked: str, message: str, help_: str
 ) -> None:
-    finding = only(judged("1. Use {1 g x -> A}.", front(description), FILES))
+    finding = only(judged("1. Here is {x}.", front(description), FILES))
 
     assert (finding.code.number, finding.span.text) == (code, marked)
     assert (finding.message, finding.help) == (message, help_)
@@ -154,7 +154,7 @@ def test_description_that_cannot_be_understood_is_one_finding_in_its_place(
 
 @pytest.mark.parametrize("description", [d for d, *_ in FAULTS if not d.startswith(("{", "["))])
 def test_what_is_not_understood_is_unknown_and_not_declared_so(description: str) -> None:
-    found = judged("1. Use {1 g x -> A}.", front(description), FILES).procedure.materials["x"]
+    found = judged("1. Here is {x}.", front(description), FILES).procedure.materials["x"]
 
     assert found.composition == model.Unknown(description, declared=False)
 
@@ -227,7 +227,7 @@ def test_place_of_a_strength_is_kept_with_it() -> None:
 
 def test_sets_own_substance_wins_over_the_shipped_one() -> None:
     files = {"substances/own.yml": "ethanol:\n  names: [spirit]\n  sources: from memory\n"}
-    entry = judged("1. Use {1 g x -> A}.", front("ethanol"), files)
+    entry = judged("1. Here is {x}.", front("ethanol"), files)
     composition = sound(entry).materials["x"].composition
 
     assert isinstance(composition, model.Pure)

@@ -81,7 +81,7 @@ UNKNOWN = [
     ("react zzz in A", "zzz", "`zzz` is declared nowhere", "declare it under `reactions:`"),
     ("discard A to aqueous-acd", "aqueous-acd", "`aqueous-acd` is declared nowhere", "did you mean `aqueous-acid` or `aqueous-base` or `aqueous-organic`?"),
     ("cool A in ice-slt", "ice-slt", "`ice-slt` is declared nowhere", "did you mean `ice-salt`?"),
-    ("filter A through coton", "coton", "`coton` is declared nowhere", "did you mean `cotton`?"),
+    ("filter A through coton into B", "coton", "`coton` is declared nowhere", "did you mean `cotton`?"),
     ("adjust A to phenolphtalein with acid", "phenolphtalein", "`phenolphtalein` is declared nowhere", "did you mean `phenolphthalein` or `thymolphthalein`?"),
     ("step ende", "ende", "`ende` is declared nowhere", "name a state that is labelled, as with `{label end}`"),
     ("= spot / 2", "spot", "`spot` is declared nowhere", "name a record that stands before it, as in `{? m: mass in g}`, or write a quantity"),

@@ -2,10 +2,14 @@
 
 from __future__ import annotations
 
+from typing import TYPE_CHECKING
+
 import pytest
 
 from builders import NAMES, faults, judged, only, places
-from watchglass.resolve import model
+
+if TYPE_CHECKING:
+    from watchglass.resolve import model
 
 WAS = "  neutral: HCl + NaOH -> NaCl + H2O"
 

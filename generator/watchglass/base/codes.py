@@ -35,6 +35,9 @@ BLOCK_NOT_CLOSED = Code("N121", "block-not-closed", _ERROR, "a `:::` block is ne
 BLOCK_END_ALONE = Code("N122", "block-end-alone", _ERROR, "a `:::` closes nothing")
 BLOCK_ARGUMENT = Code("N123", "block-argument", _ERROR, "a `:::` line says what is not understood")
 ANSWER_ALONE = Code("N124", "answer-alone", _ERROR, "an answer stands outside a question")
+HTML_NOT_READ = Code(
+    "N125", "html-not-read", _ERROR, "a tag or a comment of HTML stands in the text"
+)
 FRONT_MATTER_MISSING = Code("N130", "front-matter-missing", _ERROR, "there is no front matter")
 FRONT_MATTER_OPEN = Code("N131", "front-matter-open", _ERROR, "the front matter is not closed")
 YAML_NOT_READ = Code("N140", "yaml-not-read", _ERROR, "the YAML cannot be read")
@@ -98,6 +101,8 @@ SIZE_IMPLAUSIBLE = Code(
 QUANTITY_UNTYPED = Code("Q114", "quantity-untyped", _WARNING, "a quantity stands outside a mark")
 WORDS_DISAGREE = Code("Q115", "words-disagree", _ERROR, "words and their mark say different things")
 RANGE_REVERSED = Code("Q116", "range-reversed", _ERROR, "a range ends below its start")
+PH_BEYOND_SCALE = Code("Q118", "ph-beyond-scale", _ERROR, "no solution has that pH")
+QUANTITY_NOUGHT = Code("Q119", "quantity-nought", _ERROR, "nothing of a material is taken")
 SHARE_ABOVE_ONE = Code("Q117", "share-above-one", _ERROR, "a share is more than the whole")
 
 # -- K: catalogue ------------------------------------------------------------------------------

@@ -18,9 +18,9 @@ from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.decode import decode_substance
 
 if TYPE_CHECKING:
-    from collections.abc import Iterable, Mapping
+    from collections.abc import Iterable, Iterator, Mapping
 
-    from watchglass.base.spans import Source
+    from watchglass.base.spans import Source, Span
     from watchglass.catalogue.glassware import GlasswareType
     from watchglass.catalogue.stocks import Indicator, Stock
     from watchglass.catalogue.substances import Substance
@@ -140,3 +140,39 @@ def name_index(substances: Iterable[Substance]) -> tuple[dict[str, str], tuple[F
                     )
                 )
     return {name: substance.key for name, substance in index.items()}, tuple(findings)
+
+
+def shadowed(
+    own: Iterable[Substance], stocks: Iterable[Stock], shipped: Mapping[str, str]
+) -> Iterator[Finding]:
+    """Report names of a set that already mean another shipped substance.
+
+    An entry with a shipped key overrides that substance, which is meant; a name or a stock that
+    takes the place of another substance would change what a draft says without a word.
+
+    Args:
+        own: The set's substances.
+        stocks: The set's stocks.
+        shipped: Key by case-folded name of the shipped substances.
+    """
+    own = tuple(own)
+    overridden = {substance.key for substance in own}
+    for substance in own:
+        for name in (substance.key, *substance.names):
+            key = shipped.get(" ".join(name.split()).casefold())
+            if key is not None and key != substance.key and key not in overridden:
+                yield _taken(name, substance.span, key)
+    for stock in stocks:
+        for name in (stock.key, *stock.names):
+            key = shipped.get(" ".join(name.split()).casefold())
+            if key is not None:
+                yield _taken(name, stock.span, key)
+
+
+def _taken(name: str, span: Span, key: str) -> Finding:
+    return Finding(
+        code=codes.SUBSTANCE_NAME_TWICE,
+        span=span,
+        message=f"`{name}` already names `{key}` of the shipped catalogue",
+        help="take another name, or give the entry that key to override the substance",
+    )

@@ -6,6 +6,7 @@ import re
 from typing import TYPE_CHECKING
 
 from watchglass.base import codes
+from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding
 from watchglass.base.scan import Fault, read_quantity
 from watchglass.base.yaml import YamlList, YamlMapping, YamlNode, YamlText
@@ -46,7 +47,8 @@ def quantity(
     if isinstance(read, Fault):
         findings.append(fault_at(node, read, start))
         return None
-    if read.dimension != takes:
+    kelvin = takes == dim.TEMPERATURE and read.unit.symbol == "K"
+    if read.dimension != takes and not kelvin:
         findings.append(
             Finding(
                 code=codes.DIMENSION_WRONG,
@@ -89,8 +91,6 @@ def fault_at(node: YamlText, fault: Fault, start: int = 0) -> Finding:
 
 def measured(node: YamlText, takes: Dimension, findings: list[Finding]) -> At | None:
     """Read `1.17 g/mL at 20 °C`; the temperature may be left out."""
-    from watchglass.base import dimensions as dim  # noqa: PLC0415 - a short name, used here only
-
     found = _AT.search(node.text)
     value = quantity(node, takes, findings, end=found.start() if found else None)
     temperature = None

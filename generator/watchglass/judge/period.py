@@ -37,6 +37,8 @@ def time_over_period(case: Case) -> Iterator[Finding]:
             before = longest[-1]
             if before is None or (before.time or 0.0) < event.time:
                 longest[-1] = event
+    if len(periods) == 1:
+        periods *= len(spent)  # one figure is the time of each period
     for number, (taken, (period, span)) in enumerate(zip(spent, periods, strict=False)):
         if taken > period.si_high * (1 + 1e-9):
             minutes = (

@@ -51,7 +51,10 @@ def _exceeded(material: model.Material, used: Usage) -> Iterator[Finding]:
     if given is None or span is None:
         return
     total = total_of(used, given.dimension)
-    if total is None or total.high <= given.si_high * (1 + 1e-9):
+    if total is None:
+        yield from _incomparable(material, used)
+        return
+    if total.high <= given.si_high * (1 + 1e-9):
         return
     if all(use.of_all for use in used.uses) and len(used.uses) == 1 and used.uses[0].times == 1:
         return
@@ -66,6 +69,40 @@ def _exceeded(material: model.Material, used: Usage) -> Iterator[Finding]:
         ),
         help=f"provide at least {figure} {given.unit.symbol}, or take less in the steps",
     )
+
+
+def _incomparable(material: model.Material, used: Usage) -> Iterator[Finding]:
+    """Compare a mass provided with a volume used through the density, or say that none is known."""
+    given, span = material.provided, material.provided_span
+    total = total_of(used, dim.MASS, dim.VOLUME)
+    if given is None or span is None or total is None or given.dimension == dim.COUNT:
+        return
+    if isinstance(material.composition, model.Unknown):
+        return
+    density = None
+    if isinstance(material.composition, model.Pure) and material.composition.substance.density:
+        density = material.composition.substance.density.value.si
+    if density is None:
+        if not _no_density(material):  # that is a finding of its own
+            yield Finding(
+                code=codes.PROVIDED_EXCEEDED,
+                span=span,
+                message=f"`{given.text}` of `{material.name}` is provided, and the steps take {total.dimension.words}:"
+                " the two cannot be compared",
+                related=tuple(Related(use.span, "taken here") for use in used.uses[:1]),
+                help=f"provide {total.dimension.words}, as the steps take it",
+            )
+        return
+    needed = total.high * density if total.dimension == dim.VOLUME else total.high / density
+    if needed > given.si_high * (1 + 1e-9):
+        figure = shown(needed / given.unit.factor, max(total.figures, given.figures))
+        yield Finding(
+            code=codes.PROVIDED_EXCEEDED,
+            span=span,
+            message=f"the steps take {figure} {given.unit.symbol} of `{material.name}`; `{given.text}` is provided",
+            related=tuple(Related(use.span, "taken here") for use in used.uses),
+            help=f"provide at least {figure} {given.unit.symbol}, or take less in the steps",
+        )
 
 
 def volume_without_density(case: Case) -> Iterator[Finding]:

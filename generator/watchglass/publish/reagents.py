@@ -159,7 +159,7 @@ def total_words(total: Total) -> tuple[m.Words, ...]:
     low = shown(total.low / total.factor, total.figures)
     text = low
     if total.high > total.low * (1 + 1e-9):
-        text = f"{low}–{shown(total.high / total.factor, total.figures)}"
+        text = f"{low}–{shown(total.high / total.factor, total.high_figures)}"
     if total.dimension == dim.COUNT:
         text = text.rstrip("0").rstrip(".") if "." in text else text
     about = (m.Run(f"about{NBSP}"),) if total.about else ()

@@ -11,6 +11,7 @@ from watchglass.base.findings import Finding
 from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.read.markdown import MAX_CHARACTERS, read_body
 from watchglass.read.marks import read_mark
+from watchglass.read.strays import strays
 from watchglass.read.syntax import ProcedureSyntax
 
 if TYPE_CHECKING:
@@ -51,7 +52,7 @@ def _read(
     syntax = ProcedureSyntax(
         source=source, front=front, front_broken=broken, body=body, marks=marks
     )
-    return syntax, (*found, *more)
+    return syntax, (*found, *more, *strays(source, start, body))
 
 
 def _read_front(

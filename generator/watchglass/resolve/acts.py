@@ -35,12 +35,14 @@ _SETTINGS = (
     dim.POWER,
 )
 _LARGEST: dict[Dimension, tuple[float, str]] = {
-    dim.MASS: (50.0, "50 kg"),
-    dim.VOLUME: (0.2, "200 L"),
-    dim.AMOUNT: (1e4, "10 kmol"),
+    dim.MASS: (10.0, "10 kg"),
+    dim.VOLUME: (0.05, "50 L"),
+    dim.AMOUNT: (1e3, "1 kmol"),
+    dim.ROTATION: (1000.0, "60000 rpm"),
     dim.TIME: (3e6, "five weeks"),
     dim.TEMPERATURE: (2300.0, "2000 °C"),
 }
+_LOWEST_PH, _HIGHEST_PH = -2, 16
 _SINGLE: dict[str, tuple[Dimension, ...]] = {
     "time": (dim.TIME,),
     "temperature": (dim.TEMPERATURE,),
@@ -120,6 +122,14 @@ class ActReader:
                 span,
                 f"`{quantity.text}` is {quantity.dimension.words}; a mass, a volume, an amount or a count belongs here",
                 f"write how much of it, as in `15 mL {amount.material.text}`",
+            )
+            return None
+        if quantity.si_high == 0:
+            self._add(
+                codes.QUANTITY_NOUGHT,
+                span,
+                f"`{quantity.text}` of `{amount.material.text}` is nothing",
+                "write how much is taken, or take the mark out",
             )
             return None
         self.plausible(quantity, span)
@@ -279,9 +289,11 @@ class ActReader:
                     self._wrong_value(clause, self._takes(kinds), _EXAMPLE.get(kinds[0], "…"))
                 else:
                     self._dimension(f"`{clause.word}`", value, single)
-            case syntax.Ph():
+            case syntax.Ph(quantity, span):
                 if "point" not in kinds:
                     self._wrong_value(clause, self._takes(kinds), _EXAMPLE.get(kinds[0], "…"))
+                else:
+                    self._ph(quantity, span)
             case syntax.Amount():
                 if "thing" in kinds or "size" in kinds or "volume" in kinds:
                     self.portion(value)
@@ -327,6 +339,13 @@ class ActReader:
         if dim.TEMPERATURE in allowed and quantity.unit.symbol == "K":
             return True
         if dimension in allowed:
+            if dimension == dim.SHARE and quantity.si_high > 1:
+                self._add(
+                    codes.SHARE_ABOVE_ONE,
+                    value.span,
+                    f"`{quantity.text}` is more than the whole",
+                    "give a share of at most 100 %",
+                )
             self.plausible(quantity, value.span)
             return True
         if not quantity.unit.symbol:
@@ -361,6 +380,23 @@ class ActReader:
                 f"see whether `{quantity.number.text} {meant}` is meant"
                 if meant
                 else "see whether the unit is meant",
+            )
+
+    def _ph(self, quantity: Quantity, span: Span) -> None:
+        """A pH is a plain number within what a teaching laboratory's solutions reach."""
+        if quantity.dimension != dim.NUMBER:
+            self._add(
+                codes.DIMENSION_WRONG,
+                span,
+                f"`{quantity.text}` is {quantity.dimension.words}; a pH is a plain number",
+                f"write `pH {quantity.number.text}`",
+            )
+        elif not (quantity.si >= _LOWEST_PH and quantity.si_high <= _HIGHEST_PH):
+            self._add(
+                codes.PH_BEYOND_SCALE,
+                span,
+                f"no solution at the bench has pH {quantity.text}",
+                f"give a pH from {_LOWEST_PH} to {_HIGHEST_PH}",
             )
 
     def _wrong_value(self, clause: syntax.Clause, wanted: str, example: str) -> None:

@@ -117,7 +117,8 @@ class BodyReader:
         if block.kind in _HIDDEN or (block.kind == "question" and not walk.hidden):
             inner.hidden = block.kind
         if block.kind == "charge":
-            self._events += charge_table(block, self.scope)
+            if self._may_happen(block.opening, inner):
+                self._events += charge_table(block, self.scope)
             return
         self._blocks(block.children, inner)
 
@@ -202,10 +203,13 @@ class BodyReader:
             self._events.append(event)
 
     def _may_act(self, act: syntax.Act, walk: Walk) -> bool:
+        return self._may_happen(act.span, walk)
+
+    def _may_happen(self, span: Span, walk: Walk) -> bool:
         if walk.hidden:
             self._add(
                 codes.ACT_IN_HIDDEN_BLOCK,
-                act.span,
+                span,
                 f"something happens at the bench in a `:::{walk.hidden}` block",
                 "move the mark into a step that students see, or take the braces out",
             )
@@ -213,7 +217,7 @@ class BodyReader:
         if not walk.step or walk.block == "before":
             self._add(
                 codes.ACT_WITHOUT_PLACE,
-                act.span,
+                span,
                 "something happens at the bench outside the numbered steps",
                 "move the mark into a step, or take the braces out",
             )

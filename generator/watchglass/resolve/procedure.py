@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.fields import Record, Shape, read_fields, unfit
 from watchglass.base.findings import Finding
-from watchglass.base.yaml import YamlMapping, YamlText
+from watchglass.base.yaml import YamlList, YamlMapping, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.ware import read_vessel
 from watchglass.read.expressions import Compare, Within, read_expression
@@ -62,6 +62,10 @@ class _Resolver:
         record: Record | None = None
         if syntax.front is not None:
             record, found = read_fields(syntax.front, FIELDS, "the front matter")
+            findings += found
+        elif not syntax.front_broken:
+            empty = YamlMapping((), syntax.source.span(0, min(3, len(syntax.source.text))))
+            record, found = read_fields(empty, FIELDS, "the front matter")
             findings += found
         broken = syntax.front_broken or record is None
         scope = Scope(self.catalogue, self.laboratory, broken=broken)
@@ -215,7 +219,13 @@ class _Resolver:
         return tuple(expectations)
 
     def _lines(self, node: YamlNode | None, findings: list[Finding]) -> tuple[YamlText, ...]:
-        del findings
+        """Give the lines of `expect:`; one that YAML took for something else is a finding."""
+        items = node.items if isinstance(node, YamlList) else ()
+        findings += [
+            _not_a_line(item.span)
+            for item in items
+            if not isinstance(item, YamlText) or not item.text.strip()
+        ]
         return texts.words(node)
 
 
@@ -234,6 +244,15 @@ def _vessel_unsaid(name: str, span: Span) -> Finding:
         span=span,
         message=f"`{name}` does not say what vessel it is",
         help="write type and size, as in `conical flask 100 mL`",
+    )
+
+
+def _not_a_line(span: Span) -> Finding:
+    return Finding(
+        code=codes.FIELD_UNFIT,
+        span=span,
+        message="an expectation is one line of text",
+        help="write `- pH of A in 9–11`, without a colon; put quotes round it where YAML needs them",
     )
 
 

@@ -102,9 +102,11 @@ class Typer:
             case Call():
                 return self._call(node)
             case Compare(_, left, right, span):
+                self._share(left, right)
                 self._same(self.type(left), self.type(right), span, "are compared")
                 return None
             case Within(operand, interval, span):
+                self._share(operand, interval)
                 self._same(self.type(operand), interval.quantity.dimension, span, "are compared")
                 return None
             case Held():
@@ -188,6 +190,28 @@ class Typer:
             return left
         verb = "are added" if node.operator == "+" else "are taken from each other"
         return left if self._same(left, right, node.span, verb) else None
+
+    def _share(self, left: Expression, right: Expression) -> None:
+        """What of a substance is somewhere is a share of at most the whole, written with `%`."""
+        while isinstance(left, After):
+            left = left.operand
+        if not (isinstance(left, Held) and isinstance(right, Measured)):
+            return
+        quantity = right.quantity
+        if quantity.dimension == dim.NUMBER:
+            self._add(
+                codes.UNIT_MISSING,
+                right.span,
+                f"`{quantity.text}` is no share of a substance",
+                f"write `{quantity.text} %`",
+            )
+        elif quantity.dimension == dim.SHARE and quantity.si_high > 1:
+            self._add(
+                codes.SHARE_ABOVE_ONE,
+                right.span,
+                f"`{quantity.text}` is more than the whole",
+                "give a share of at most 100 %",
+            )
 
     def _same(self, left: Dimension | None, right: Dimension | None, span: Span, verb: str) -> bool:
         if left is None or right is None:

@@ -57,11 +57,11 @@ VERBS: dict[str, Verb] = {
     "react": _verb("reaction", in_="vessel!", to="share"),
     "adjust": _verb(to="point!", with_="reagent!", by="ware", from_="vessel"),
     "titrate": _verb(
-        to="point", with_="reagent!", from_="vessel", by="ware", as_="reaction", giving="volume"
+        to="point", with_="reagent!", from_="vessel!", by="ware", as_="reaction", giving="volume"
     ),
     "fill": _verb(with_="reagent!", to="volume|mark", by="ware", from_="vessel"),
     "dry": _verb(with_="reagent", by="ware", in_="thing", on="thing"),
-    "filter": _verb(on="thing", through="thing", into="vessel", with_="thing", by="ware"),
+    "filter": _verb(on="thing", through="thing", into="vessel!", with_="thing", by="ware"),
     "decant": _verb(into="vessel!", through="thing", from_="thing", on="thing"),
     "evaporate": _verb(
         to="size", leaving="size", into="vessel", with_="thing", by="ware", in_="thing", on="thing"

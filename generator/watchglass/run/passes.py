@@ -67,6 +67,7 @@ class _Runner:
         self.turns: dict[int, int] = {}
         self.cut: model.Again | None = None
         self._depth = 0
+        self._passes = 0
 
     def event(
         self, event: model.Event, step: int, index: int, names: Mapping[str, str], *, fresh: bool
@@ -91,6 +92,10 @@ class _Runner:
             repeated = self.steps.get(number)
             if repeated is None:
                 continue
+            self._passes += 1
+            if self._passes > MOST_EVENTS:
+                self.cut = self.cut or again
+                return
             self.turns[number] = self.turns.get(number, 0) + 1
             events = repeated.events[:index] if number == step else repeated.events
             for place, event in enumerate(events):

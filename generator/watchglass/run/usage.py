@@ -45,8 +45,11 @@ class Total(NamedTuple):
         dimension: Of the sum.
         low: Sum of the low ends, SI.
         high: Sum of the high ends, SI.
-        figures: Significant figures the sum may show: no finer than its coarsest part.
-        unit: Symbol and factor of the unit it is shown in: that of the first part.
+        figures: Significant figures the low end may show: no finer than its coarsest part.
+        symbol: Of the unit it is shown in: that of the first part.
+        factor: SI units in one of it [-].
+        about: Whether a part is an approximation.
+        high_figures: Significant figures the high end may show.
     """
 
     dimension: Dimension
@@ -56,6 +59,7 @@ class Total(NamedTuple):
     symbol: str
     factor: float
     about: bool
+    high_figures: int = 1
 
 
 class Usage(NamedTuple):
@@ -125,18 +129,36 @@ def _totals(
 
 
 def _sum(dimension: Dimension, parts: list[tuple[Quantity, float]], scale: float) -> Total:
-    low = sum(quantity.si * share for quantity, share in parts) * scale
-    high = sum(quantity.si_high * share for quantity, share in parts) * scale
+    low = sum(quantity.si * share for quantity, share in parts)
+    high = sum(quantity.si_high * share for quantity, share in parts)
     first = parts[0][0].unit
-    finest = max(quantity.unit.factor * 10.0**quantity.number.last_place for quantity, _ in parts)
-    if len(parts) == 1:
-        figures = parts[0][0].figures
-    else:
-        figures = (
-            max(1, floor(log10(low) + 1e-9) - floor(log10(finest) + 1e-9) + 1) if low > 0 else 1
-        )
+    coarsest = max(quantity.unit.factor * 10.0**_place(quantity) for quantity, _ in parts)
     about = any(quantity.kind is Kind.ABOUT for quantity, _ in parts)
-    return Total(dimension, low, high, figures, first.symbol, first.factor, about)
+    return Total(
+        dimension,
+        low * scale,
+        high * scale,
+        _figures(low / first.factor, coarsest / first.factor),
+        first.symbol,
+        first.factor,
+        about,
+        _figures(high / first.factor, coarsest / first.factor),
+    )
+
+
+def _place(quantity: Quantity) -> int:
+    """Give the power of ten of the last figure; of a range, of its coarser end."""
+    ends = [quantity.number]
+    if quantity.kind is Kind.RANGE and quantity.second is not None:
+        ends.append(quantity.second)
+    return max(number.last_place for number in ends)
+
+
+def _figures(value: float, last: float) -> int:
+    """Count the figures of a sum whose last figure has the size `last`, both in one unit."""
+    if value <= 0:
+        return 1
+    return max(1, floor(log10(value) + 1e-9) - floor(log10(last) + 1e-9) + 1)
 
 
 def total_of(found: Usage, *dimensions: Dimension) -> Total | None:

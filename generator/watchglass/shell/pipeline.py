@@ -8,7 +8,7 @@ from pathlib import Path
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.yaml import YamlMapping, read_yaml
-from watchglass.catalogue.catalogue import Catalogue, name_index
+from watchglass.catalogue.catalogue import Catalogue, name_index, shadowed
 from watchglass.catalogue.decode import decode_substances
 from watchglass.catalogue.ware import decode_stock
 from watchglass.judge.accept import settle
@@ -249,6 +249,7 @@ def surroundings(sources: Mapping[str, Source]) -> tuple[Surroundings, tuple[Fin
     findings += found
     stocks, found = _stocks(nodes.get("stocks.yml"))
     findings += found
+    findings += shadowed(own, dict.fromkeys(stocks.values()), base.substances.names)
     laboratory, found = read_laboratory(nodes.get("laboratory.yml"), base.glassware)
     findings += found
     schedule, found = read_schedule(nodes.get("schedule.yml"))

@@ -62,11 +62,23 @@ def read_set(root: Path, *, shown: str = "") -> SetFiles:
             relative = path.relative_to(root).as_posix()
             if name.startswith(".") or not path.resolve().is_relative_to(inside):
                 continue
-            files.add(relative)
-            if path.suffix in _TEXT:
-                with path.open("rb") as file:
-                    texts[relative] = file.read(MOST_BYTES + 1)
+            data = _read(path) if path.suffix in _TEXT else None
+            if data is not None:
+                texts[relative] = data
+            elif path.is_file():
+                files.add(relative)
     return from_bytes(texts, frozenset(files), shown=shown)
+
+
+def _read(path: Path) -> bytes | None:
+    """Read a plain file; None for a pipe, a device, a broken link, or a file gone meanwhile."""
+    if not path.is_file():
+        return None
+    try:
+        with path.open("rb") as file:
+            return file.read(MOST_BYTES + 1)
+    except FileNotFoundError:
+        return None
 
 
 def from_bytes(
