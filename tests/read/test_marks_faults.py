@@ -20,7 +20,7 @@ FAULTS = [
     ("15 mL acid +", "N111", "+", "an amount is expected after `+`", None),
     ("15 mL acid + x -> A", "N111", "x -> A", "an amount is expected after `+` at `x -> A`", None),
     ("15 mL acid - A", "N111", "- A", "`->` is expected at `- A`", "write where it goes, as in `-> funnel`"),
-    ("15 mL acid > A", "N111", "> A", "`->` is expected at `> A`", "write where it goes, as in `-> funnel`"),
+    ("15 mL acid > A", "N111", ">", "`>` is no arrow", "write `->`"),
     ("15 mL acid by cylinder by pipette -> A", "N117", "by pipette", "`by` stands twice in one act", "keep one of the two"),
     ("15 mL acid by cylinder -> A by pipette", "N117", "by pipette", "`by` stands twice in one act", "keep one of the two"),
     ("15 mL acid -> A, stoppered, open", "N117", "open", "a closure stands twice in one act", "keep one of the two"),

@@ -76,7 +76,7 @@ FAULTS = [
     ("stir A for acid", "N116", "acid", "`for` takes a time here", "write it as in `for 5 min`"),
     ("stir A at acid", "N116", "acid", "`at` takes a temperature, a rate or a length here", "write it as in `at 40 °C`"),
     ("heat A to acid", "N116", "acid", "`to` takes a temperature here", "write it as in `to 65 °C`"),
-    ("heat A under condenser", "N111", "under condenser", "`under condenser` cannot stand here", "divide acts with `;`, or take it out"),
+    ("heat A under condenser", "N111", "under condenser", "`under condenser` cannot stand here", "write `, under condenser`"),
     ("heat A in 5 min", "N116", "5 min", "`in` takes a thing by its name here", "write it as in `in paper`"),
     ("cool A to 5 min", "Q109", "5 min", "`5 min` is a time; a temperature belongs here", "write it as in `65 °C`"),
     ("stir A by 5 g", "N116", "5 g", "`by` takes a measuring vessel here", "write it as in `by cylinder`"),

@@ -24,6 +24,7 @@ if TYPE_CHECKING:
     from watchglass.catalogue.glassware import GlasswareType
     from watchglass.catalogue.stocks import Indicator, Stock
     from watchglass.catalogue.substances import Substance
+    from watchglass.chemistry.formulas import Formula
 
 _TOP_KEY = re.compile(r"^([^\s#:][^:\n]*):", re.MULTILINE)
 
@@ -107,6 +108,19 @@ class Catalogue:
         folded = " ".join(word.split()).casefold()
         key = self.own_names.get(folded) or self.shipped.names.get(folded)
         return self.by_key(key) if key else None
+
+    def with_atoms(self, formula: Formula) -> tuple[str, ...]:
+        """Give the names of all substances with just these atoms and this charge."""
+        keys = dict.fromkeys((*self.own, *self.shipped.keys()))
+        found = (self.by_key(key) for key in keys)
+        return tuple(
+            substance.name
+            for substance in found
+            if substance is not None
+            and substance.formula is not None
+            and substance.formula.composition == formula.composition
+            and substance.formula.charge == formula.charge
+        )
 
     def words(self) -> tuple[str, ...]:
         """Give every name and key, for near misses."""

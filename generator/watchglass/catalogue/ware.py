@@ -172,7 +172,9 @@ def read_vessel(
             Finding(
                 code=codes.GLASSWARE_UNKNOWN,
                 span=node.part(start, start + max(1, len(words))),
-                message=f"`{words}` is no vessel of the glassware list",
+                message=f"`{words}` is no vessel of the glassware list"
+                if words
+                else f"`{node.text.strip()}` does not begin with a type of vessel",
                 help=did_you_mean(words, types)
                 or "name a type such as `beaker`, `conical flask`, `separatory funnel`",
             ),

@@ -2,11 +2,11 @@
 
 from __future__ import annotations
 
-from posixpath import dirname, join, normpath
+from posixpath import dirname, join, normpath, relpath
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
-from watchglass.base.findings import Finding, Related, did_you_mean
+from watchglass.base.findings import Finding, Related, did_you_mean, near
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator, Mapping
@@ -37,8 +37,11 @@ def judge_set(
     for card in cards:
         yield from _code_twice(card, codes_known)
     for card in cards:
-        for code, span in card.after:
-            yield from _procedure(code, span, codes_known)
+        for code, span in (*card.after, *card.continues):
+            if code.casefold() == card.code.casefold():
+                yield _itself(code, span)
+            else:
+                yield from _procedure(code, span, codes_known)
     for appointment in appointments:
         yield from _procedure(appointment.code, appointment.span, codes_known)
     pages = {card.path: card for card in cards}
@@ -60,6 +63,15 @@ def _code_twice(card: Card, known: dict[str, Card]) -> Iterator[Finding]:
         message=f"`{card.code}` is the code of `{before.path}` too",
         related=(Related(before.code_span, "it stands here first"),),
         help="give one of the two another code",
+    )
+
+
+def _itself(code: str, span: Span) -> Finding:
+    return Finding(
+        code=codes.PROCEDURE_UNKNOWN,
+        span=span,
+        message=f"`{code}` is this procedure itself: nothing comes before its own start",
+        help="name another procedure of this set, or take the line out",
     )
 
 
@@ -88,6 +100,16 @@ def leaves_the_set(target: str) -> bool:
     return ":" in target and scheme.replace("+", "").isalnum()
 
 
+def _near_path(path: str, there: str, known: Iterable[str]) -> str | None:
+    """Offer the paths, from this file, of files whose names are near to the one that is missing."""
+    by_name: dict[str, str] = {}
+    for other in known:
+        by_name.setdefault(other.rpartition("/")[2], other)
+    names = near(there.rpartition("/")[2], by_name)
+    paths = [relpath(by_name[name], dirname(path) or ".") for name in names]
+    return "did you mean " + " or ".join(f"`{p}`" for p in paths) + "?" if paths else None
+
+
 def _link(
     card: Card, link: LinkOut, pages: Mapping[str, Card], files: frozenset[str]
 ) -> Iterator[Finding]:
@@ -97,9 +119,7 @@ def _link(
     page = pages.get(there)
     if page is None:
         if there not in files or there.startswith(".."):
-            near = did_you_mean(
-                there.rpartition("/")[2], (p.rpartition("/")[2] for p in (*pages, *files))
-            )
+            near = _near_path(card.path, there, (*pages, *files))
             yield Finding(
                 code=codes.LINK_BROKEN,
                 span=link.span,

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from collections import Counter
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
@@ -67,19 +66,13 @@ def _plain(words: tuple[m.Words, ...]) -> str:
     return "".join(w.text for w in words if isinstance(w, m.Run))
 
 
-def _runs(case: Case) -> dict[int, int]:
-    """Count how often each step is run, for the number of its blanks."""
-    most: Counter[int] = Counter()
-    for happening in case.course.happenings:
-        most[happening.step] = max(most[happening.step], happening.turn)
-    return dict(most)
-
-
 def _builder(
     case: Case, path: str, place: Neighbours, catalogue: Catalogue, *, instructor: bool
 ) -> BodyBuilder:
     evaluator = Evaluator(case.procedure, case.usage, catalogue, {})
-    return BodyBuilder(case.procedure, evaluator, place.addresses, path, instructor, _runs(case))
+    return BodyBuilder(
+        case.procedure, evaluator, place.addresses, path, instructor, case.course.turns
+    )
 
 
 def student_page(case: Case, path: str, place: Neighbours, catalogue: Catalogue) -> m.StudentPage:

@@ -10,8 +10,9 @@ import re
 from typing import TYPE_CHECKING, NoReturn
 
 from watchglass.base import codes
+from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding, Related, did_you_mean
-from watchglass.base.scan import unknown_unit
+from watchglass.base.scan import Found, scan_quantity, unknown_unit
 from watchglass.base.units import REFUSED
 from watchglass.read import syntax
 from watchglass.read.clauses import read_amount, read_clauses, read_object, read_place
@@ -23,7 +24,14 @@ from watchglass.read.expressions import (
     cut,
     ends_in_unit,
 )
-from watchglass.read.words import CLAUSE_WORDS, MEASURES_OF_ALL, OTHER_ACTS, VERBS
+from watchglass.read.words import (
+    CLAUSE_WORDS,
+    CLOSURES,
+    MEASURES_OF_ALL,
+    OTHER_ACTS,
+    SETTINGS,
+    VERBS,
+)
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
@@ -37,6 +45,7 @@ _COUNT = re.compile(r"(\d+)\s+more\s+times?\b")
 _AT_MOST = re.compile(r"at\s+most\s+(\d+)\b")
 _NEXT_PERIOD = re.compile(r"next\s+period\b")
 _SUPPOSED = re.compile(r"is\s+(\w+)\s*:\s*(\S.*)", re.DOTALL)
+_ARROW = re.compile(r"=>|-->|- >|=|>|⟶|⇒")
 MOST_PASSES = 1000
 
 
@@ -107,8 +116,21 @@ def _left_over(cursor: Cursor) -> NoReturn:
         codes.MARK_NOT_READ,
         rest,
         f"`{cut(rest.text)}` cannot stand here",
-        "divide acts with `;`, or take it out",
+        _mending(rest.text) or "divide acts with `;`, or take it out",
     )
+
+
+def _mending(rest: str) -> str | None:
+    """Say how the commonest left-overs are written: a closure, a time, a place, a count."""
+    word = next((w for w in (*CLOSURES, *SETTINGS) if rest.startswith(w)), None)
+    if word is not None:
+        return f"write `, {word}`"
+    found = scan_quantity(rest, 0)
+    if isinstance(found, Found) and found.quantity.dimension == dim.TIME:
+        return f"write `for {found.quantity.text}`"
+    if isinstance(found, Found) and found.quantity.dimension == dim.TEMPERATURE:
+        return f"write `to {found.quantity.text}` or `at {found.quantity.text}`"
+    return None
 
 
 # ------------------------------------------------------------------------------ acts
@@ -198,6 +220,9 @@ def _next_amount(cursor: Cursor) -> syntax.Amount:
 
 def _arrow(cursor: Cursor) -> syntax.Place:
     if not (cursor.takes("->") or cursor.takes("→")):
+        if found := _ARROW.match(cursor.text, cursor.at, cursor.end):
+            span = cursor.source.span(found.start(), found.end())
+            cursor.stop(codes.MARK_NOT_READ, span, f"`{found[0]}` is no arrow", "write `->`")
         cursor.stop(
             codes.MARK_NOT_READ,
             cursor.rest(),

@@ -20,6 +20,7 @@ from watchglass.base.scan import (
 )
 from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
+from watchglass.chemistry.formulas import Formula, parse_formula
 from watchglass.resolve.model import (
     Composition,
     Continued,
@@ -300,8 +301,17 @@ class MaterialReader:
             node.part(start, end),
             f"`{word}` is not in the catalogue",
             did_you_mean(word, (w for w in self.catalogue.words() if w != word))
+            or self._by_formula(word)
             or "add it to a file in `substances/`, or name it as the catalogue does",
         )
+
+    def _by_formula(self, word: str) -> str | None:
+        """Offer the substances of a formula that was written for a name."""
+        formula = parse_formula(word)
+        if not isinstance(formula, Formula):
+            return None
+        names = self.catalogue.with_atoms(formula)[:3]
+        return "did you mean " + " or ".join(f"`{n}`" for n in names) + "?" if names else None
 
     def _provided(self, node: YamlText, end: int | None) -> Quantity | None:
         read = read_quantity(node.text[:end], measures=self.catalogue.measures)

@@ -8,7 +8,8 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding, Related
-from watchglass.base.scan import Found, scan_quantity
+from watchglass.base.scan import Fault, Found, scan_quantity
+from watchglass.base.units import REFUSED, UNITS
 from watchglass.read import syntax
 
 if TYPE_CHECKING:
@@ -30,11 +31,27 @@ def quantities_in(
     while found := _NUMBER.search(words, at):
         scanned = scan_quantity(words, found.start(), measures=measures)
         at = found.end()
+        if isinstance(scanned, Fault) and scanned.code is codes.UNIT_UNKNOWN:
+            spelt = _spelt(words, found.start(), scanned)
+            if spelt is not None:
+                at = scanned.end
+                yield spelt, found.start(), scanned.end
         if isinstance(scanned, Found):
             at = max(at, scanned.end)
             glued = words[scanned.end : scanned.end + 1]
             if scanned.measured and not (glued and (glued.isalnum() or glued == "-")):
                 yield scanned.quantity, found.start(), scanned.end
+
+
+def _spelt(words: str, start: int, fault: Fault) -> Quantity | None:
+    """Read `5 minutes` as the quantity it is: only where the unit is spelt out as a word."""
+    symbol = REFUSED.get(words[fault.start : fault.end], "")
+    if symbol not in UNITS or fault.end - fault.start < 3:
+        return None
+    meant = scan_quantity(f"{words[start : fault.start].rstrip()} {symbol}", 0)
+    if not isinstance(meant, Found):
+        return None
+    return meant.quantity._replace(text=words[start : fault.end])
 
 
 def untyped(text: syntax.Text, measures: Mapping[str, float | None]) -> list[Finding]:
@@ -51,10 +68,17 @@ def untyped(text: syntax.Text, measures: Mapping[str, float | None]) -> list[Fin
                 code=codes.QUANTITY_UNTYPED,
                 span=text.span.part(start, end),
                 message=f"`{quantity.text}` stands outside a mark: it is not checked and not counted",
-                help=f"write `{{{quantity.text}}}`, or name what is charged, as in `{{{quantity.text} … -> …}}`",
+                help=f"write `{{{_written(quantity)}}}`, or name what is charged, as in `{{{_written(quantity)} … -> …}}`",
             )
         )
     return findings
+
+
+def _written(quantity: Quantity) -> str:
+    """Write a quantity as a mark takes it, with the symbol for a unit that was spelt out."""
+    if quantity.text.endswith(quantity.unit.symbol):
+        return quantity.text
+    return f"{quantity.number.text} {quantity.unit.symbol}"
 
 
 def disagreements(

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import re
 from typing import TYPE_CHECKING
 
 from watchglass.base import codes
@@ -61,6 +62,11 @@ def substances_of(material: Material) -> tuple[Substance, ...]:
             return tuple(candidates.values())
         case _:
             return ()
+
+
+_STATE = re.compile(r"\s*\((?:aq|s|l|g)\)$")
+#: A balance with larger coefficients is arithmetic, not a reaction: it is not offered.
+_LARGEST_OFFERED = 12
 
 
 class ReactionReader:
@@ -131,10 +137,18 @@ class ReactionReader:
             return self._by_formula(term, formula, span)
         near = did_you_mean(term.text, (*self.materials, *self.catalogue.words()))
         start = term.text.lstrip("0123456789")
-        looks_like_formula = start[:1].isupper() and any(
-            c.isupper() or c.isdigit() for c in start[1:]
+        looks_like_formula = start[:1].isupper() and (
+            any(c.isupper() or c.isdigit() for c in start[1:]) or start[-1:] in "+-"
         )
-        if looks_like_formula and not near:
+        if state := _STATE.search(term.text):
+            at = term.start + state.start()
+            self._add(
+                codes.FORMULA_NOT_READ,
+                node.part(at, term.end),
+                f"`{state[0].strip()}` is no part of a formula: states of matter are not read",
+                f"write `{term.text[: state.start()].rstrip()}`",
+            )
+        elif looks_like_formula and not near:
             self._add(
                 codes.FORMULA_NOT_READ,
                 node.part(term.start + formula.start, term.start + formula.end),
@@ -226,7 +240,7 @@ class ReactionReader:
             side, formula, count = found.lacking.side, found.lacking.formula, found.lacking.count
             many = f"{count} " if count != 1 else ""
             return f"add `{many}{formula.text}` on the {side}"
-        if found.coefficients is not None:
+        if found.coefficients is not None and max(found.coefficients) <= _LARGEST_OFFERED:
             words = [
                 f"{count} {species.written}" if count != 1 else species.written
                 for count, species in zip(found.coefficients, (*left, *right), strict=True)

@@ -64,7 +64,9 @@ class Scope:
                     code=codes.NAME_UNFIT,
                     span=span,
                     message=f"`{name}` is no name that a mark can hold",
-                    help="use letters, digits and hyphens, beginning with a letter, as in `acid-2`",
+                    help="put quotes round a value that holds a comma; a name has letters, digits and hyphens"
+                    if " " in name and name.startswith("for ")
+                    else "use letters, digits and hyphens, beginning with a letter, as in `acid-2`",
                 )
             )
             return False

@@ -6,6 +6,7 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.yaml import YamlText
 from watchglass.read import syntax
+from watchglass.resolve.model import Continued
 from watchglass.resolve.outline import HIDDEN, anchors, plain
 
 if TYPE_CHECKING:
@@ -33,6 +34,7 @@ class Card(NamedTuple):
         code: Its code; empty for pages.
         code_span: Where the code stands.
         after: Codes it says come before it, with places.
+        continues: Codes of procedures whose product it takes up, with places.
         anchors: Addresses within it that links may name.
         links: Links to other pages and pictures.
     """
@@ -43,6 +45,7 @@ class Card(NamedTuple):
     code: str = ""
     code_span: Span | None = None
     after: tuple[tuple[str, Span], ...] = ()
+    continues: tuple[tuple[str, Span], ...] = ()
     anchors: frozenset[str] = frozenset()
     links: tuple[LinkOut, ...] = ()
 
@@ -57,6 +60,11 @@ def procedure_card(path: str, procedure: Procedure) -> Card:
         code=head.code,
         code_span=head.code_span,
         after=head.after,
+        continues=tuple(
+            (material.composition.code, material.value_span)
+            for material in procedure.materials.values()
+            if isinstance(material.composition, Continued)
+        ),
         anchors=anchors(body),
         links=tuple(_links(body)),
     )

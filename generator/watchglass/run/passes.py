@@ -8,6 +8,7 @@ bounded, since repetitions within repetitions multiply.
 from __future__ import annotations
 
 from dataclasses import dataclass, field
+from types import MappingProxyType
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.resolve import model
@@ -42,10 +43,17 @@ class Happening:
 
 
 class Course(NamedTuple):
-    """All that happens, in order; `cut` where the bound on events was reached, at that `again`."""
+    """All that happens, in order.
+
+    Attributes:
+        happenings: The events at their turns.
+        cut: The `again` at which the bound on events was reached, or None.
+        turns: How often each step is run, steps without events included.
+    """
 
     happenings: tuple[Happening, ...]
     cut: model.Again | None = None
+    turns: Mapping[int, int] = MappingProxyType({})
 
 
 def run_through(procedure: model.Procedure) -> Course:
@@ -54,10 +62,12 @@ def run_through(procedure: model.Procedure) -> Course:
     for step in procedure.steps:
         runner.turns[step.number] = 1
         for index, event in enumerate(step.events):
-            runner.event(event, step.number, index, {}, fresh=False)
+            runner.event(event, step.number, index, {}, turn=1, fresh=False)
             if runner.cut is not None:
-                return Course(tuple(runner.happenings), runner.cut)
-    return Course(tuple(runner.happenings))
+                break
+        if runner.cut is not None:
+            break
+    return Course(tuple(runner.happenings), runner.cut, runner.turns)
 
 
 class _Runner:
@@ -70,10 +80,17 @@ class _Runner:
         self._passes = 0
 
     def event(
-        self, event: model.Event, step: int, index: int, names: Mapping[str, str], *, fresh: bool
+        self,
+        event: model.Event,
+        step: int,
+        index: int,
+        names: Mapping[str, str],
+        *,
+        turn: int,
+        fresh: bool,
     ) -> None:
         if not isinstance(event, model.Again):
-            self.happenings.append(Happening(event, step, self.turns[step], names, fresh))
+            self.happenings.append(Happening(event, step, turn, names, fresh))
             return
         if self._depth > 8 or len(self.happenings) > MOST_EVENTS:
             self.cut = self.cut or event
@@ -96,10 +113,10 @@ class _Runner:
             if self._passes > MOST_EVENTS:
                 self.cut = self.cut or again
                 return
-            self.turns[number] = self.turns.get(number, 0) + 1
+            turn = self.turns[number] = self.turns.get(number, 0) + 1
             events = repeated.events[:index] if number == step else repeated.events
             for place, event in enumerate(events):
-                self.event(event, number, place, names, fresh=fresh)
+                self.event(event, number, place, names, turn=turn, fresh=fresh)
                 if self.cut is not None or len(self.happenings) > MOST_EVENTS:
                     self.cut = self.cut or again
                     return

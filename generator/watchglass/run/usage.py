@@ -132,7 +132,7 @@ def _sum(dimension: Dimension, parts: list[tuple[Quantity, float]], scale: float
     low = sum(quantity.si * share for quantity, share in parts)
     high = sum(quantity.si_high * share for quantity, share in parts)
     first = parts[0][0].unit
-    coarsest = max(quantity.unit.factor * 10.0**_place(quantity) for quantity, _ in parts)
+    coarsest = max(quantity.unit.factor * 10.0 ** _place(quantity) for quantity, _ in parts)
     about = any(quantity.kind is Kind.ABOUT for quantity, _ in parts)
     return Total(
         dimension,
