@@ -75,7 +75,7 @@ def said(expression: str, unit: str = "", entry: Judged = SETTING) -> str:
         ("min(2.0 g, 500 mg)", "mg", "500 mg"),
         ("max(2.0 g, 500 mg)", "", "2.0 g"),
         ("sqrt(16 cm^2)", "cm", "4.0 cm"),
-        ("ln(10)", "", "2.30258"),
+        ("ln(10)", "", "2.30259"),
         ("log(1000)", "", "3.00000"),
         ("round(5.57, 1)", "", "5.60000"),
         ("convert(5.0 g, mg)", "mg", "5000 mg"),
@@ -96,7 +96,7 @@ def said(expression: str, unit: str = "", entry: Judged = SETTING) -> str:
         ('molar-mass("CuSO4·5H2O")', "", "249.68 g/mol"),
         ('molar-mass("hydrochloric acid")', "", "36.458 g/mol"),
         ("density(ether)", "", "0.7408 g/mL"),
-        ("melts(benzocaine)", "", "89 °C"),
+        ("melts(benzocaine)", "", "89.6 °C"),
         ("theoretical-yield(neutral)", "g", "2.6 g"),
     ],
 )
@@ -147,7 +147,7 @@ def test_scale_reaches_what_a_pass_takes() -> None:
     entry = step("{2.50 g salt -> A}", front=f"{NAMES}scale: 2\n")
 
     assert said("mass(salt)", entry=entry) == "5.00 g"
-    assert said("mass(2.50 g salt)", entry=entry) == "5.00 g" or True
+    assert said("mass(2.50 g salt)", entry=entry) == "2.50 g"
 
 
 def test_figure_of_a_repeated_step_is_that_of_one_pass() -> None:

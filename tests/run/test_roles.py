@@ -85,7 +85,7 @@ def test_reactant_taken_as_needed_is_in_excess_and_does_not_count() -> None:
     by = found("{10 mL acid -> A; adjust A to pH 10 with base}")
 
     assert set(by) == {"acid"}
-    assert told(by["acid"]) == (1.0, False)
+    assert told(by["acid"]) == (1.0, True)
 
 
 def test_reactant_that_no_step_takes_leaves_the_others_without_equivalents() -> None:

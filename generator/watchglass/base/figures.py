@@ -28,7 +28,7 @@ def rounded(value: float, figures: int) -> Decimal:
     >>> str(rounded(0.0031832, 2)), str(rounded(1249.7, 3))
     ('0.0032', '1.25E+3')
     """
-    exact = Decimal(repr(value))
+    exact = Decimal(f"{value:.14g}")
     if not exact:
         return Decimal(0)
     place = Decimal(1).scaleb(exact.adjusted() - figures + 1)

@@ -98,7 +98,7 @@ class ActReader:
 
     def portion(self, amount: syntax.Amount) -> model.Portion | None:
         """Resolve so much of a material."""
-        kind = self.scope.take(amount.material, _REAGENTS, "a material")
+        kind = self._reagent_kind(amount.material)
         per = self._per(amount)
         if isinstance(amount.measure, str):
             if kind is None:
@@ -134,6 +134,13 @@ class ActReader:
             return None
         self.plausible(quantity, span)
         return model.Portion(amount.material.text, quantity, "", per, amount.span) if kind else None
+
+    def _reagent_kind(self, name: syntax.Name) -> str | None:
+        """Use a material: a local name, an aid, or a catalogue key as it stands."""
+        if self.scope.kind(name.text) is None and self.scope.catalogue.by_key(name.text):
+            self.scope.undeclared.setdefault(name.text, name.span)
+            return "material"
+        return self.scope.take(name, _REAGENTS, "a material")
 
     def _per(self, amount: syntax.Amount) -> tuple[Quantity, str] | None:
         if amount.per is None:
@@ -255,7 +262,7 @@ class ActReader:
             case syntax.Amount() as amount:
                 return self.portion(amount), ""
             case syntax.Place(name, None, _):
-                kind = self.scope.take(name, _REAGENTS, "a material")
+                kind = self._reagent_kind(name)
                 return None, name.text if kind else ""
             case _:
                 self._wrong_value(clause, "a material, with or without an amount", "alkali")

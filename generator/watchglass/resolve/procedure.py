@@ -76,6 +76,7 @@ class _Resolver:
         reactions = self._reactions(record, scope, materials, findings)
         body = BodyReader(scope)
         body.read(syntax.body)
+        materials |= self._by_key(scope)
         expectations = self._expectations(record, scope, body, findings)
         procedure = model.Procedure(
             syntax=syntax,
@@ -105,6 +106,21 @@ class _Resolver:
                 materials[entry.key.text] = reader.read(entry)
         findings += reader.findings
         return materials
+
+    def _by_key(self, scope: Scope) -> dict[str, model.Material]:
+        """Give the materials that the steps name by catalogue key without declaring them."""
+        found = {key: (self.catalogue.by_key(key), span) for key, span in scope.undeclared.items()}
+        return {
+            key: model.Material(
+                name=key,
+                written=substance.name,
+                composition=model.Pure(substance),
+                span=span,
+                value_span=span,
+            )
+            for key, (substance, span) in found.items()
+            if substance is not None
+        }
 
     def _vessels(
         self, record: Record, scope: Scope, findings: list[Finding]

@@ -51,6 +51,7 @@ class Scope:
         self.broken = broken
         self.findings: list[Finding] = []
         self.used: set[str] = set()
+        self.undeclared: dict[str, Span] = {}  # catalogue keys used as materials, with first places
         self.kinds: dict[str, str] = {}
         self._places: dict[str, Span] = {}
 

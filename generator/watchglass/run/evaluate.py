@@ -99,8 +99,11 @@ class Evaluator:
                 case "/":
                     return Value(left.si / right.si, left.dimension.over(right.dimension), figures)
                 case _:
+                    raised = left.si**right.si
+                    if isinstance(raised, complex):
+                        return NotKnown("data")
                     power = left.dimension.power(round(right.si))
-                    return Value(left.si**right.si, power, left.figures)
+                    return Value(raised, power, left.figures)
         except (ZeroDivisionError, OverflowError, ValueError):
             return NotKnown("data")
 
@@ -224,7 +227,7 @@ class Evaluator:
         match thing:
             case Call(Name("amount"), (Measured(quantity, span), Name() as of), _):
                 material = self.procedure.materials.get(of.text) or self._loose(of)
-                return (material, Use(quantity, "", 1, span)) if material else NotKnown("data")
+                return (material, Use(quantity, "", 0, span)) if material else NotKnown("data")
             case Name(text, _, _):
                 material = self.procedure.materials.get(text)
                 used = self.usage.get(text)
@@ -254,7 +257,9 @@ class Evaluator:
         quantity = use.quantity or material.provided
         if quantity is None:
             return NotKnown("data")
-        share = {"half": 0.5, "rest": math.nan}.get(use.of_all, 1.0) * self.procedure.head.scale
+        stated = use.times == 0  # an amount named in the expression is as it stands
+        scale = 1.0 if stated else self.procedure.head.scale
+        share = {"half": 0.5, "rest": math.nan}.get(use.of_all, 1.0) * scale
         if math.isnan(share):
             return NotKnown("bench")
         value = quantity.middle * share
@@ -262,6 +267,8 @@ class Evaluator:
             return Value(value, quantity.dimension, quantity.figures)
         if name == "strength":
             return self._strength(material)
+        if name == "mass" and isinstance(material.composition, model.Solution | model.Saturated):
+            return NotKnown("data")  # of the solution, not of what is dissolved in it
         found = contents(material, quantity.dimension, value, quantity.figures)
         if not isinstance(found, tuple) or len(found) != 1:
             return NotKnown("data")
@@ -291,7 +298,7 @@ class Evaluator:
         return NotKnown("data")
 
     def _theoretical_yield(self, node: Expression) -> Result:
-        """Mass of the first product from the limiting reactant, complete conversion, one pass."""
+        """Mass of the first product from all that is taken of the limiting reactant, fully converted."""
         from watchglass.run.roles import roles  # noqa: PLC0415 - roles stand above plain values
 
         reaction = self.procedure.reactions.get(node.text) if isinstance(node, Name) else None

@@ -78,7 +78,7 @@ def _of_reaction(
         for s, content in zip(species, held, strict=True)
     ]
     known = None if None in held else limit(reactants)
-    index = known.indices[0] if known else None
+    index = min(known.indices, key=lambda i: species[i].coefficient) if known else None
     for place, s in enumerate(species):
         if reaction.limiting and s.material == reaction.limiting and held[place]:
             index = place
@@ -90,11 +90,8 @@ def _of_reaction(
             content.substance.key,
             content.moles,
             _equivalents(content, reference),
-            limiting=len(reactants) > 1
-            and (
-                place == index
-                or (not reaction.limiting and known is not None and place in known.indices)
-            ),
+            limiting=place == index
+            or (not reaction.limiting and known is not None and place in known.indices),
             figures=min(content.figures, reference.figures) if reference else content.figures,
         )
         for place, (s, content) in enumerate(zip(species, held, strict=True))
