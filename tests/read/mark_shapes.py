@@ -9,17 +9,8 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.spans import Source, Span
 from watchglass.read import syntax as s
-from watchglass.read.expressions import (
-    After,
-    Binary,
-    Call,
-    Compare,
-    Expression,
-    Held,
-    Negative,
-    Within,
-)
 from watchglass.read.marks import read_mark
+from watchglass.read.terms import After, Binary, Call, Compare, Expression, Held, Negative, Within
 
 if TYPE_CHECKING:
     from collections.abc import Iterator

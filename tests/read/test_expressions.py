@@ -10,10 +10,11 @@ from hypothesis import strategies as st
 
 from read.mark_shapes import MEASURES, expressed, spans
 from watchglass.base.spans import Source
-from watchglass.read.expressions import DEEPEST, MOST_OPERATORS, Expression, read_expression
+from watchglass.read.expressions import DEEPEST, MOST_OPERATORS, read_expression
 
 if TYPE_CHECKING:
     from watchglass.base.findings import Finding
+    from watchglass.read.terms import Expression
 
 
 def read(text: str) -> tuple[Expression | None, tuple[Finding, ...], Source]:

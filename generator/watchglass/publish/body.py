@@ -20,14 +20,14 @@ from watchglass.publish import model as m
 from watchglass.publish.text import NBSP, joined, quantity_words, unit_words, value_words
 from watchglass.publish.wording import act_words, mark_words
 from watchglass.read import syntax
-from watchglass.read.expressions import Binary, Call, Compare, Held, Negative
+from watchglass.read.terms import Binary, Call, Compare, Held, Negative
 from watchglass.resolve.outline import HIDDEN, headings
 from watchglass.run.evaluate import Evaluator, NotKnown, Value, in_unit
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping
 
-    from watchglass.read.expressions import Expression
+    from watchglass.read.terms import Expression
     from watchglass.resolve.model import Procedure
 
 _ROWS = re.compile(r"(\d+)\s+rows?")

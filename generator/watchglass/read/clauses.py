@@ -11,11 +11,11 @@ from watchglass.base.quantities import Kind, Number, Quantity
 from watchglass.base.scan import unknown_unit
 from watchglass.base.units import REFUSED
 from watchglass.read import syntax
-from watchglass.read.expressions import StopReading
+from watchglass.read.cursor import StopReading
 from watchglass.read.words import CLAUSE_WORDS, CLOSURES, MEASURES_OF_ALL, NAME, PARTS, SETTINGS
 
 if TYPE_CHECKING:
-    from watchglass.read.expressions import Cursor
+    from watchglass.read.cursor import Cursor
 
 _PH = re.compile(r"p[Hh](?![^\W\d]|-)")
 _ALL_COMMA = tuple(sorted((*CLOSURES, *SETTINGS), key=len, reverse=True))

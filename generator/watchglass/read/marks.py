@@ -16,14 +16,8 @@ from watchglass.base.scan import Found, scan_quantity, unknown_unit
 from watchglass.base.units import REFUSED
 from watchglass.read import syntax
 from watchglass.read.clauses import read_amount, read_clauses, read_object, read_place
-from watchglass.read.expressions import (
-    Cursor,
-    Expression,
-    ExpressionReader,
-    StopReading,
-    cut,
-    ends_in_unit,
-)
+from watchglass.read.cursor import Cursor, StopReading, cut, ends_in_unit
+from watchglass.read.expressions import ExpressionReader
 from watchglass.read.words import (
     CLAUSE_WORDS,
     CLOSURES,
@@ -37,6 +31,7 @@ if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
 
     from watchglass.base.spans import Source, Span
+    from watchglass.read.terms import Expression
 
 _RECORD_NAME = re.compile(r"\s*([^\W_][\w-]*)\s*:\s+")
 _RECORD_UNIT = re.compile(r".*\bin\s+(?=\S)", re.DOTALL)

@@ -13,29 +13,18 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import TYPE_CHECKING, NamedTuple
 
+from watchglass.read.terms import Measured as Measured
+from watchglass.read.terms import Name as Name
+from watchglass.read.terms import Words as Words
+
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
     from watchglass.base.spans import Source, Span
     from watchglass.base.yaml import YamlMapping
-    from watchglass.read.expressions import Expression
+    from watchglass.read.terms import Expression
 
 
 # ---------------------------------------------------------------- inside a mark
-
-
-class Name(NamedTuple):
-    """A name as written: local name or catalogue key; `quoted` where it stood in double quotes."""
-
-    text: str
-    span: Span
-    quoted: bool = False
-
-
-class Measured(NamedTuple):
-    """A quantity with its place."""
-
-    quantity: Quantity
-    span: Span
 
 
 class Amount(NamedTuple):
@@ -59,13 +48,6 @@ class Place(NamedTuple):
 
     name: Name
     part: str | None
-    span: Span
-
-
-class Words(NamedTuple):
-    """Text in double quotes or plain words, as after `until`."""
-
-    text: str
     span: Span
 
 

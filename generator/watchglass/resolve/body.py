@@ -14,7 +14,7 @@ from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding, Related
 from watchglass.base.scan import Found, scan_quantity
 from watchglass.read import syntax
-from watchglass.read.expressions import Compare, Within
+from watchglass.read.terms import Compare, Within
 from watchglass.resolve import model, prose
 from watchglass.resolve.acts import ActReader
 from watchglass.resolve.charges import charge_table
@@ -27,7 +27,7 @@ if TYPE_CHECKING:
     from watchglass.base.dimensions import Dimension
     from watchglass.base.findings import Code
     from watchglass.base.spans import Span
-    from watchglass.read.expressions import Expression
+    from watchglass.read.terms import Expression
     from watchglass.resolve.scope import Scope
 
 _HIDDEN = frozenset(("instructor", "answer"))

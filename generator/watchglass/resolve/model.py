@@ -20,7 +20,7 @@ if TYPE_CHECKING:
     from watchglass.catalogue.substances import Substance
     from watchglass.chemistry.formulas import Formula
     from watchglass.read import syntax
-    from watchglass.read.expressions import Expression
+    from watchglass.read.terms import Expression
 
 
 # ---------------------------------------------------------------- materials

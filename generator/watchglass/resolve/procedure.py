@@ -12,7 +12,8 @@ from watchglass.base.findings import Finding
 from watchglass.base.yaml import YamlList, YamlMapping, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.ware import read_vessel
-from watchglass.read.expressions import Compare, Within, read_expression
+from watchglass.read.expressions import read_expression
+from watchglass.read.terms import Compare, Within
 from watchglass.resolve import model
 from watchglass.resolve.body import BodyReader
 from watchglass.resolve.head import FIELDS, read_acceptances, read_head, read_intended

@@ -12,17 +12,8 @@ from watchglass.base import codes
 from watchglass.base import dimensions as dim
 from watchglass.base.findings import Finding, did_you_mean
 from watchglass.base.scan import Found, scan_quantity, unknown_unit
-from watchglass.read.expressions import (
-    After,
-    Binary,
-    Call,
-    Compare,
-    Expression,
-    Held,
-    Negative,
-    Within,
-)
 from watchglass.read.syntax import Measured, Name, Words
+from watchglass.read.terms import After, Binary, Call, Compare, Expression, Held, Negative, Within
 
 if TYPE_CHECKING:
     from collections.abc import Mapping

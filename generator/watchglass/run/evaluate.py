@@ -14,8 +14,8 @@ from watchglass.base import dimensions as dim
 from watchglass.base.figures import CATALOGUE_FIGURES, MOST_FIGURES
 from watchglass.base.scan import Found, scan_quantity
 from watchglass.chemistry.formulas import Formula, parse_formula
-from watchglass.read.expressions import Binary, Call, Expression, Negative
 from watchglass.read.syntax import Measured, Name, Words
+from watchglass.read.terms import Binary, Call, Expression, Negative
 from watchglass.resolve import model
 from watchglass.run.content import Content, contents
 from watchglass.run.usage import Use
