@@ -26,6 +26,8 @@ _INDENT = re.compile(r"^ {128}", re.MULTILINE)
 _DASHES = re.compile(rf"(?:[-?] +){{{DEEPEST}}}")
 _SPECIAL = re.compile(r"(?:^|[\s\[{,:-])(?:[&*]\S|!)|^\s*<<\s*:", re.MULTILINE)
 _ANCHOR = re.compile(r"&\S+")
+_GLUED = re.compile(r"\s*(?:- )?([A-Za-z][\w-]*):(?!//)([^\s:].*)$")
+_NO_COLON = re.compile(r"\s*([A-Za-z][\w-]*)[ \t]+(\S.*)$")
 _UNPRINTABLE = re.compile(r"[\x00-\x08\x0b-\x1f\x7f-\x84\x86-\x9f\ud800-\udfff\ufffe\uffff]")
 
 
@@ -212,6 +214,10 @@ def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
     while at > 0 and (at >= len(text) or text[at] == "\n"):
         at -= 1
     problem = str(getattr(error, "problem", None) or "it cannot be read").rstrip(".")
+    if slip := _slip(text, at, problem):
+        first, last, message, mend = slip
+        span = source.span(start + first, start + last)
+        return Finding(code=codes.YAML_NOT_READ, span=span, message=message, help=mend)
     problem = problem.removeprefix("but ")
     line_start = text.rfind("\n", 0, at) + 1
     line = text[line_start : text.find("\n", at) if "\n" in text[at:] else len(text)]
@@ -230,6 +236,52 @@ def _syntax(source: Source, text: str, start: int, error: Any) -> Finding:
         message=f"the YAML cannot be read: {problem}",
         help=help_,
     )
+
+
+def _slip(text: str, at: int, problem: str) -> tuple[int, int, str, str] | None:
+    """Find the commonest slips, which PyYAML reports a line too low: a colon or a blank forgotten.
+
+    Returns:
+        Start and end of what is wrong, the fact, and how to mend it; None for other faults.
+    """
+    if "expected ':'" not in problem and "mapping values" not in problem:
+        return None
+    here = text.rfind("\n", 0, at) + 1
+    before = text.rfind("\n", 0, max(0, here - 1)) + 1
+    for line_start in (before, here):
+        end = text.find("\n", line_start)
+        line = text[line_start : len(text) if end < 0 else end]
+        if found := _GLUED.match(line):
+            key = found[1]
+            first = line_start + found.start(1)
+            return (
+                first,
+                first + len(key) + 1,
+                f"no blank stands after `{key}:`",
+                f"write `{key}: {found[2].strip()}`",
+            )
+        if (found := _NO_COLON.match(line)) and ":" not in line:
+            first = line_start + found.start(1)
+            return (
+                first,
+                line_start + len(line.rstrip()),
+                f"`{found[1]}` has no colon after it",
+                f"write `{found[1]}: {found[2].strip()}`",
+            )
+    above, this = text[before:here], text[here:].partition("\n")[0]
+    if _indent(this) > _indent(above) and re.match(r"\s*[\w-]+:\s+[^\s#|>]", above):
+        first = here + _indent(this)
+        return (
+            here,
+            first + 1,
+            "the line is set in below one that already has a value",
+            "set it in like its neighbours",
+        )
+    return None
+
+
+def _indent(line: str) -> int:
+    return len(line) - len(line.lstrip(" "))
 
 
 class _Builder:
