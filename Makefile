@@ -48,6 +48,7 @@ units: $(VENV)/.ready-dev
 
 catalogue: $(VENV)/.ready-dev
 	$(BIN)/python tests/tools/name_index.py
+	$(BIN)/python tests/tools/component_index.py
 
 bench: $(VENV)/.ready-dev
 	$(BIN)/python tests/bench/whole_commands.py

@@ -46,7 +46,28 @@ def test_shipped_substances_give_no_finding(source: Source) -> None:
 
 
 def test_the_catalogue_is_worth_having() -> None:
-    assert len(ALL) >= 250
+    assert len(ALL) >= 450
+
+
+def test_no_cas_number_stands_for_two_substances() -> None:
+    numbers = [substance.cas for substance in ALL if substance.cas]
+
+    assert sorted(numbers) == sorted(set(numbers))
+
+
+def test_groups_are_the_words_that_the_readme_lists() -> None:
+    readme = " ".join((DATA / "README.md").read_text("utf-8").split())
+    listed = readme.partition("## Words used in `groups`")[2].partition(".")[0].casefold()
+    used = {group for substance in ALL for group in substance.groups}
+
+    assert {group for group in used if group not in {w.strip() for w in listed.split(",")}} == set()
+
+
+def test_every_shipped_liquid_has_a_density() -> None:
+    liquids = {s.key for s in ALL if s.state == "liquid"}
+    known = {s.key for s in ALL if s.density is not None}
+
+    assert liquids - known == set()
 
 
 def test_index_of_names_is_that_of_the_tables() -> None:

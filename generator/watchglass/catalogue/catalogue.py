@@ -18,12 +18,13 @@ from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.decode import decode_substance
 
 if TYPE_CHECKING:
-    from collections.abc import Iterable, Iterator, Mapping
+    from collections.abc import Callable, Iterable, Iterator, Mapping
 
     from watchglass.base.spans import Source, Span
     from watchglass.catalogue.glassware import GlasswareType
     from watchglass.catalogue.stocks import Indicator, Stock
     from watchglass.catalogue.substances import Substance
+    from watchglass.chemistry.densities import DensityTable
     from watchglass.chemistry.formulas import Formula
 
 _TOP_KEY = re.compile(r"^([^\s#:][^:\n]*):", re.MULTILINE)
@@ -58,6 +59,15 @@ class ShippedSubstances:
         """Give all keys in the order of the files."""
         return tuple(self._places)
 
+    def hydrates(self, key: str) -> tuple[str, ...]:
+        """Give the keys of all hydrates of a substance, by a search of the text alone."""
+        line = f"\n  hydrate-of: {key}\n"
+        return tuple(
+            name
+            for name, (source, start, end) in self._places.items()
+            if source.text.find(line, start, end) >= 0
+        )
+
     def get(self, key: str) -> Substance | None:
         """Decode an entry; None where there is none."""
         if key in self._read:
@@ -84,7 +94,10 @@ class Catalogue:
         indicators: Indicators by key.
         stocks: The set's stocks by key and case-folded name.
         measures: Countable measures with their size in m3, None where unknown.
+        components_: Components of the shipped substances that are not their own; see `components`.
+        formulas: Key by formula in Hill order of small shipped substances that share it with none.
         aids: Things that need no declaration, case-folded.
+        densities: Gives the densities of aqueous solutions by key of the solute.
     """
 
     shipped: ShippedSubstances
@@ -94,7 +107,14 @@ class Catalogue:
     indicators: Mapping[str, Indicator] = field(default_factory=dict)
     stocks: Mapping[str, Stock] = field(default_factory=dict)
     measures: Mapping[str, float | None] = field(default_factory=dict)
+    components_: Mapping[str, Mapping[str, int]] = field(default_factory=dict)
+    formulas: Mapping[str, str] = field(default_factory=dict)
     aids: frozenset[str] = frozenset()
+    densities: Callable[[], Mapping[str, DensityTable]] = dict
+
+    def density_table(self, key: str) -> DensityTable | None:
+        """Give the densities of aqueous solutions of a solute; the table is read when first asked."""
+        return self.densities().get(key)
 
     def by_key(self, key: str) -> Substance | None:
         """Find a substance by its catalogue key only."""
@@ -121,6 +141,37 @@ class Catalogue:
             and substance.formula.composition == formula.composition
             and substance.formula.charge == formula.charge
         )
+
+    def forms_of(self, substance: Substance) -> tuple[Substance, ...]:
+        """Give the anhydrous form and every hydrate of a substance, the lightest first.
+
+        Itself is among them; a substance without hydrates is alone.
+        """
+        base = substance.hydrate_of or substance.key
+        own = (other.key for other in self.own.values() if other.hydrate_of == base)
+        keys = dict.fromkeys((base, substance.key, *self.shipped.hydrates(base), *own))
+        forms = [found for found in map(self.by_key, keys) if found is not None]
+        return tuple(sorted(forms, key=lambda form: form.molar_mass or 0.0))
+
+    def components(self, key: str) -> Mapping[str, int]:
+        """Give what one mole of a substance is once it is dissolved."""
+        substance = self.own.get(key)
+        if substance is not None:
+            from watchglass.catalogue.components import components_of  # noqa: PLC0415 - rare
+
+            return components_of(substance, self._by_smiles)
+        return self.components_.get(key) or {key: 1}
+
+    def by_formula(self, formula: Formula) -> str | None:
+        """Give the key of the common substance that a bare formula stands for."""
+        return self.formulas.get(formula.hill())
+
+    def _by_smiles(self, smiles: str) -> str | None:
+        for key in dict.fromkeys((*self.own, *self.shipped.keys())):
+            substance = self.by_key(key)
+            if substance is not None and substance.smiles == smiles:
+                return key
+        return None
 
     def words(self) -> tuple[str, ...]:
         """Give every name and key, for near misses."""

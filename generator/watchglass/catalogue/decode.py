@@ -10,6 +10,7 @@ from watchglass.base.fields import Field, Record, Shape, read_fields
 from watchglass.base.findings import Finding
 from watchglass.base.yaml import YamlEntry, YamlMapping, YamlText
 from watchglass.catalogue import texts
+from watchglass.catalogue.plausible import implausible
 from watchglass.catalogue.substances import At, Substance
 from watchglass.chemistry.cas import check_digit_holds
 from watchglass.chemistry.formulas import Formula, FormulaFault, parse_formula
@@ -17,7 +18,6 @@ from watchglass.chemistry.smiles import SmilesFault, count_atoms
 
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
-    from watchglass.base.spans import Span
 
 FIELDS: dict[str, Field] = {
     "names": Field(Shape.TEXT_OR_LIST, "what it is called; the first is shown", required=True),
@@ -80,7 +80,7 @@ def decode_substance(entry: YamlEntry) -> tuple[Substance | None, tuple[Finding,
         ghs=texts.text_map(record, "ghs") or None,
         sources=texts.sources(record),
     )
-    findings += _implausible(record, substance)
+    findings += implausible(record, substance)
     findings += _without_source(entry, record, substance)
     return substance, tuple(findings)
 
@@ -208,37 +208,6 @@ def _partition(record: Record, findings: list[Finding]) -> dict[str, float]:
             if read is not None:
                 result[entry.key.text] = read.si
     return result
-
-
-def _implausible(record: Record, substance: Substance) -> list[Finding]:
-    findings = []
-    density = substance.density
-    if density is not None and not 400 <= density.value.si <= 5000:
-        findings.append(
-            _doubt(
-                record,
-                "density",
-                f"a liquid's density of {density.value.text} cannot well be",
-                "look at the unit",
-            )
-        )
-    melts, boils = substance.melts, substance.boils
-    if melts and boils and melts.si > boils.si_high:
-        findings.append(
-            _doubt(
-                record,
-                "melts",
-                f"it melts at {melts.text}, above where it boils ({boils.text})",
-                "see whether the two are changed about",
-            )
-        )
-    return findings
-
-
-def _doubt(record: Record, name: str, message: str, help_: str) -> Finding:
-    node = record.text(name)
-    span: Span = node.span if node else record.span
-    return Finding(code=codes.VALUE_IMPLAUSIBLE, span=span, message=message, help=help_)
 
 
 def _without_source(entry: YamlEntry, record: Record, substance: Substance) -> list[Finding]:

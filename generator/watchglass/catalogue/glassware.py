@@ -21,6 +21,7 @@ class GlasswareType(NamedTuple):
         measures: `approximate`, `delivers`, `contains`, or empty.
         source: Where sizes and use are from.
         span: Its key in the file.
+        marks: Its sizes that measure, as a table; `measuring.py` reads it when it is asked for.
     """
 
     key: str
@@ -31,6 +32,7 @@ class GlasswareType(NamedTuple):
     measures: str
     source: str
     span: Span
+    marks: str = ""
 
     @property
     def name(self) -> str:

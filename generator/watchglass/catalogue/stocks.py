@@ -11,13 +11,17 @@ if TYPE_CHECKING:
 
 
 class Stock(NamedTuple):
-    """One stock: its `material` is text in the notation of a material, resolved where it is used."""
+    """One stock: its `material` is text in the notation of a material, resolved where it is used.
+
+    `density` is that of the solution, as its label has it.
+    """
 
     key: str
     names: tuple[str, ...]
     material: YamlText
     notes: str
     span: Span
+    density: YamlText | None = None
 
 
 class Indicator(NamedTuple):

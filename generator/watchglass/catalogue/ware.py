@@ -28,6 +28,7 @@ GLASSWARE_FIELDS: dict[str, Field] = {
     "holds": Field(Shape.TEXT, "true where things can be charged to it"),
     "measures": Field(Shape.TEXT, "approximate, delivers or contains"),
     "source": Field(Shape.TEXT, "where sizes and use are from"),
+    "marks": Field(Shape.TEXT, "sizes that measure: a row for each size, class and standard"),
     "note": Field(Shape.TEXT, "a remark"),
 }
 INDICATOR_FIELDS: dict[str, Field] = {
@@ -40,6 +41,7 @@ INDICATOR_FIELDS: dict[str, Field] = {
 STOCK_FIELDS: dict[str, Field] = {
     "names": Field(Shape.TEXT_OR_LIST, "further names it goes by"),
     "material": Field(Shape.TEXT, "what it is, as `3.0 M hydrochloric acid`", required=True),
+    "density": Field(Shape.TEXT, "density of the solution, as `1.18 g/mL`"),
     "shelf-life": Field(Shape.TEXT, "how long it keeps"),
     "container": Field(Shape.TEXT, "what it is kept in"),
     "note": Field(Shape.TEXT, "a remark"),
@@ -65,6 +67,7 @@ def decode_glassware(entry: YamlEntry) -> tuple[GlasswareType | None, tuple[Find
         measures=_text(record, "measures"),
         source=_text(record, "source"),
         span=entry.key.span,
+        marks=_text(record, "marks"),
     )
     return ware, tuple(findings)
 
@@ -102,6 +105,7 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
         material=material,
         notes=notes,
         span=entry.key.span,
+        density=record.text("density"),
     )
     return stock, found
 
@@ -185,6 +189,12 @@ def read_vessel(
     return VesselType(type=ware, written=words, size=size, class_=class_, states=states), tuple(
         findings
     )
+
+
+def glassware_in(node: YamlText, types: Mapping[str, GlasswareType]) -> VesselType | None:
+    """Read equipment that is glassware (`measuring cylinder 25 mL`); None for other equipment."""
+    words = re.split(r"[,\d]", node.text, maxsplit=1)[0].strip()
+    return read_vessel(node, types)[0] if words.casefold() in types else None
 
 
 def _size_findings(node: YamlText, at: int, size: Quantity, ware: GlasswareType) -> list[Finding]:

@@ -17,6 +17,7 @@ if TYPE_CHECKING:
     from collections.abc import Mapping
 
     from watchglass.catalogue.glassware import GlasswareType
+    from watchglass.chemistry.densities import DensityTable
     from watchglass.catalogue.stocks import Indicator
 
 DATA = Path(__file__).parents[1] / "catalogue" / "data"
@@ -30,6 +31,8 @@ class Shipped(NamedTuple):
     indicators: Mapping[str, Indicator]
     measures: Mapping[str, float | None]
     aids: frozenset[str]
+    components: Mapping[str, Mapping[str, int]]
+    formulas: Mapping[str, str]
 
 
 def substance_sources() -> tuple[Source, ...]:
@@ -59,7 +62,16 @@ def shipped() -> Shipped:
         indicators=indicators,
         measures=read_measures(_node("measures.yml")),
         aids=_aids(),
+        **json.loads((DATA / "components.json").read_text("utf-8")),
     )
+
+
+@cache
+def density_tables() -> Mapping[str, DensityTable]:
+    """Read the densities of aqueous solutions, once a process and when first asked."""
+    from watchglass.catalogue.densities import read_densities  # noqa: PLC0415 - rare
+
+    return read_densities((DATA / "densities.yml").read_text("utf-8"))
 
 
 def _node(name: str) -> YamlMapping:

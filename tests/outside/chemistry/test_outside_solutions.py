@@ -8,6 +8,7 @@ import pytest
 
 from outside.published import cases, kinds
 from outside.tolerances import within, wrong
+from watchglass.chemistry.densities import DensityTable, density_at, fraction_of_concentration
 from watchglass.chemistry.formulas import Formula, parse_formula
 from watchglass.chemistry.solutions import (
     Portions,
@@ -35,6 +36,7 @@ from watchglass.chemistry.strengths import (
     mass_fraction,
     molality,
 )
+from watchglass.shell.shipped import density_tables
 
 #: Litres and millilitres in the files, cubic metres here.
 ML = 1e-6
@@ -294,3 +296,81 @@ def test_saturated_brine_holds_salt_and_water(case: dict[str, Any]) -> None:
 
     assert case["expected"].keys() == computed.keys()
     assert wrong(case, computed) == {}
+
+
+# ------------------------------------------------------------------ our own table of densities
+
+KEYS = {
+    "HCl": "hydrogen-chloride",
+    "NaOH": "sodium-hydroxide",
+    "NaCl": "sodium-chloride",
+    "H2SO4": "sulfuric-acid",
+    "NH3": "ammonia",
+    "C2H4O2": "acetic-acid",
+    "HNO3": "nitric-acid",
+    "K2CO3": "potassium-carbonate",
+    "Na2CO3": "sodium-carbonate",
+    "NaHCO3": "sodium-hydrogencarbonate",
+    "H3PO4": "phosphoric-acid",
+    "KOH": "potassium-hydroxide",
+    "NH4Cl": "ammonium-chloride",
+    "CaCl2": "calcium-chloride",
+    "C6H8O7": "citric-acid",
+    "C2H6O": "ethanol",
+}
+TABLES = density_tables()
+POINTS = [
+    (key, index) for key, table in TABLES.items() for index in range(1, len(table.points) - 1)
+]
+
+
+@pytest.mark.parametrize("case", cases("solutions.json", "table_point"))
+def test_own_table_gives_the_handbooks_density(case: dict[str, Any]) -> None:
+    key = KEYS.get(case["inputs"]["formula"])
+    if key is None:
+        pytest.skip("not in the table")
+    found = density_at(TABLES[key], case["inputs"]["mass_percent"] / 100)
+
+    assert found is not None
+    assert found / 1000 == pytest.approx(case["expected"]["density_g_per_mL"], rel=0.003)
+
+
+@pytest.mark.parametrize(("key", "index"), POINTS, ids=str)
+def test_point_that_is_left_out_comes_back_from_its_neighbours(key: str, index: int) -> None:
+    table = TABLES[key]
+    fraction, density = table.points[index]
+    rest = DensityTable(
+        table.points[:index] + table.points[index + 1 :],
+        table.sources[:index] + table.sources[index + 1 :],
+    )
+
+    assert density_at(rest, fraction) == pytest.approx(density, rel=0.005)
+
+
+@pytest.mark.parametrize("key", TABLES)
+def test_mass_of_solute_per_volume_only_rises(key: str) -> None:
+    table = TABLES[key]
+    fractions = [table.most * step / 500 for step in range(501)]
+    held = [fraction * (density_at(table, fraction) or 0.0) for fraction in fractions]
+
+    assert held == sorted(held)
+
+
+@pytest.mark.parametrize("key", TABLES)
+def test_concentration_and_fraction_lead_back_to_each_other(key: str) -> None:
+    table = TABLES[key]
+    fraction = table.most * 0.63
+    density = density_at(table, fraction)
+    assert density is not None
+
+    assert fraction_of_concentration(table, fraction * density, 1.0) == pytest.approx(fraction)
+
+
+@pytest.mark.parametrize("key", TABLES)
+def test_beyond_a_table_nothing_is_told(key: str) -> None:
+    table = TABLES[key]
+    top = density_at(table, table.most)
+    assert top is not None
+
+    assert density_at(table, table.most * 1.01 + 1e-6) is None
+    assert fraction_of_concentration(table, table.most * top * 1.02, 1.0) is None
