@@ -87,12 +87,28 @@ def step(*sentences: str, front: str = NAMES, files: Mapping[str, str] | None = 
 
 
 def faults(entry: Judged) -> tuple[Finding, ...]:
-    """Give what is to be mended: no notes, and nothing of names that a test leaves unused."""
+    """Give what is to be mended at the desk.
+
+    No notes, nothing of names that a test leaves unused, and nothing of the bench: a sentence that
+    tries one act out makes no procedure. `at_the_bench` gives what goes wrong there.
+    """
     return tuple(
         f
         for f in entry.findings
-        if f.code.severity > Severity.NOTE and f.code.number not in _UNUSED
+        if f.code.severity > Severity.NOTE and f.code.number not in _UNUSED and not of_bench(f)
     )
+
+
+def of_bench(finding: Finding) -> bool:
+    """Tell whether a finding is of what happens at the bench."""
+    number = finding.code.number
+    return number[0] == "X" or (number[0] == "B" and number >= "B120")
+
+
+def at_the_bench(entry: Judged) -> tuple[Finding, ...]:
+    """Give what goes wrong at the bench, in the order found; the desk must find nothing."""
+    assert places(faults(entry)) == []
+    return tuple(f for f in entry.findings if of_bench(f))
 
 
 def places(findings: Iterable[Finding]) -> list[Place]:

@@ -94,10 +94,10 @@ FAULTS = [
     ("NaOH", "K101", "NaOH", "`NaOH` is not in the catalogue", "did you mean `sodium hydroxide`?"),
     ("0.1 M NaOH", "K101", "NaOH", "`NaOH` is not in the catalogue", "did you mean `sodium hydroxide`?"),
     ("[water]", "N145", "[water]", "a material takes a mapping, not a list", "write `key:` and set the fields in on the lines below"),
-    ("{water: 1}", "N143", "water", "`water` is no field of a material", "take one of `contains`, `in`, `provided`, `composition`, `is`, `from`, `vessel`, `one-of`, `as`"),
+    ("{water: 1}", "N143", "water", "`water` is no field of a material", "take one of `contains`, `in`, `density`, `also`, `provided`, `composition`, `is`, `from`, `vessel`, `one-of`, `as`"),
     ("{is: {a: b}}", "N145", "{a: b}", "`is` takes text, not a mapping", "write `key: some words`"),
-    ("{zz: 1}", "N143", "zz", "`zz` is no field of a material", "take one of `contains`, `in`, `provided`, `composition`, `is`, `from`, `vessel`, `one-of`, `as`"),
-    ("{is: water, zz: 1}", "N143", "zz", "`zz` is no field of a material", "take one of `contains`, `in`, `provided`, `composition`, `is`, `from`, `vessel`, `one-of`, `as`"),
+    ("{zz: 1}", "N143", "zz", "`zz` is no field of a material", "take one of `contains`, `in`, `density`, `also`, `provided`, `composition`, `is`, `from`, `vessel`, `one-of`, `as`"),
+    ("{is: water, zz: 1}", "N143", "zz", "`zz` is no field of a material", "take one of `contains`, `in`, `density`, `also`, `provided`, `composition`, `is`, `from`, `vessel`, `one-of`, `as`"),
     ("3.0 mollar hydrochloric acid", "Q105", "mollar", "`mollar` is no unit", "take one of the units in the list, such as `g`, `mL`, `mmol`, `min`"),
     ("{one-of: {}}", "N144", "one-of", "`x` does not say what it is", "add `is: 3.0 M hydrochloric acid` or `contains: {…}`"),
 ]

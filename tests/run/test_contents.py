@@ -75,16 +75,16 @@ def test_mixture_by_volume_needs_the_density_of_each_part() -> None:
     ("description", "value", "dimension", "what", "key"),
     [
         ("benzocaine", 1.0, dim.VOLUME, "density", "benzocaine"),
-        ("98 % w/w sulfuric acid", 1.0, dim.VOLUME, "solution density", "sulfuric-acid"),
-        ("3.0 M hydrochloric acid", 1.0, dim.MASS, "solution density", "hydrogen-chloride"),
-        ("saturated sodium chloride", 10.0, dim.VOLUME, "solubility", "sodium-chloride"),
+        ("40 % w/w sucrose", 1.0, dim.VOLUME, "solution density", "sucrose"),
+        ("10 % w/w benzoic acid in ethanol", 1.0, dim.VOLUME, "solution density", "benzoic-acid"),
+        ("3.0 M glucose", 1.0, dim.MASS, "solution density", "glucose"),
+        ("saturated sodium bromide in ethanol", 10.0, dim.VOLUME, "solubility", "sodium-bromide"),
         ("sodium chloride", 3.0, dim.COUNT, "size", "sodium-chloride"),
         ("3.0 M hydrochloric acid", 3.0, dim.COUNT, "size", "hydrogen-chloride"),
         ("{composition: unknown}", 1.0, dim.MASS, "composition", None),
         ("{from: OC-03}", 1.0, dim.MASS, "composition", None),
         ("{one-of: {A: caffeine, B: benzoic-acid}}", 1.0, dim.MASS, "composition", None),
         ("{contains: {benzocaine: 1 mol, benzoic-acid: 1 mol}}", 1.0, dim.VOLUME, "density", None),
-        ("{contains: {ethanol: 1 mL, water: 1 mL}}", 1.0, dim.MASS, "density", None),
     ],
 )
 def test_what_is_missing_is_said_and_never_taken_for_nought(
@@ -95,6 +95,51 @@ def test_what_is_missing_is_said_and_never_taken_for_nought(
     assert isinstance(found, Missing)
     assert found.what == what
     assert (found.substance.key if found.substance else None) == key
+
+
+# 36 % w/w, 1.1791 g/mL: 424.5 g/L. 26.4 % w/w sodium chloride, 1.2 g/mL: CRC Handbook, 102nd ed.
+@pytest.mark.parametrize(
+    ("description", "value", "dimension", "expected"),
+    [
+        ("36 % w/w hydrochloric acid", 10.0, dim.VOLUME, {"hydrogen-chloride": 116.43}),
+        ("6.0 M sodium hydroxide", 12.19, dim.MASS, {"sodium-hydroxide": 60.1}),
+        ("saturated sodium chloride", 10.0, dim.VOLUME, {"sodium-chloride": 54.0}),
+        ("5 % w/w copper(II) sulfate", 10.0, dim.VOLUME, {"copper-ii-sulfate": 3.13}),
+        ("{is: 37 % w/w hydrochloric acid, density: 1.19 g/mL}", 10.0, dim.VOLUME,
+         {"hydrogen-chloride": 120.8}),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}}", 3.366, dim.MASS,
+         {"ethanol": 51.4, "water": 55.4}),
+        ("{contains: {ethanol: 1 mol, water: 1 mol}}", 6.407, dim.MASS,
+         {"ethanol": 100.0, "water": 100.0}),
+    ],
+)  # fmt: skip
+def test_density_of_the_solution_carries_over_between_mass_and_volume(
+    description: str, value: float, dimension: dim.Dimension, expected: dict[str, float]
+) -> None:
+    assert mmol(held(description, value, dimension)) == pytest.approx(expected, rel=5e-3)
+
+
+@pytest.mark.parametrize(
+    ("description", "source"),
+    [
+        ("36 % w/w hydrochloric acid", "table"),
+        ("3.0 M hydrochloric acid", "table"),
+        ("5 % w/w copper(II) sulfate", "water"),
+        ("{is: 37 % w/w hydrochloric acid, density: 1.19 g/mL}", "given"),
+        ("40 % w/w sucrose", ""),
+    ],
+)
+def test_density_says_where_it_is_from(description: str, source: str) -> None:
+    facts = material(description).solution
+
+    assert facts is not None
+    assert facts.source == source
+
+
+def test_what_rests_on_an_assumed_density_shows_two_figures() -> None:
+    (found,) = held("5.00 % w/w copper(II) sulfate", 10.0, dim.VOLUME)  # type: ignore[misc]
+
+    assert found.figures == 2
 
 
 @pytest.mark.parametrize(

@@ -119,6 +119,15 @@ SOURCE_MISSING = Code("K108", "source-missing", _WARNING, "a value does not say 
 VALUE_IMPLAUSIBLE = Code("K109", "value-implausible", _WARNING, "a value cannot well be true")
 SMILES_NOT_READ = Code("K110", "smiles-not-read", _ERROR, "a SMILES cannot be read")
 MATERIAL_NOT_READ = Code("K111", "material-not-read", _ERROR, "a material cannot be read")
+DIFFERS_FROM_SHIPPED = Code(
+    "K130", "differs-from-shipped", _WARNING, "a set's figure is far from that of the catalogue"
+)
+HYDRATE_UNFIT = Code(
+    "K131", "hydrate-unfit", _WARNING, "a name and a formula hold different amounts of water"
+)
+SOLUTION_DENSITY_DIFFERS = Code(
+    "K120", "solution-density-differs", _WARNING, "a solution of this strength has another density"
+)
 
 # -- S: stoichiometry --------------------------------------------------------------------------
 EQUATION_NOT_READ = Code("S101", "equation-not-read", _ERROR, "an equation cannot be read")
@@ -130,7 +139,77 @@ PROVIDED_EXCEEDED = Code("S111", "provided-exceeded", _ERROR, "the steps use mor
 ALL_OF_NOTHING = Code(
     "S112", "all-of-nothing", _ERROR, "all of a material is used, none is provided"
 )
+LABEL_DISAGREES = Code(
+    "S120", "label-disagrees", _WARNING, "a label says two strengths that are not the same"
+)
 LIMITING_UNFIT = Code("S113", "limiting-unfit", _ERROR, "the limiting reactant does not react")
+
+# -- B: bench and vessels -----------------------------------------------------------------------
+MORE_FIGURES_THAN_WARE = Code(
+    "B100", "more-figures-than-ware", _WARNING, "a figure is finer than the ware that measures it"
+)
+WARE_TOO_SMALL = Code(
+    "B101", "ware-too-small", _WARNING, "more is measured than the ware takes in one filling"
+)
+WARE_TOO_LARGE = Code(
+    "B102", "ware-too-large", _WARNING, "a volume is too small for the ware that measures it"
+)
+ONE_MARK_OTHER_VOLUME = Code(
+    "B103", "one-mark-other-volume", _WARNING, "ware with one mark is to give another volume"
+)
+SIZE_NOT_OWNED = Code(
+    "B110", "size-not-owned", _WARNING, "a scaled vessel is owned in no such size"
+)
+SCALED_BEYOND_MEASURE = Code(
+    "B111", "scaled-beyond-measure", _WARNING, "a scaled amount is too small to be measured"
+)
+VESSEL_OVERFILLED = Code("B120", "vessel-overfilled", _ERROR, "a vessel holds more than its size")
+VESSEL_TOO_FULL = Code(
+    "B121", "vessel-too-full", _WARNING, "a vessel is too full for what is done in it"
+)
+GAS_IN_CLOSED_VESSEL = Code(
+    "B122", "gas-in-closed-vessel", _ERROR, "gas comes off in a vessel that is closed"
+)
+VESSEL_EMPTY = Code("B123", "vessel-empty", _ERROR, "something is done with a vessel that is empty")
+MORE_THAN_THERE = Code("B124", "more-than-there", _ERROR, "more is taken than a vessel holds")
+LAYER_ABSENT = Code("B125", "layer-absent", _ERROR, "a layer is named where there is one liquid")
+LAYERS_TOO_CLOSE = Code("B126", "layers-too-close", _ERROR, "which layer lies below cannot be told")
+LAYER_OTHER = Code("B127", "other-layer-drawn", _ERROR, "what is wanted is in the other layer")
+HEATED_CLOSED = Code("B128", "heated-while-closed", _ERROR, "a closed vessel is heated")
+HOTTER_THAN_IT_BOILS = Code(
+    "B129", "hotter-than-it-boils", _WARNING, "a liquid is heated above its boiling point"
+)
+HEAT_WITHOUT_COOLING = Code(
+    "B130", "heat-without-cooling", _ERROR, "an act gives out heat that nothing takes up"
+)
+WATER_INTO_ACID = Code(
+    "B131", "water-into-acid", _ERROR, "water is poured into a concentrated acid or base"
+)
+VESSEL_NEVER_EMPTIED = Code(
+    "B132", "vessel-never-emptied", _WARNING, "what a vessel holds at the end goes nowhere"
+)
+TITRE_OUT_OF_RANGE = Code(
+    "B133", "titre-out-of-range", _WARNING, "a titre does not suit its burette"
+)
+OPPOSITES_POURED = Code(
+    "B134", "opposites-poured-together", _ERROR, "a basic layer goes into an acid one"
+)
+
+# -- X: acid–base and partition ------------------------------------------------------------------
+EXPECTATION_MISSED = Code(
+    "X101", "expectation-missed", _ERROR, "the bench gives another figure than is expected"
+)
+REAGENT_TOO_WEAK = Code(
+    "X102", "reagent-too-weak", _ERROR, "an acid or base does not move what it is to move"
+)
+REAGENT_WRONG_WAY = Code(
+    "X103", "reagent-wrong-way", _ERROR, "no amount of a reagent brings the pH that is asked for"
+)
+GOES_ALONG = Code("X104", "second-goes-along", _WARNING, "a reagent takes a second substance along")
+WANTED_DISCARDED = Code(
+    "X105", "wanted-discarded", _ERROR, "a layer is thrown away with what is wanted later"
+)
+NO_PH_TEST = Code("X106", "ph-not-tested", _WARNING, "a pH is adjusted and never tested")
 
 # -- E: editions -------------------------------------------------------------------------------
 ACT_IN_HIDDEN_BLOCK = Code(

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
+from watchglass.judge.measuring import measuring
 from watchglass.judge.not_yet import not_yet_run, too_many_passes
 from watchglass.judge.period import time_over_period
 from watchglass.judge.provided import provided, volume_without_density
@@ -25,6 +26,19 @@ CHECKS: tuple[Callable[[Case], Iterable[Finding]], ...] = (
 )
 
 
-def judge(case: Case) -> tuple[Finding, ...]:
-    """Make every check of one procedure."""
-    return tuple(finding for check in CHECKS for finding in check(case))
+#: Checks of what the draft says in its author's own figures, whatever it is scaled by.
+DRAFT_CHECKS: tuple[Callable[[Case], Iterable[Finding]], ...] = (measuring,)
+
+
+def judge(case: Case, draft: Case | None = None) -> tuple[Finding, ...]:
+    """Make every check of one procedure.
+
+    Args:
+        case: The procedure at the size it is run at.
+        draft: As its author wrote it, where that is another size.
+    """
+    written = draft or case
+    return (
+        *(finding for check in CHECKS for finding in check(case)),
+        *(finding for check in DRAFT_CHECKS for finding in check(written)),
+    )

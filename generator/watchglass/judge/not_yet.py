@@ -1,4 +1,4 @@
-"""Acts that are read and checked but not yet run on the bench: said once a procedure, never in silence."""
+"""What is read and checked but not yet run at the bench: said once a procedure, never in silence."""
 
 from __future__ import annotations
 
@@ -6,51 +6,50 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Related
+from watchglass.read import syntax
 from watchglass.resolve import model
 
 if TYPE_CHECKING:
-    from collections.abc import Iterator
+    from collections.abc import Iterable, Iterator
 
     from watchglass.judge.case import Case
 
 _SHOWN = 3
-#: Verbs of time alone: all that they do is counted against the period.
-_DONE = frozenset(("take", "wait", "next period"))
 
 
 def not_yet_run(case: Case) -> Iterator[Finding]:
-    """Name the acts whose effect on the vessels is not computed."""
-    events = [
-        event
-        for step in case.procedure.steps
-        for event in step.events
-        if isinstance(event, model.Operation | model.Transfer | model.Aliquot)
-    ]
-    waiting = [(event.span, _word(event)) for event in events if _word(event) not in _DONE]
-    waiting += [(e.span, "expect") for e in case.procedure.expectations]
+    """Name what the notation can say and the bench does not run: branches, secrets, products of others."""
+    procedure = case.procedure
+    waiting = [(block.opening, "`:::if`") for block in branches(procedure.body)]
+    for material in procedure.materials.values():
+        if isinstance(material.composition, model.Secret):
+            waiting.append((material.span, "`one-of`"))
+        elif isinstance(material.composition, model.Continued):
+            waiting.append((material.span, "`from:` another procedure"))
     if not waiting:
         return
-    words = sorted({word for _, word in waiting})
-    first, *others = waiting
+    (span, word), *others = waiting
     yield Finding(
         code=codes.NOT_YET_RUN,
-        span=first[0],
-        message=f"{len(waiting)} acts are read and checked, not yet run at the bench: "
-        + ", ".join(words)
-        if len(waiting) > 1
-        else f"`{words[0]}` is read and checked, not yet run at the bench",
-        related=tuple(Related(span, f"`{word}`, not yet run") for span, word in others[:_SHOWN]),
+        span=span,
+        message=f"{word} is read and checked, not yet run at the bench",
+        related=tuple(Related(place, f"{said}, not yet run") for place, said in others[:_SHOWN]),
     )
 
 
-def _word(event: model.Event) -> str:
-    match event:
-        case model.Operation():
-            return event.verb
-        case model.Transfer():
-            return "pour"
-        case _:
-            return "aliquot"
+def branches(blocks: Iterable[syntax.Block]) -> Iterator[syntax.Fenced]:
+    """Give every `:::if` block, at whatever depth."""
+    for block in blocks:
+        match block:
+            case syntax.Fenced("if"):
+                yield block
+            case syntax.Fenced(_, _, _, children, _, _) | syntax.Quote(children, _):
+                yield from branches(children)
+            case syntax.Steps(items, _):
+                for item in items:
+                    yield from branches(item.children)
+            case _:
+                pass
 
 
 def too_many_passes(case: Case) -> Iterator[Finding]:

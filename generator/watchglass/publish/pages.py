@@ -78,7 +78,7 @@ def _builder(
 def student_page(case: Case, path: str, place: Neighbours, catalogue: Catalogue) -> m.StudentPage:
     """Make the page that students see."""
     builder = _builder(case, path, place, catalogue, instructor=False)
-    blocks = case.procedure.syntax.body
+    blocks = case.procedure.body
     body = builder.build(blocks)
     return m.StudentPage(
         facts=_facts(case, place, builder.outline),
@@ -101,7 +101,7 @@ def instructor_page(
 ) -> m.InstructorPage:
     """Make the page that instructors see."""
     builder = _builder(case, path, place, catalogue, instructor=True)
-    blocks = case.procedure.syntax.body
+    blocks = case.procedure.body
     body = builder.build(blocks)
     lines = Lines(case.procedure.syntax.source.text)
     return m.InstructorPage(
@@ -162,6 +162,7 @@ def _plain_title(block: m.Title) -> str:
 def _no_procedure(syntax: ProcedureSyntax) -> model.Procedure:
     return model.Procedure(
         syntax=syntax,
+        body=(),
         head=model.Head(title="", code=""),
         materials={},
         vessels={},

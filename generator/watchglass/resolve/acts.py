@@ -94,7 +94,7 @@ class ActReader:
         ware = self._moving(act.clauses)
         if not known or not portions:
             return None
-        return model.Charge(tuple(portions), act.target, ware, act.span)
+        return model.Charge(tuple(portions), act.target, ware, act.span, act.clauses)
 
     def portion(self, amount: syntax.Amount) -> model.Portion | None:
         """Resolve so much of a material."""
@@ -173,7 +173,7 @@ class ActReader:
         self._moving(act.clauses)
         if not (origin and target):
             return None
-        return model.Aliquot(quantity, act.origin, act.target, act.span)
+        return model.Aliquot(quantity, act.origin, act.target, act.span, act.clauses)
 
     def _moving(self, clauses: tuple[syntax.Clause, ...]) -> str:
         """Check the clauses of a charge or transfer; give the ware it is measured by."""
@@ -228,6 +228,8 @@ class ActReader:
             _time(act),
             act.clauses,
             act.span,
+            act.object if isinstance(act.object, syntax.Amount) else None,
+            act.subject.text.lower() if act.subject else "",
         )
 
     def _object(self, act: syntax.VerbAct, takes: str) -> bool:

@@ -14,6 +14,7 @@ from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.streams import STREAMS
 from watchglass.catalogue.ware import read_measures, read_vessel
+from watchglass.resolve.thresholds import THRESHOLDS, read_thresholds
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
@@ -28,6 +29,7 @@ FIELDS: dict[str, Field] = {
     "stations": Field(Shape.TEXT, "how many stations there are"),
     "spare": Field(Shape.TEXT, "share prepared beyond what the stations need, as `10 %`"),
     "temperature": Field(Shape.TEXT, "temperature of the room"),
+    "balance": Field(Shape.TEXT, "finest step of the balances, as `0.01 g`"),
     "glassware": Field(Shape.MAPPING, "what is owned: `conical flask 100 mL: 60`"),
     "measures": Field(Shape.MAPPING, "countable measures with their size, as `drop: 0.05 mL`"),
     "baths": Field(Shape.MAPPING, "baths by name with their temperature"),
@@ -50,10 +52,12 @@ class Laboratory:
         stations: How many stations.
         spare: Share prepared beyond the need [-].
         temperature: Of the room, K; 25 °C where not said.
+        balance: Finest step of the balances, kg; 0.01 g where not said.
         glassware: What is owned, with how many.
         measures: Countable measures of its own, m3 or None.
         baths: Names of baths.
         streams: Names of waste streams, the common ones included.
+        thresholds: Limits of its own, SI, by name.
         rules: Local rules in words.
     """
 
@@ -62,11 +66,18 @@ class Laboratory:
     stations: int | None = None
     spare: float = 0.0
     temperature: float = 298.15
+    balance: float = 1e-5
     glassware: tuple[tuple[VesselType, int], ...] = ()
     measures: Mapping[str, float | None] = field(default_factory=dict)
     baths: tuple[str, ...] = BATHS
     streams: tuple[str, ...] = STREAMS
+    thresholds: Mapping[str, float] = field(default_factory=dict)
     rules: tuple[str, ...] = ()
+
+    def limit(self, name: str) -> float:
+        """Give a limit of the checks, SI: its own, or the one shipped."""
+        own = self.thresholds.get(name)
+        return THRESHOLDS[name].value if own is None else own
 
 
 def read_laboratory(
@@ -81,16 +92,19 @@ def read_laboratory(
     findings = list(found)
     spare = _quantity(record, "spare", dim.SHARE, findings)
     temperature = _quantity(record, "temperature", dim.TEMPERATURE, findings)
+    balance = _quantity(record, "balance", dim.MASS, findings)
     laboratory = Laboratory(
         name=_text(record, "name"),
         institution=_text(record, "institution"),
         stations=_count(record.text("stations"), findings),
         spare=spare.si if spare else 0.0,
         temperature=temperature.si if temperature else 298.15,
+        balance=balance.si if balance and balance.si > 0 else 1e-5,
         glassware=_owned(record, types, findings),
         measures=_measures(record, findings),
         baths=(*BATHS, *_keys(record.mapping("baths"))),
         streams=(*STREAMS, *_keys(record.mapping("waste"))),
+        thresholds=read_thresholds(record.mapping("thresholds"), findings),
         rules=tuple(item.text for item in texts.words(record.values.get("rules"))),
     )
     return laboratory, tuple(findings)

@@ -21,6 +21,7 @@ from watchglass.base.scan import (
 from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
 from watchglass.chemistry.formulas import Formula, parse_formula
+from watchglass.resolve import label
 from watchglass.resolve.model import (
     Composition,
     Continued,
@@ -34,6 +35,7 @@ from watchglass.resolve.model import (
     Strength,
     Unknown,
 )
+from watchglass.resolve.solutions import facts_of
 
 if TYPE_CHECKING:
     from watchglass.base.findings import Code
@@ -42,10 +44,13 @@ if TYPE_CHECKING:
     from watchglass.base.yaml import YamlEntry
     from watchglass.catalogue.catalogue import Catalogue
     from watchglass.catalogue.substances import Substance
+    from watchglass.resolve.model import SolutionFacts
 
 FIELDS: dict[str, Field] = {
     "contains": Field(Shape.MAPPING, "substances with their ratio, or strengths with `in:`"),
     "in": Field(Shape.TEXT, "the solvent of what it contains"),
+    "density": Field(Shape.TEXT, "density of the solution, as its label has it: `1.18 g/mL`"),
+    "also": Field(Shape.TEXT, "the strength again, as its label has it in other units: `12 M`"),
     "provided": Field(Shape.TEXT, "what a station is handed, as `0.900 g`"),
     "composition": Field(Shape.TEXT, "`unknown` where nobody can say what is in it"),
     "is": Field(Shape.TEXT, "what it is, in words or as a material"),
@@ -78,6 +83,35 @@ class MaterialReader:
 
     def read(self, entry: YamlEntry) -> Material:
         """Read one entry of `materials:`; what cannot be read is unknown, with a finding."""
+        material = self._read(entry)
+        facts = facts_of(material.composition, self._own_density(entry, material), self.catalogue)
+        if facts is None:
+            return material
+        self._label(entry, material, facts)
+        return material._replace(solution=facts)
+
+    def _own_density(self, entry: YamlEntry, material: Material) -> float | None:
+        """Give the density that stands with the material, or with the stock it is, kg/m3."""
+        node = entry.value.get("density") if isinstance(entry.value, YamlMapping) else None
+        if node is None and material.stock:
+            node = self.catalogue.stocks[material.stock.casefold()].density
+        if not isinstance(node, YamlText):
+            return None
+        quantity = texts.quantity(node, dim.MASS_CONCENTRATION, self.findings)
+        return quantity.middle if quantity is not None else None
+
+    def _label(self, entry: YamlEntry, material: Material, facts: SolutionFacts) -> None:
+        """Hold what a label says twice to itself, and its density to the table."""
+        if not isinstance(entry.value, YamlMapping):
+            return
+        density, also = entry.value.get("density"), entry.value.get("also")
+        if isinstance(density, YamlText) and facts.source == "given":
+            plain = facts_of(material.composition, None, self.catalogue)
+            self.findings += label.density_against_table(density, facts, plain)
+        if isinstance(also, YamlText):
+            self.findings += label.strengths_against_each_other(also, material, facts)
+
+    def _read(self, entry: YamlEntry) -> Material:
         name, value = entry.key.text, entry.value
         if isinstance(value, YamlText):
             said = bool(value.text.strip())

@@ -20,6 +20,7 @@ if TYPE_CHECKING:
     from watchglass.catalogue.substances import Substance
     from watchglass.chemistry.formulas import Formula
     from watchglass.read import syntax
+    from watchglass.read.syntax import Block
     from watchglass.read.terms import Expression
 
 
@@ -102,6 +103,23 @@ class Unknown(NamedTuple):
 Composition = Pure | Solution | Saturated | Mixture | Secret | Continued | Unknown
 
 
+class SolutionFacts(NamedTuple):
+    """What is known of a solution beside its strength.
+
+    Attributes:
+        density: Of the solution, kg/m3, or None.
+        fraction: Mass of solute over mass of solution [-], or None.
+        per_volume: Mass of solute over volume of solution, kg/m3, or None.
+        source: Where the density is from: `given`, `table`, `water` (a dilute solution taken to be
+            as dense as water), or empty.
+    """
+
+    density: float | None
+    fraction: float | None
+    per_volume: float | None
+    source: str
+
+
 class Material(NamedTuple):
     """A material of the procedure.
 
@@ -113,7 +131,7 @@ class Material(NamedTuple):
         provided_span: Where that stands.
         for_class: Whether `provided` is for the whole class.
         stock: Key of the stock it is, or empty.
-        density: Density given with the material itself, or None.
+        solution: What is known of it as a solution; None for what is none.
         span: Its name in the front matter.
         value_span: Its description there.
     """
@@ -127,6 +145,7 @@ class Material(NamedTuple):
     provided_span: Span | None = None
     for_class: bool = False
     stock: str = ""
+    solution: SolutionFacts | None = None
 
 
 class Vessel(NamedTuple):
@@ -143,11 +162,15 @@ class Vessel(NamedTuple):
 
 
 class Equipment(NamedTuple):
-    """A thing that is neither vessel nor material."""
+    """A thing that is neither vessel nor material.
+
+    `type` is there where it is written as glassware is (`measuring cylinder 25 mL`).
+    """
 
     name: str
     written: str
     span: Span
+    type: VesselType | None = None
 
 
 # ---------------------------------------------------------------- reactions
@@ -227,6 +250,7 @@ class Charge(NamedTuple):
     target: syntax.Place
     ware: str
     span: Span
+    clauses: tuple[syntax.Clause, ...] = ()
 
 
 class Transfer(NamedTuple):
@@ -245,6 +269,7 @@ class Aliquot(NamedTuple):
     origin: syntax.Place
     target: syntax.Place
     span: Span
+    clauses: tuple[syntax.Clause, ...] = ()
 
 
 class Operation(NamedTuple):
@@ -259,6 +284,8 @@ class Operation(NamedTuple):
         time: Seconds it takes, from `for`, `over` or its own object; None where not said.
         clauses: All its clauses, as read.
         span: Where it stands.
+        stated: What `suppose` states, as read; None otherwise.
+        subject: What `test` tests for, or empty.
     """
 
     verb: str
@@ -269,6 +296,8 @@ class Operation(NamedTuple):
     time: float | None
     clauses: tuple[syntax.Clause, ...]
     span: Span
+    stated: syntax.Amount | None = None
+    subject: str = ""
 
 
 class Again(NamedTuple):
@@ -364,7 +393,7 @@ class Head(NamedTuple):
         after: Codes of procedures that come before, with places.
         references: Books and articles, as written.
         read: What to read before, as written.
-        scale: Multiplies every extensive quantity.
+        scale: What every extensive quantity was multiplied by; as declared until then.
         show: What students may see beyond the default.
     """
 
@@ -386,11 +415,13 @@ class Head(NamedTuple):
 class Procedure:
     """A whole procedure, resolved.
 
-    `names` tells for every local name what it is: `material`, `vessel`, `equipment`, `reaction`,
+    `syntax` is the file as its author wrote it, `body` what is printed of it: the same blocks, with
+    other figures where the procedure is scaled. `names` tells for every local name what it is: `material`, `vessel`, `equipment`, `reaction`,
     `label` or `record`.
     """
 
     syntax: syntax.ProcedureSyntax
+    body: tuple[Block, ...]
     head: Head
     materials: Mapping[str, Material]
     vessels: Mapping[str, Vessel]

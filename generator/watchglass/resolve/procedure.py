@@ -11,7 +11,7 @@ from watchglass.base.fields import Record, Shape, read_fields, unfit
 from watchglass.base.findings import Finding
 from watchglass.base.yaml import YamlList, YamlMapping, YamlText
 from watchglass.catalogue import texts
-from watchglass.catalogue.ware import read_vessel
+from watchglass.catalogue.ware import glassware_in, read_vessel
 from watchglass.read.expressions import read_expression
 from watchglass.read.terms import Compare, Within
 from watchglass.resolve import model
@@ -81,6 +81,7 @@ class _Resolver:
         expectations = self._expectations(record, scope, body, findings)
         procedure = model.Procedure(
             syntax=syntax,
+            body=syntax.body,
             head=read_head(record, findings),
             materials=materials,
             vessels=vessels,
@@ -198,7 +199,10 @@ class _Resolver:
                 findings.append(unfit(entry.value, f"`{entry.key.text}`", Shape.TEXT))
             elif scope.declare(entry.key.text, "equipment", entry.key.span):
                 equipment[entry.key.text] = model.Equipment(
-                    name=entry.key.text, written=entry.value.text, span=entry.key.span
+                    name=entry.key.text,
+                    written=entry.value.text,
+                    span=entry.key.span,
+                    type=glassware_in(entry.value, self.catalogue.glassware),
                 )
         return equipment
 

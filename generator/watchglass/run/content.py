@@ -23,6 +23,9 @@ if TYPE_CHECKING:
     from watchglass.base.dimensions import Dimension
     from watchglass.catalogue.substances import Substance
 
+#: Figures that a solubility, a density from the table, and one taken for water's are good for.
+SOLUBILITY_FIGURES, DENSITY_FIGURES, ASSUMED_FIGURES = 3, 4, 2
+
 
 @dataclass(frozen=True, slots=True)
 class Content:
@@ -73,9 +76,10 @@ def contents(
         case model.Pure(substance):
             return _one(_pure(substance, dimension, value, figures))
         case model.Solution(strength, solute, _):
-            return _one(_solution(strength, solute, dimension, value, figures))
+            facts = material.solution
+            return _one(_solution(strength, solute, dimension, value, figures, facts))
         case model.Saturated(solute, _):
-            return Missing("solubility", solute)
+            return _one(_saturated(solute, dimension, value, figures, material.solution))
         case model.Mixture():
             return _mixture(material.composition, dimension, value, figures)
         case _:
@@ -123,7 +127,12 @@ def _pure(
 
 
 def _solution(
-    strength: model.Strength, solute: Substance, dimension: Dimension, value: float, figures: int
+    strength: model.Strength,
+    solute: Substance,
+    dimension: Dimension,
+    value: float,
+    figures: int,
+    facts: model.SolutionFacts | None = None,
 ) -> Content | Missing:
     basis, by = strength.quantity.dimension, strength.quantity.middle
     shown = min(figures, strength.quantity.figures)
@@ -136,12 +145,43 @@ def _solution(
             return _of_mass(solute, by * value, shown)
         if basis == dim.VOLUME_FRACTION:
             return _of_volume(solute, by * value, shown)
+        if facts is not None and facts.per_volume is not None:
+            return _of_mass(solute, facts.per_volume * value, _through_density(shown, facts))
         return Missing("solution density", solute)
     if dimension == dim.MASS:
         if basis == dim.MASS_FRACTION:
             return _of_mass(solute, by * value, shown)
+        if facts is not None and facts.fraction is not None and facts.density is not None:
+            return _of_mass(solute, facts.fraction * value, _through_density(shown, facts))
         return Missing("solution density", solute)
     return Missing("size", solute)
+
+
+def _saturated(
+    solute: Substance,
+    dimension: Dimension,
+    value: float,
+    figures: int,
+    facts: model.SolutionFacts | None,
+) -> Content | Missing:
+    """Work out what a saturated solution holds; a solubility is good for three figures."""
+    shown = min(figures, SOLUBILITY_FIGURES)
+    if dimension == dim.AMOUNT:
+        return _of_moles(solute, value, shown)
+    if facts is None:
+        return Missing("solubility", solute)
+    if dimension == dim.VOLUME and facts.per_volume is not None:
+        return _of_mass(solute, facts.per_volume * value, shown)
+    if dimension == dim.MASS and facts.fraction is not None:
+        return _of_mass(solute, facts.fraction * value, shown)
+    return Missing("solution density", solute)
+
+
+def _through_density(figures: int, facts: model.SolutionFacts) -> int:
+    """Limit the figures of what rests on the density of a solution."""
+    if facts.source == "water":
+        return min(figures, ASSUMED_FIGURES)
+    return min(figures, DENSITY_FIGURES)
 
 
 def _mixture(
@@ -172,15 +212,49 @@ def _mixture(
             _of_moles(part.substance, value * part.quantity.si / whole, figures)
             for part in mixture.parts
         ]
-    elif mixture.basis == "volume" and dimension == dim.VOLUME:
-        whole = sum(part.quantity.si for part in mixture.parts)
-        found = [
-            _of_volume(part.substance, value * part.quantity.si / whole, figures)
-            for part in mixture.parts
-        ]
+    elif mixture.basis in ("volume", "mass", "amount"):
+        return _by_density(mixture, dimension, value, figures)
     else:
         return Missing("density", None)
+    return _all(found)
+
+
+def _all(found: list[Content | Missing]) -> tuple[Content, ...] | Missing:
     for entry in found:
         if isinstance(entry, Missing):
             return entry
     return tuple(entry for entry in found if isinstance(entry, Content))
+
+
+def _by_density(
+    mixture: model.Mixture, dimension: Dimension, value: float, figures: int
+) -> tuple[Content, ...] | Missing:
+    """Take a mixture of liquids whose volumes add up, by whatever it is measured.
+
+    Parts by volume, mass or amount give the mass and the volume of one batch as the author wrote
+    it; what is taken is a share of that batch.
+    """
+    masses, volumes = [], []
+    for part in mixture.parts:
+        density = part.substance.density
+        molar_mass = part.substance.formula.molar_mass_si if part.substance.formula else None
+        if density is None and not (mixture.basis != "volume" and dimension == dim.MASS):
+            return Missing("density", None)
+        if mixture.basis == "amount" and molar_mass is None:
+            return Missing("formula", part.substance)
+        size = part.quantity.middle
+        if mixture.basis == "amount":
+            size *= molar_mass or 0.0
+        elif mixture.basis == "volume" and density is not None:
+            size *= density.value.si
+        masses.append(size)
+        volumes.append(size / density.value.si if density is not None else 0.0)
+    whole = {dim.MASS: sum(masses), dim.VOLUME: sum(volumes)}.get(dimension)
+    if not whole:
+        return Missing("size", None)
+    return _all(
+        [
+            _of_mass(part.substance, value * mass / whole, figures)
+            for part, mass in zip(mixture.parts, masses, strict=True)
+        ]
+    )

@@ -179,8 +179,7 @@ class Evaluator:
         quantity = use.quantity or material.provided
         if quantity is None or use.of_all in ("half", "rest"):
             return ()
-        value = quantity.middle * self.procedure.head.scale
-        found = contents(material, quantity.dimension, value, quantity.figures)
+        found = contents(material, quantity.dimension, quantity.middle, quantity.figures)
         return found if isinstance(found, tuple) else ()
 
     def _substance(self, thing: Expression) -> Substance | None:
@@ -257,9 +256,7 @@ class Evaluator:
         quantity = use.quantity or material.provided
         if quantity is None:
             return NotKnown("data")
-        stated = use.times == 0  # an amount named in the expression is as it stands
-        scale = 1.0 if stated else self.procedure.head.scale
-        share = {"half": 0.5, "rest": math.nan}.get(use.of_all, 1.0) * scale
+        share = {"half": 0.5, "rest": math.nan}.get(use.of_all, 1.0)
         if math.isnan(share):
             return NotKnown("bench")
         value = quantity.middle * share

@@ -102,15 +102,13 @@ def usage(procedure: model.Procedure, course: Course) -> Mapping[str, Usage]:
             Use(taken[0].quantity, taken[0].of_all, len(taken), taken[0].span) for taken in mine
         )
         unsummed = any(taken[0].per or taken[0].of_all == "rest" for taken in mine)
-        totals, whole = _totals(
-            material, uses, [bool(taken[0].per) for taken in mine], procedure.head.scale
-        )
+        totals, whole = _totals(material, uses, [bool(taken[0].per) for taken in mine])
         result[name] = Usage(name, uses, totals, name in needed, unsummed or not whole)
     return result
 
 
 def _totals(
-    material: model.Material, uses: tuple[Use, ...], per: list[bool], scale: float
+    material: model.Material, uses: tuple[Use, ...], per: list[bool]
 ) -> tuple[tuple[Total, ...], bool]:
     sums: dict[Dimension, list[tuple[Quantity, float]]] = {}
     whole = True
@@ -125,10 +123,10 @@ def _totals(
             quantity = material.provided
             share *= 0.5 if use.of_all == "half" else 1.0
         sums.setdefault(quantity.dimension, []).append((quantity, share))
-    return tuple(_sum(dimension, parts, scale) for dimension, parts in sums.items()), whole
+    return tuple(_sum(dimension, parts) for dimension, parts in sums.items()), whole
 
 
-def _sum(dimension: Dimension, parts: list[tuple[Quantity, float]], scale: float) -> Total:
+def _sum(dimension: Dimension, parts: list[tuple[Quantity, float]]) -> Total:
     low = sum(quantity.si * share for quantity, share in parts)
     high = sum(quantity.si_high * share for quantity, share in parts)
     first = parts[0][0].unit
@@ -136,8 +134,8 @@ def _sum(dimension: Dimension, parts: list[tuple[Quantity, float]], scale: float
     about = any(quantity.kind is Kind.ABOUT for quantity, _ in parts)
     return Total(
         dimension,
-        low * scale,
-        high * scale,
+        low,
+        high,
         _figures(low / first.factor, coarsest / first.factor),
         first.symbol,
         first.factor,

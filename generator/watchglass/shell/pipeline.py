@@ -7,11 +7,16 @@ from contextlib import contextmanager
 from pathlib import Path
 from typing import TYPE_CHECKING, NamedTuple
 
+from watchglass.base.findings import Severity
+from watchglass.base.spans import Source
 from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.catalogue import Catalogue, name_index, shadowed
 from watchglass.catalogue.decode import decode_substances
+from watchglass.catalogue.plausible import differing
 from watchglass.catalogue.ware import decode_stock
 from watchglass.judge.accept import settle
+from watchglass.judge.bench.checks import judge_bench
+from watchglass.judge.bench.run import Run
 from watchglass.judge.case import Case, faulty_body
 from watchglass.judge.checks import judge
 from watchglass.judge.sets import Appointment, judge_set
@@ -19,18 +24,20 @@ from watchglass.read.procedure import read_page, read_procedure
 from watchglass.resolve.laboratory import Laboratory, read_laboratory
 from watchglass.resolve.page import resolve_page
 from watchglass.resolve.procedure import resolve
+from watchglass.resolve.scaling import rescale
 from watchglass.resolve.schedule import Slot, read_schedule
+from watchglass.run.bench.bench import has_open_amounts, run_bench
+from watchglass.run.bench.knowledge import Knowledge
 from watchglass.run.cards import page_card, procedure_card
 from watchglass.run.passes import run_through
 from watchglass.run.usage import usage
 from watchglass.shell.sets import SetFiles, find_set, from_bytes, read_set
-from watchglass.shell.shipped import shipped
+from watchglass.shell.shipped import density_tables, shipped
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator, Mapping, Sequence
 
     from watchglass.base.findings import Finding
-    from watchglass.base.spans import Source
     from watchglass.base.yaml import YamlNode
     from watchglass.catalogue.stocks import Stock
     from watchglass.catalogue.substances import Substance
@@ -40,11 +47,21 @@ if TYPE_CHECKING:
 
 
 class Surroundings(NamedTuple):
-    """What every procedure of a set is resolved in."""
+    """What every procedure of a set is resolved in.
+
+    Attributes:
+        catalogue: Substances, stocks, glassware.
+        laboratory: Its facts.
+        schedule: Which procedure runs when.
+        known: What is known of each component, asked for once.
+        scale: What every procedure is scaled by, whatever it declares itself; None: as declared.
+    """
 
     catalogue: Catalogue
     laboratory: Laboratory
     schedule: tuple[Slot, ...]
+    known: Knowledge
+    scale: float | None = None
 
 
 class Judged(NamedTuple):
@@ -53,6 +70,7 @@ class Judged(NamedTuple):
     Attributes:
         path: Of its source within the set.
         case: The procedure with its course and usage.
+        run: How it went at the bench; None where an error stands before that.
         findings: What is open.
         accepted: What was found and accepted.
         card: Its digest.
@@ -60,6 +78,7 @@ class Judged(NamedTuple):
 
     path: str
     case: Case
+    run: Run | None
     findings: tuple[Finding, ...]
     accepted: tuple[tuple[Finding, Acceptance], ...]
     card: Card
@@ -121,14 +140,15 @@ def uncollected() -> Iterator[None]:
             gc.enable()
 
 
-def analyse(files: SetFiles, root: Path) -> Analysis:
-    """Read, resolve, run and judge a whole set."""
+def analyse(files: SetFiles, root: Path, *, scale: float | None = None) -> Analysis:
+    """Read, resolve, run and judge a whole set; `scale` overrides what procedures declare."""
     with uncollected():
-        return _analyse(files, root)
+        return _analyse(files, root, scale)
 
 
-def _analyse(files: SetFiles, root: Path) -> Analysis:
+def _analyse(files: SetFiles, root: Path, scale: float | None) -> Analysis:
     around, found = surroundings(files.sources)
+    around = around._replace(scale=scale)
     procedures = tuple(
         analyse_procedure(path, source, around)
         for path, source in files.sources.items()
@@ -157,9 +177,9 @@ def _analyse(files: SetFiles, root: Path) -> Analysis:
     )
 
 
-def analyse_set(root: Path, *, shown: str = "") -> Analysis:
+def analyse_set(root: Path, *, shown: str = "", scale: float | None = None) -> Analysis:
     """Read a set from disk and analyse it; `shown` stands before the paths in findings."""
-    return analyse(read_set(root, shown=shown), root)
+    return analyse(read_set(root, shown=shown), root, scale=scale)
 
 
 def check_texts(texts: Mapping[str, bytes | str]) -> tuple[Finding, ...]:
@@ -170,8 +190,8 @@ def check_texts(texts: Mapping[str, bytes | str]) -> tuple[Finding, ...]:
 # ------------------------------------------------------------------------------ single files
 
 
-def check_paths(paths: Sequence[Path]) -> CheckResult:
-    """Check sets and single files.
+def check_paths(paths: Sequence[Path], *, scale: float | None = None) -> CheckResult:
+    """Check sets and single files; `scale` overrides what procedures declare.
 
     A single file is checked with the catalogue and laboratory of the set it lies in; what only
     other files show (a code used twice) is left to the check of the set.
@@ -181,13 +201,13 @@ def check_paths(paths: Sequence[Path]) -> CheckResult:
     singles: dict[Path | None, list[Path]] = {}
     for path in paths:
         if path.is_dir():
-            analysis = analyse_set(path, shown=_shown(path))
+            analysis = analyse_set(path, shown=_shown(path), scale=scale)
             findings += analysis.findings
             checked += len(analysis.procedures)
         else:
             singles.setdefault(find_set(path), []).append(path)
     for root, files in singles.items():
-        findings += _check_files(root, files)
+        findings += _check_files(root, files, scale)
         checked += len(files)
     return CheckResult(tuple(findings), checked)
 
@@ -197,7 +217,7 @@ def _shown(folder: Path) -> str:
     return "" if shown == "." else shown.rstrip("/") + "/"
 
 
-def _check_files(root: Path | None, paths: Iterable[Path]) -> list[Finding]:
+def _check_files(root: Path | None, paths: Iterable[Path], scale: float | None) -> list[Finding]:
     sources: Mapping[str, Source] = {}
     findings: list[Finding] = []
     if root is not None:
@@ -205,6 +225,7 @@ def _check_files(root: Path | None, paths: Iterable[Path]) -> list[Finding]:
         sources = around_files.sources
         findings += around_files.findings
     around, found = surroundings(sources)
+    around = around._replace(scale=scale)
     findings += found
     for path in paths:
         files = from_bytes({path.as_posix(): path.read_bytes()})
@@ -216,6 +237,15 @@ def _check_files(root: Path | None, paths: Iterable[Path]) -> list[Finding]:
             else:
                 findings += analyse_procedure(name, source, around).findings
     return findings
+
+
+def judge_file(path: Path, *, scale: float | None = None) -> Judged:
+    """Take one procedure through the stages, as part of the set it lies in."""
+    root = find_set(path)
+    around, _ = surroundings(read_surroundings(root).sources if root is not None else {})
+    files = from_bytes({path.as_posix(): path.read_bytes()})
+    source = next(iter(files.sources.values()), Source.of(path.as_posix(), ""))
+    return analyse_procedure(path.as_posix(), source, around._replace(scale=scale))
 
 
 def read_surroundings(root: Path) -> SetFiles:
@@ -250,6 +280,7 @@ def surroundings(sources: Mapping[str, Source]) -> tuple[Surroundings, tuple[Fin
     stocks, found = _stocks(nodes.get("stocks.yml"))
     findings += found
     findings += shadowed(own, dict.fromkeys(stocks.values()), base.substances.names)
+    findings += differing(own, base.substances, tuple(findings))
     laboratory, found = read_laboratory(nodes.get("laboratory.yml"), base.glassware)
     findings += found
     schedule, found = read_schedule(nodes.get("schedule.yml"))
@@ -262,9 +293,17 @@ def surroundings(sources: Mapping[str, Source]) -> tuple[Surroundings, tuple[Fin
         indicators=base.indicators,
         stocks=stocks,
         measures={**base.measures, **laboratory.measures},
+        components_=base.components,
+        formulas=base.formulas,
+        densities=density_tables,
         aids=base.aids,
     )
-    around = Surroundings(catalogue=catalogue, laboratory=laboratory, schedule=schedule)
+    around = Surroundings(
+        catalogue=catalogue,
+        laboratory=laboratory,
+        schedule=schedule,
+        known=Knowledge(catalogue),
+    )
     return around, tuple(findings)
 
 
@@ -289,17 +328,42 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
     syntax, found = read_procedure(source, around.catalogue.measures)
     procedure, more = resolve(syntax, around.catalogue, around.laboratory)
     earlier = (*found, *more)
-    body = syntax.front.span.end if syntax.front else 0
-    course = run_through(procedure)
-    case = Case(procedure, course, usage(procedure, course), faulty_body(earlier, body))
-    settled = settle((*earlier, *judge(case)), procedure.acceptances)
+    faulty = faulty_body(earlier, syntax.front.span.end if syntax.front else 0)
+    draft = case = _run(procedure, faulty=faulty)
+    factor = procedure.head.scale if around.scale is None else around.scale
+    if factor != 1.0:
+        scaled, more = rescale(procedure, factor, around.catalogue, around.laboratory)
+        earlier = (*earlier, *more)
+        case = _run(scaled, faulty=faulty)
+    found = (*earlier, *judge(case, draft))
+    run = None
+    if not any(f.code.severity is Severity.ERROR for f in found):
+        run = _at_the_bench(case, around)
+        found = (*found, *judge_bench(run))
+    settled = settle(found, procedure.acceptances)
     return Judged(
         path=path,
         case=case,
+        run=run,
         findings=settled.open,
         accepted=settled.accepted,
-        card=procedure_card(path, procedure),
+        card=procedure_card(path, case.procedure),
     )
+
+
+def _run(procedure: Procedure, *, faulty: bool) -> Case:
+    """Run a procedure through its passes and sum what it takes."""
+    course = run_through(procedure)
+    return Case(procedure, course, usage(procedure, course), faulty)
+
+
+def _at_the_bench(case: Case, around: Surroundings) -> Run:
+    """Run a procedure at the bench, at both ends of its open amounts where it has any."""
+    ledger = run_bench(case.procedure, case.course, around.known, around.laboratory)
+    high = ledger
+    if has_open_amounts(case.procedure):
+        high = run_bench(case.procedure, case.course, around.known, around.laboratory, high=True)
+    return Run(case, ledger, high, around.known, around.laboratory)
 
 
 def analyse_page(path: str, source: Source, around: Surroundings) -> JudgedPage:

@@ -1,0 +1,98 @@
+"""What a check of the bench is given."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING, NamedTuple
+
+from watchglass.base.findings import Related
+from watchglass.run.bench.asked import Asked
+
+if TYPE_CHECKING:
+    from collections.abc import Iterator
+
+    from watchglass.base.spans import Span
+    from watchglass.judge.case import Case
+    from watchglass.resolve.laboratory import Laboratory
+    from watchglass.run.bench.knowledge import Knowledge
+    from watchglass.run.bench.ledger import Entry, Ledger
+    from watchglass.run.bench.state import Bench, Vessel
+
+
+class Run(NamedTuple):
+    """One procedure as it went at the bench.
+
+    Attributes:
+        case: The procedure with its course and usage.
+        ledger: What happened, open amounts at their low end.
+        high: The same at their high end; `ledger` itself where there is none.
+        known: What is known of the components.
+        laboratory: Its limits and glassware.
+    """
+
+    case: Case
+    ledger: Ledger
+    high: Ledger
+    known: Knowledge
+    laboratory: Laboratory
+
+    @property
+    def ledgers(self) -> tuple[Ledger, ...]:
+        """Both ends, or the one."""
+        return (self.ledger,) if self.high is self.ledger else (self.ledger, self.high)
+
+    def asked(self, ledger: Ledger | None = None) -> Asked:
+        """Give what answers questions about a ledger."""
+        return Asked(self.case.procedure, ledger or self.ledger, self.known)
+
+    def limit(self, name: str) -> float:
+        """Give a limit of the checks, SI."""
+        return self.laboratory.limit(name)
+
+
+class Moment(NamedTuple):
+    """An entry with the bench before it and its place in the ledger."""
+
+    place: int
+    entry: Entry
+    before: Bench
+
+    @property
+    def span(self) -> Span:
+        """Where its event is written."""
+        return self.entry.happening.event.span
+
+    def vessels(self) -> Iterator[tuple[Vessel, Vessel]]:
+        """Give the vessels that the event changed: as they were, and as they are."""
+        for name, after in self.entry.bench.vessels.items():
+            was = self.before.vessels.get(name)
+            if after is not was:
+                yield was if was is not None else after.emptied(), after
+
+
+def moments(ledger: Ledger) -> Iterator[Moment]:
+    """Go through a ledger with the bench before each entry."""
+    before = ledger.start
+    for place, entry in enumerate(ledger.entries):
+        yield Moment(place, entry, before)
+        before = entry.bench
+
+
+def at(moment: Moment, words: str) -> Related:
+    """Point to the event of a moment."""
+    return Related(moment.span, words)
+
+
+def filled_by(ledger: Ledger, index: int, vessel: str) -> tuple[Moment, ...]:
+    """Give the moments at which something came into a vessel, since it was last empty."""
+    found: list[Moment] = []
+    for moment in moments(ledger):
+        if moment.place > index:
+            break
+        for was, after in moment.vessels():
+            if after.name != vessel:
+                continue
+            if was.empty:
+                found = []
+            if after.volume > was.volume + 1e-12:
+                found.append(moment)
+    return tuple(found)

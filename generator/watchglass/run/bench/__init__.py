@@ -1,0 +1,12 @@
+"""The bench: every event of a procedure applied to its vessels, and the ledger of what became of them.
+
+`state` holds what a vessel is and holds; `knowledge` what is known of each component; `bringing`
+turns portions of materials into components; `liquids` sorts liquids into layers; `mixing` brings
+them to equilibrium; the other modules are the acts, each a function from a bench to a bench.
+`bench.run_bench` goes through a procedure's events and gives the `ledger`.
+
+The model and its limits: layers are in equilibrium after mixing, at 25 °C, ideal, with additive
+volumes; only neutral forms partition, by a measured ratio or by octanol–water's; a salt dissolves
+up to its solubility; carbon dioxide leaves above its own. Transfers leave nothing behind. Where a
+constant is missing the figure is unknown, with its reason, and offends nobody further on.
+"""

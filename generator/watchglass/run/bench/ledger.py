@@ -1,0 +1,177 @@
+"""The ledger: what happened at each event, and how the bench stood after it."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING, NamedTuple
+
+from watchglass.run.bench.state import NOTHING
+
+if TYPE_CHECKING:
+    from collections.abc import Mapping
+
+    from watchglass.run.bench.layers import Layers
+    from watchglass.run.bench.mixing import Mixed
+    from watchglass.run.bench.state import Bench
+    from watchglass.run.passes import Happening
+
+
+class Taken(NamedTuple):
+    """A portion of a material came into a vessel.
+
+    Attributes:
+        material: Its local name.
+        mass: kg; None where it was not measured so.
+        volume: m3; None where it was not measured so.
+        why: Why what it brings is not known; empty where it is.
+    """
+
+    material: str
+    mass: float | None
+    volume: float | None
+    why: str = ""
+
+
+class Moved(NamedTuple):
+    """Something went from one vessel to another, or to a sink.
+
+    Attributes:
+        origin: Vessel it left.
+        target: Vessel or sink it went to.
+        part: `aqueous`, `organic`, `solid`, `liquid`, or empty for everything.
+        volume: Of the liquid, m3.
+        short: How much less there was than was asked for, m3.
+        nothing: Whether there was nothing at all.
+    """
+
+    origin: str
+    target: str
+    part: str
+    volume: float
+    short: float = 0.0
+    nothing: bool = False
+
+
+class Added(NamedTuple):
+    """What `adjust` or `titrate` took.
+
+    Attributes:
+        material: The reagent's local name.
+        volume: m3; None where it cannot be told.
+        wanted: pH aimed at, or None.
+        before: pH before, or None.
+        stated: Whether the author stated the volume.
+        why: Why it cannot be told, in words; empty where it is.
+    """
+
+    material: str
+    volume: float | None
+    wanted: float | None
+    before: float | None
+    stated: bool = False
+    why: str = ""
+
+
+class Reacted(NamedTuple):
+    """A reaction ran.
+
+    Attributes:
+        reaction: Its local name.
+        extent: mol of the equation as written.
+        limiting: Component or substance that ran out first, or empty.
+        why: Why it did not run; empty where it did.
+    """
+
+    reaction: str
+    extent: float
+    limiting: str
+    why: str = ""
+
+
+class Warmed(NamedTuple):
+    """Temperature rise of an act by its own heat, K, before any bath takes it up."""
+
+    rise: float
+    held: bool
+    source: str
+
+
+class Supposed(NamedTuple):
+    """The author stated an outcome.
+
+    Attributes:
+        what: The substance or material.
+        share: Of it, 0 to 1; None where an amount was stated.
+        outcome: As written.
+        reason: As written.
+        why: Why it could not be applied; empty where it was.
+    """
+
+    what: str
+    share: float | None
+    outcome: str
+    reason: str
+    why: str = ""
+
+
+class NotAssessed(NamedTuple):
+    """An act that the model says nothing about, and why."""
+
+    why: str
+
+
+Outcome = Taken | Moved | Added | Reacted | Warmed | Supposed | NotAssessed
+
+
+class Result(NamedTuple):
+    """One outcome and the vessel it is of."""
+
+    vessel: str
+    outcome: Outcome | Mixed | Layers
+
+
+class Entry(NamedTuple):
+    """One event in the ledger.
+
+    Attributes:
+        happening: The event at its turn.
+        results: What it did, in order.
+        bench: How the bench stands after it.
+    """
+
+    happening: Happening
+    results: tuple[Result, ...]
+    bench: Bench
+
+
+class Ledger(NamedTuple):
+    """All that happened, oldest first.
+
+    Attributes:
+        start: The bench before the first event.
+        entries: One an event.
+        labels: For each label the number of entries before it.
+        charged: Moles of each component and of each solid substance that were brought, by key of
+            the substance as its components (`H^+` included).
+        formed: Theoretical yield of each product, mol: what its reaction would give if it ran to
+            the end on what was there.
+        titres: Volume that each titration took, m3, with the number of entries before its end.
+    """
+
+    start: Bench
+    entries: tuple[Entry, ...]
+    labels: Mapping[str, int]
+    charged: Mapping[str, float] = NOTHING
+    formed: Mapping[str, float] = NOTHING
+    titres: tuple[tuple[int, str, float | None], ...] = ()
+
+    @property
+    def end(self) -> Bench:
+        """The bench after the last event."""
+        return self.entries[-1].bench if self.entries else self.start
+
+    def at(self, label: str) -> Bench | None:
+        """Give the bench at a label; None where it was never reached."""
+        count = self.labels.get(label)
+        if count is None:
+            return None
+        return self.entries[count - 1].bench if count else self.start
