@@ -81,9 +81,7 @@ def test_organic_liquid_warms_more() -> None:
 
 def test_molar_acid_and_base_warm_each_other_by_seven_kelvin() -> None:
     # 50 mL of 1 M each: the classroom figure is about 6.8 K.
-    rise = temperature_rise(
-        heat=neutralisation_heat(water=0.05), capacity=heat_capacity(water=0.1)
-    )
+    rise = temperature_rise(heat=neutralisation_heat(water=0.05), capacity=heat_capacity(water=0.1))
 
     assert rise == pytest.approx(6.8, abs=0.1)
 
@@ -167,5 +165,5 @@ def test_excess_densities_add() -> None:
     ],
 )
 def test_arguments_that_no_caller_should_pass_are_refused(asked: Callable[[], object]) -> None:
-    with pytest.raises(ValueError, match="[a-z]"):
+    with pytest.raises(ValueError, match=r"\w"):
         asked()

@@ -122,7 +122,7 @@ def test_no_salt_drives_nothing_out() -> None:
     ],
 )
 def test_arguments_that_no_caller_should_pass_are_refused(asked: Callable[[], object]) -> None:
-    with pytest.raises(ValueError, match="[a-z]"):
+    with pytest.raises(ValueError, match=r"\w"):
         asked()
 
 
@@ -151,7 +151,7 @@ def test_base_that_is_told_moves_the_share_of_the_acid() -> None:
 
 def test_weak_base_needs_more_acid_than_the_equation_asks_for() -> None:
     acid = acid_to_move_amine(
-        amount=0.002, pka=1.0, ratio=25.0, organic=ETHER, aqueous=WATER, share=0.95
+        amount=0.002, pka=1.0, ratio=10.0, organic=ETHER, aqueous=WATER, share=0.95
     )
     assert acid is not None
 

@@ -139,6 +139,18 @@ PROVIDED_EXCEEDED = Code("S111", "provided-exceeded", _ERROR, "the steps use mor
 ALL_OF_NOTHING = Code(
     "S112", "all-of-nothing", _ERROR, "all of a material is used, none is provided"
 )
+NOT_LIMITING = Code(
+    "S130", "other-reactant-limits", _ERROR, "another reactant than the declared one limits"
+)
+STATED_AMOUNT_DISAGREES = Code(
+    "S131", "stated-amount-disagrees", _ERROR, "words state an amount that the mark does not bring"
+)
+REACTANT_NOT_AT_HAND = Code(
+    "S132", "reactant-not-at-hand", _ERROR, "a reaction needs what no material brings"
+)
+STRENGTH_IMPOSSIBLE = Code(
+    "S134", "strength-impossible", _ERROR, "a solution is stronger than its solute can make it"
+)
 LABEL_DISAGREES = Code(
     "S120", "label-disagrees", _WARNING, "a label says two strengths that are not the same"
 )

@@ -65,6 +65,9 @@ class Part(NamedTuple):
     fractions: tuple[float, ...] | None
 
 
+_UNKNOWN = Part(None, None, None, None, None)
+
+
 class Equilibrium(NamedTuple):
     """A vessel at equilibrium.
 
@@ -116,10 +119,9 @@ def solve(system: PhaseSystem) -> Equilibrium:
         ph = (low + high) / 2
         parts = tuple([_part(family, system, ph) for family in system.families])
         return Equilibrium(ph, parts, _ionic_strength(system, ph, parts), low, high)
+    # Both may lie beyond the same end; the pH is then bounded by that end.
+    low, high = min(low, PH_RANGE[1]), max(high, PH_RANGE[0])
     least, most = max(low, PH_RANGE[0] - _BEYOND), min(high, PH_RANGE[1] + _BEYOND)
-    if low == high:  # both beyond the same end, where the pH is only bounded
-        low, high = min(low, PH_RANGE[1]), max(high, PH_RANGE[0])
-        least, most = max(low, PH_RANGE[0] - _BEYOND), min(high, PH_RANGE[1] + _BEYOND)
     between = tuple(_part_between(family, system, least, most) for family in system.families)
     return Equilibrium(None, between, None, low, high)
 
@@ -177,15 +179,15 @@ def _part_between(family: Family, system: PhaseSystem, low: float, high: float) 
         return middle
     one, other = _part(family, system, low), _part(family, system, high)
     near = SAME_SHARE * family.amount
-    nothing = Part(None, None, None, None, None)
-    if one.charge is None or other.charge is None or abs(one.charge - other.charge) > SAME_SHARE:
-        return nothing
-    for here, there in zip(one[:3], other[:3], strict=True):
-        if (here is None) != (there is None):
-            return nothing
-        if here is not None and there is not None and abs(here - there) > near:
-            return nothing
-    return middle
+    moved = [
+        abs(here - there)
+        for here, there in zip(one[:3], other[:3], strict=True)
+        if here is not None and there is not None
+    ]
+    # The charge only ever falls: where it is the same at both ends it is the same between them, and
+    # so is every fraction but one too small to be seen, whose part the amounts show.
+    same_charge = abs((one.charge or 0.0) - (other.charge or 0.0)) <= SAME_SHARE
+    return middle if same_charge and max(moved, default=0.0) <= near else _UNKNOWN
 
 
 def _ionic_strength(system: PhaseSystem, ph: float, parts: tuple[Part, ...]) -> float | None:

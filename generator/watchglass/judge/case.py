@@ -10,6 +10,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping
 
     from watchglass.base.findings import Finding
+    from watchglass.catalogue.catalogue import Catalogue
     from watchglass.resolve.model import Procedure
     from watchglass.run.passes import Course
     from watchglass.run.usage import Usage
@@ -22,6 +23,7 @@ class Case(NamedTuple):
         procedure: As resolved.
         course: Its events in the order they happen.
         usage: What is taken of each material.
+        catalogue: What its names were looked up in.
         faulty: Whether reading or resolving the body found an error: what is missing then may
             stand in what could not be read, and is not reported again.
     """
@@ -29,6 +31,7 @@ class Case(NamedTuple):
     procedure: Procedure
     course: Course
     usage: Mapping[str, Usage]
+    catalogue: Catalogue
     faulty: bool
 
 

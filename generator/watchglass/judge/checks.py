@@ -4,10 +4,13 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
+from watchglass.judge.at_hand import reactant_not_at_hand
+from watchglass.judge.limiting import not_limiting
 from watchglass.judge.measuring import measuring
 from watchglass.judge.not_yet import not_yet_run, too_many_passes
 from watchglass.judge.period import time_over_period
 from watchglass.judge.provided import provided, volume_without_density
+from watchglass.judge.strength import too_strong
 from watchglass.judge.unused import unused
 
 if TYPE_CHECKING:
@@ -18,6 +21,9 @@ if TYPE_CHECKING:
 
 CHECKS: tuple[Callable[[Case], Iterable[Finding]], ...] = (
     unused,
+    too_strong,
+    not_limiting,
+    reactant_not_at_hand,
     volume_without_density,
     provided,
     time_over_period,

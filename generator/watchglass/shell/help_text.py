@@ -22,6 +22,10 @@ Options:
 Commands:
   check    Judge procedures and say what is wrong.
   build    Build the handbook of a site.
+  serve    Show a site in a browser as it is written.
+  ledger   Show what every vessel holds after every step.
+  reckon   Work out expressions of the notation.
+  new      Write a small set and its site to begin with.
   explain  Say what a finding means.
 
   `watchglass COMMAND --help` tells more about a command.

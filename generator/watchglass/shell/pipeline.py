@@ -329,12 +329,12 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
     procedure, more = resolve(syntax, around.catalogue, around.laboratory)
     earlier = (*found, *more)
     faulty = faulty_body(earlier, syntax.front.span.end if syntax.front else 0)
-    draft = case = _run(procedure, faulty=faulty)
+    draft = case = _run(procedure, around, faulty=faulty)
     factor = procedure.head.scale if around.scale is None else around.scale
     if factor != 1.0:
         scaled, more = rescale(procedure, factor, around.catalogue, around.laboratory)
         earlier = (*earlier, *more)
-        case = _run(scaled, faulty=faulty)
+        case = _run(scaled, around, faulty=faulty)
     found = (*earlier, *judge(case, draft))
     run = None
     if not any(f.code.severity is Severity.ERROR for f in found):
@@ -351,10 +351,10 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
     )
 
 
-def _run(procedure: Procedure, *, faulty: bool) -> Case:
+def _run(procedure: Procedure, around: Surroundings, *, faulty: bool) -> Case:
     """Run a procedure through its passes and sum what it takes."""
     course = run_through(procedure)
-    return Case(procedure, course, usage(procedure, course), faulty)
+    return Case(procedure, course, usage(procedure, course), around.catalogue, faulty)
 
 
 def _at_the_bench(case: Case, around: Surroundings) -> Run:

@@ -17,8 +17,8 @@ if TYPE_CHECKING:
     from collections.abc import Mapping
 
     from watchglass.catalogue.glassware import GlasswareType
-    from watchglass.chemistry.densities import DensityTable
     from watchglass.catalogue.stocks import Indicator
+    from watchglass.chemistry.densities import DensityTable
 
 DATA = Path(__file__).parents[1] / "catalogue" / "data"
 

@@ -356,7 +356,7 @@ class Parting(NamedTuple):
 
 def parted(molarity: float) -> Parting:
     """Draw two portions of acid off the ether, then two of hydrogencarbonate."""
-    families = (BENZOCAINE, BENZOIC, FLUORENONE, CARBONIC)
+    families: tuple[Family, ...] = (BENZOCAINE, BENZOIC, FLUORENONE, CARBONIC)
     found = []
     for strong, carbonate in ((-molarity * 1e3 * PORTION, 0.0),) * 2 + ((SODA, SODA),) * 2:
         *others, carbonic = families
@@ -364,7 +364,8 @@ def parted(molarity: float) -> Parting:
         layer = solve(PhaseSystem(here, strong=strong, aqueous=PORTION, organic=ETHER))
         found.append(layer)
         families = tuple(
-            one._replace(amount=part.organic) for one, part in zip(here, layer.parts, strict=True)
+            one._replace(amount=part.organic or 0.0)
+            for one, part in zip(here, layer.parts, strict=True)
         )
     return Parting((found[0], found[1]), (found[2], found[3]))
 

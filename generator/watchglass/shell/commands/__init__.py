@@ -37,6 +37,14 @@ class Entry:
 TABLE: tuple[Entry, ...] = (
     Entry("check", "watchglass.shell.commands.check", "Judge procedures and say what is wrong."),
     Entry("build", "watchglass.shell.commands.build", "Build the handbook of a site."),
+    Entry("serve", "watchglass.shell.commands.serve", "Show a site in a browser as it is written."),
+    Entry(
+        "ledger",
+        "watchglass.shell.commands.ledger",
+        "Show what every vessel holds after every step.",
+    ),
+    Entry("reckon", "watchglass.shell.commands.reckon", "Work out expressions of the notation."),
+    Entry("new", "watchglass.shell.commands.new", "Write a small set and its site to begin with."),
     Entry("explain", "watchglass.shell.commands.explain", "Say what a finding means."),
 )
 _BY_NAME = {entry.name: entry for entry in TABLE}

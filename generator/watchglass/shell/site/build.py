@@ -67,17 +67,17 @@ def build_site(
     stops = Stops()
     stops.begin()
     try:
-        with _host_log() as log:
+        with host_log() as log:
             return _build(site, tuple(editions), out or site / PUBLIC, log, strict=strict)
     finally:
         stops.end()
 
 
 def _build(
-    site: Path, editions: tuple[str, ...], out: Path, log: _HostLog, *, strict: bool
+    site: Path, editions: tuple[str, ...], out: Path, log: HostLog, *, strict: bool
 ) -> BuildResult:
-    first = _configured(site, log, None, strict=strict)
-    analysis = source.analyse(Path(_plugin(first).config.set))
+    first = configured(site, log, None, strict=strict)
+    analysis = source.analyse(Path(plugin_of(first).config.set))
     nothing = BuildResult(findings=analysis.findings, written=(), failed=True, pages=0)
     if Counts.of(analysis.findings).fails(strict=strict):
         return nothing
@@ -88,8 +88,8 @@ def _build(
             target = (out / edition).absolute()
             pairs.append((folders.stage(target, edition), target))
         for edition, (building, _) in zip(editions, pairs, strict=True):
-            config = _configured(site, log, building, strict=strict)
-            made = _edition(config, analysis, edition)
+            config = configured(site, log, building, strict=strict)
+            made = build_edition(config, analysis, edition, log)
             if made is None or log.errors:
                 return nothing
             pages += made
@@ -103,14 +103,33 @@ def _build(
     return BuildResult(findings=analysis.findings, written=written, failed=False, pages=pages)
 
 
-def _edition(config: MkDocsConfig, analysis: Analysis, edition: str) -> int | None:
-    """Build one edition where its configuration says; None where MkDocs gave up."""
-    plugin = _plugin(config)
+def build_edition(
+    config: MkDocsConfig,
+    analysis: Analysis,
+    edition: str,
+    log: HostLog,
+    *,
+    preview: str | None = None,
+) -> int | None:
+    """Build one edition where its configuration says.
+
+    Args:
+        config: The site's, with the folder to build in.
+        analysis: The set, judged.
+        edition: Which edition.
+        log: Takes what MkDocs gives up with.
+        preview: Address of the preview it is built for, if it is.
+
+    Returns:
+        Pages of the handbook written; None where MkDocs gave up.
+    """
+    plugin = plugin_of(config)
     plugin.given = (analysis, edition)
-    config.plugins.on_startup(command="build", dirty=False)
+    config.plugins.on_startup(command="serve" if preview else "build", dirty=False)
     try:
-        build(config)
+        build(config, serve_url=preview)
     except MkDocsException as error:
+        log.heard.append(str(error))
         say(f"{visible(str(error), lines=True)}\n")
         return None
     finally:
@@ -121,7 +140,7 @@ def _edition(config: MkDocsConfig, analysis: Analysis, edition: str) -> int | No
 # ------------------------------------------------------------------------------ configuration
 
 
-def _configured(site: Path, log: _HostLog, building: Path | None, *, strict: bool) -> MkDocsConfig:
+def configured(site: Path, log: HostLog, building: Path | None, *, strict: bool) -> MkDocsConfig:
     """Load `mkdocs.yml`; what MkDocs finds wrong with it is put into one sentence."""
     path = (site / "mkdocs.yml").absolute()
     elsewhere = {} if building is None else {"site_dir": str(building)}
@@ -143,7 +162,8 @@ def _configured(site: Path, log: _HostLog, building: Path | None, *, strict: boo
     return config
 
 
-def _plugin(config: MkDocsConfig) -> HandbookPlugin:
+def plugin_of(config: MkDocsConfig) -> HandbookPlugin:
+    """Give the plugin of a site's configuration."""
     plugin = config.plugins[PLUGIN]
     if not isinstance(plugin, HandbookPlugin):
         raise TypeError("another plugin goes by our name")
@@ -153,13 +173,25 @@ def _plugin(config: MkDocsConfig) -> HandbookPlugin:
 # ------------------------------------------------------------------------------ what MkDocs says
 
 
-class _HostLog(logging.Handler):
-    """Says MkDocs' warnings and errors on standard error, or holds them while `held` is a list."""
+class HostLog(logging.Handler):
+    """Says MkDocs' warnings and errors on standard error, or holds them while `held` is a list.
+
+    Attributes:
+        errors: How many errors there were.
+        held: What is held back, or None.
+        heard: What was said, in words.
+    """
 
     def __init__(self) -> None:
         super().__init__(logging.WARNING)
         self.errors = 0
         self.held: list[str] | None = None
+        self.heard: list[str] = []
+
+    def forget(self) -> None:
+        """Begin anew with another build."""
+        self.errors = 0
+        self.heard = []
 
     def emit(self, record: logging.LogRecord) -> None:
         """Take one message."""
@@ -169,14 +201,15 @@ class _HostLog(logging.Handler):
             return
         if record.levelno >= logging.ERROR:
             self.errors += 1
+        self.heard.append(message)
         say(f"site: {record.levelname.lower()}: {visible(message, lines=True)}\n")
 
 
 @contextmanager
-def _host_log() -> Iterator[_HostLog]:
+def host_log() -> Iterator[HostLog]:
     """Listen to MkDocs and keep its log from everybody else."""
     logger = logging.getLogger("mkdocs")
-    handler = _HostLog()
+    handler = HostLog()
     passed_on = logger.propagate
     logger.addHandler(handler)
     logger.propagate = False

@@ -8,6 +8,7 @@ What MkDocs does in order, and what is done here:
     on_nav        the site's own pages are noted
     on_env        the environment is made safe, our pages are written
     on_*_context  MkDocs' pages get the frame
+    on_serve      a preview is taught to go on while the set holds errors
     on_post_build what was built is swapped in
     on_shutdown   whatever was not is removed
 
@@ -44,13 +45,17 @@ from watchglass.shell.site.stops import Stops
 from watchglass.shell.streams import say, style_of
 
 if TYPE_CHECKING:
+    from collections.abc import Callable
+
     from jinja2 import Environment
     from mkdocs.config.defaults import MkDocsConfig
+    from mkdocs.livereload import LiveReloadServer
     from mkdocs.structure.files import Files
     from mkdocs.structure.nav import Navigation
     from mkdocs.structure.pages import Page
     from mkdocs.utils.templates import TemplateContext
 
+    from watchglass.base.findings import Finding
     from watchglass.publish.handbook import HandbookPages
     from watchglass.shell.pipeline import Analysis
     from watchglass.shell.site.render import Frame, NavEntry
@@ -72,10 +77,12 @@ class HandbookPlugin(BasePlugin[HandbookConfig]):  # type: ignore[no-untyped-cal
         given: An analysis made already, and the edition to build from it; then nothing is judged,
             redirected or swapped here.
         written: How many pages of the handbook were written.
+        open: The findings of the set when it was last judged here.
     """
 
     given: tuple[Analysis, str] | None = None
     written = 0
+    open: tuple[Finding, ...] = ()
 
     def __init__(self) -> None:
         self._stops = Stops()
@@ -116,6 +123,7 @@ class HandbookPlugin(BasePlugin[HandbookConfig]):  # type: ignore[no-untyped-cal
 
     def _judged(self, folder: Path, *, strict: bool) -> Analysis:
         analysis = source.analyse(folder)
+        self.open = analysis.findings
         said = render(analysis.findings, style=style_of(sys.stderr, os.environ))
         if said:
             say(said)
@@ -215,6 +223,21 @@ class HandbookPlugin(BasePlugin[HandbookConfig]):  # type: ignore[no-untyped-cal
         framed: Any = context
         framed.update(context_of(self._frame, address), **more)
         return context
+
+    # ------------------------------------------------------------------ previews
+
+    def on_serve(
+        self,
+        server: LiveReloadServer,
+        *,
+        config: MkDocsConfig,  # noqa: ARG002 - MkDocs' own shape
+        builder: Callable[..., None],  # noqa: ARG002 - MkDocs' own shape
+    ) -> LiveReloadServer:
+        """Let `mkdocs serve` show the findings and go on, where it would wait without end."""
+        from watchglass.shell.site.preview import keep_serving  # noqa: PLC0415 - previews only
+
+        keep_serving(server, self)
+        return server
 
     # ------------------------------------------------------------------ the end
 
