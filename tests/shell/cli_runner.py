@@ -29,7 +29,9 @@ finding = Finding(
     message="a brace at 20 \\u00b0C",
 )
 module = types.ModuleType("watchglass.shell.pipeline")
-module.check_paths = lambda paths: types.SimpleNamespace(findings=(finding,) * 1, checked=1)
+module.check_paths = lambda paths, scale=None: types.SimpleNamespace(
+    findings=(finding,) * 1, checked=1, accepted=()
+)
 sys.modules["watchglass.shell.pipeline"] = module
 from watchglass.shell.cli import main
 status = main(sys.argv[1:])

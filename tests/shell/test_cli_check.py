@@ -37,9 +37,10 @@ def judged(
     """Let the stages find what is given; the list fills with what they were asked to check."""
     asked: list[Sequence[Path]] = []
 
-    def check_paths(paths: Sequence[Path]) -> object:
+    def check_paths(paths: Sequence[Path], *, scale: float | None = None) -> object:
+        del scale
         asked.append(paths)
-        return SimpleNamespace(findings=findings, checked=checked)
+        return SimpleNamespace(findings=findings, checked=checked, accepted=())
 
     replace_module(monkeypatch, PIPELINE, check_paths=check_paths)
     return asked

@@ -34,7 +34,8 @@ def draft(tmp_path: Path) -> str:
 def failing(error: BaseException) -> Callable[..., object]:
     """Make a stage that raises."""
 
-    def check_paths(_paths: object) -> object:
+    def check_paths(_paths: object, *, scale: float | None = None) -> object:
+        del scale
         raise error
 
     return check_paths

@@ -12,9 +12,10 @@ from contextlib import suppress
 from pathlib import Path
 
 from watchglass.shell.commands.verdict import Refused
+from watchglass.shell.schemas import write_schemas
 
 BEGINNINGS = Path(__file__).with_name("beginnings")
-"""What a new set holds; it is checked and built by a test."""
+"""What a new set holds; it is checked and built by a test. The schemas its files name are made."""
 
 
 def write_set(target: Path) -> None:
@@ -32,6 +33,7 @@ def write_set(target: Path) -> None:
         beside = _beside(target)
         try:
             _copy(BEGINNINGS, beside)
+            write_schemas(beside / "schemas")
             if target.is_dir():
                 _move_in(beside, target)
             else:

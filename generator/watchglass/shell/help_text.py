@@ -26,6 +26,7 @@ Commands:
   ledger   Show what every vessel holds after every step.
   reckon   Work out expressions of the notation.
   new      Write a small set and its site to begin with.
+  schema   Print a JSON Schema for editors and other programs.
   explain  Say what a finding means.
 
   `watchglass COMMAND --help` tells more about a command.

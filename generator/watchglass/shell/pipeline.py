@@ -119,10 +119,11 @@ class Analysis(NamedTuple):
 
 
 class CheckResult(NamedTuple):
-    """What `check` found, and over how many procedures."""
+    """What `check` found, and over how many procedures; what was accepted, each with its reason."""
 
     findings: tuple[Finding, ...]
     checked: int
+    accepted: tuple[tuple[Finding, str], ...] = ()
 
 
 # ------------------------------------------------------------------------------ whole sets
@@ -197,19 +198,21 @@ def check_paths(paths: Sequence[Path], *, scale: float | None = None) -> CheckRe
     other files show (a code used twice) is left to the check of the set.
     """
     findings: list[Finding] = []
+    accepted: list[tuple[Finding, str]] = []
     checked = 0
     singles: dict[Path | None, list[Path]] = {}
     for path in paths:
         if path.is_dir():
             analysis = analyse_set(path, shown=_shown(path), scale=scale)
             findings += analysis.findings
+            accepted += [(f, a.reason) for p in analysis.procedures for f, a in p.accepted]
             checked += len(analysis.procedures)
         else:
             singles.setdefault(find_set(path), []).append(path)
     for root, files in singles.items():
-        findings += _check_files(root, files, scale)
+        findings += _check_files(root, files, scale, accepted)
         checked += len(files)
-    return CheckResult(tuple(findings), checked)
+    return CheckResult(tuple(findings), checked, tuple(accepted))
 
 
 def _shown(folder: Path) -> str:
@@ -217,7 +220,13 @@ def _shown(folder: Path) -> str:
     return "" if shown == "." else shown.rstrip("/") + "/"
 
 
-def _check_files(root: Path | None, paths: Iterable[Path], scale: float | None) -> list[Finding]:
+def _check_files(
+    root: Path | None,
+    paths: Iterable[Path],
+    scale: float | None,
+    accepted: list[tuple[Finding, str]],
+) -> list[Finding]:
+    """Check single files of one set; what they accept is added to `accepted`."""
     sources: Mapping[str, Source] = {}
     findings: list[Finding] = []
     if root is not None:
@@ -235,7 +244,9 @@ def _check_files(root: Path | None, paths: Iterable[Path], scale: float | None) 
             if inside.startswith("pages/"):
                 findings += analyse_page(name, source, around).findings
             else:
-                findings += analyse_procedure(name, source, around).findings
+                judged = analyse_procedure(name, source, around)
+                findings += judged.findings
+                accepted += [(finding, a.reason) for finding, a in judged.accepted]
     return findings
 
 

@@ -45,6 +45,11 @@ TABLE: tuple[Entry, ...] = (
     ),
     Entry("reckon", "watchglass.shell.commands.reckon", "Work out expressions of the notation."),
     Entry("new", "watchglass.shell.commands.new", "Write a small set and its site to begin with."),
+    Entry(
+        "schema",
+        "watchglass.shell.commands.schema",
+        "Print a JSON Schema for editors and other programs.",
+    ),
     Entry("explain", "watchglass.shell.commands.explain", "Say what a finding means."),
 )
 _BY_NAME = {entry.name: entry for entry in TABLE}

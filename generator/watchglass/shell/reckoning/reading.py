@@ -38,7 +38,7 @@ OF_THINGS = frozenset(n for n, f in FUNCTIONS.items() if f.arguments == ("thing"
 OF_PROCEDURES = frozenset(
     name
     for name, function in FUNCTIONS.items()
-    if function.arguments[0] in ("held", "vessel", "reaction", "label")
+    if function.arguments[0] in ("held", "vessel", "reaction", "yield", "label")
 )
 #: Functions whose arguments are no expressions.
 _WRITTEN_OUT = frozenset((*OF_THINGS, DILUTION, "balance", "convert"))
