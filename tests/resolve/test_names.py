@@ -154,9 +154,11 @@ def test_broken_front_matter_makes_no_name_unknown() -> None:
 
 
 def test_names_that_are_used_are_remembered() -> None:
-    procedure = sound(step("Do {5 mL acid by cylinder -> A} and {react neutral in A}."))
+    procedure = sound(
+        step("Do {5 mL acid by cylinder -> A}, {5 mL base -> A} and {react neutral in A}.")
+    )
 
-    assert procedure.used == {"acid", "cylinder", "A", "neutral"}
+    assert procedure.used == {"acid", "base", "cylinder", "A", "neutral"}
 
 
 def test_kind_of_every_name_is_kept() -> None:

@@ -57,6 +57,13 @@ def size(procedure: model.Procedure, name: str) -> str:
         ("Add {2–3 mL acid -> A}.", "2", "Add 4–6 mL of 3.0 M hydrochloric acid."),
         ("[Add 15 mL of the acid]{15 mL acid -> A}.", "2", "Add 30 mL of the acid."),
         (
+            "[Add 5.0 g (6.8 mL, 57 mmol) of it]{5.0 g ether -> A}.",
+            "2",
+            "Add 10 g (13.6 mL, 114 mmol) of it.",
+        ),
+        ("Add {2.0 g salt -> A} ({34 mmol}).", "2", "Add 4.0 g of sodium chloride (68 mmol)."),
+        ("Weigh {2.0 g salt -> A} to {1 mg}.", "2", "Weigh 4.0 g of sodium chloride to 1 mg."),
+        (
             "[Add **2.0 g** (34 mmol) of salt]{2.0 g salt -> A}.",
             "2",
             "Add 4.0 g (68 mmol) of salt.",

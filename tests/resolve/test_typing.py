@@ -89,8 +89,9 @@ FAULTS = [
     ("mass(acid) + volume(acid)", "Q112", "mass(acid) + volume(acid)", "a mass and a volume are added", "turn one into the other through a density"),
     ("moles(acid) in g", "Q109", "g", "the value is an amount of substance; `g` is the unit of a mass", "name a unit of the value, or mend the expression"),
     ("strength(acid) in g/L", "Q109", "g/L", "the value is an amount concentration; `g/L` is the unit of a mass per volume", "name a unit of the value, or mend the expression"),
-    ("theoretical-yield(A)", "N164", "A", "`A` is a vessel; a reaction belongs here", "name a reaction"),
-    ("theoretical-yield(acid)", "N164", "acid", "`acid` is a material; a reaction belongs here", "name a reaction"),
+    ("theoretical-yield(A)", "N164", "A", "`A` is a vessel; a reaction or its product belongs here", "name a reaction or its product"),
+    ("theoretical-yield(acid)", "N167", "acid", "no reaction makes `acid`", "name a reaction or its product: `neutral`, `sodium-chloride`, `water`"),
+    ("theoretical-yield(5 g)", "N167", "5 g", "the name of a reaction or of its product belongs here", None),
     ("recovered(salt)", "N167", "salt", "`recovered` takes a substance in a vessel", "write it as in `recovered(ester in receiver)`"),
     ("recovered(5 g in A)", "N167", "5 g", "a substance stands before `in`", "write it as in `fraction(ester in receiver)`"),
     ("recovered(salt in acid)", "N164", "acid", "`acid` is a material; a vessel belongs here", "name a vessel"),
@@ -121,7 +122,7 @@ FAULTS = [
     ("min(5 g, 6 mg, 7 mL)", "Q112", "7 mL", "a mass and a volume stand together", "turn one into the other through a density"),
     ("own + 5 mL", "Q112", "own + 5 mL", "a mass and a volume are added", "turn one into the other through a density"),
     ("1 - own", "Q112", "1 - own", "a plain number and a mass are taken from each other", None),
-    ('theoretical-yield("x")', "N167", '"x"', "the name of a reaction belongs here", None),
+    ('theoretical-yield("x")', "N167", '"x"', "no reaction makes `x`", "name a reaction or its product: `neutral`, `sodium-chloride`, `water`"),
     ("ln(melts(benzoic-acid))", "N167", "melts(benzoic-acid)", "`ln` takes a plain number, not a temperature", "write it as in `ln(2)`"),
     ("5 g ^ -1 in 1", "Q109", "1", "the value is a quantity in kg^-1; `1` is the unit of a plain number", "name a unit of the value, or mend the expression"),
     ("moles(lamp)", "N164", "lamp", "`lamp` is equipment; a material belongs here", "name a material"),
@@ -151,7 +152,8 @@ def test_what_does_not_go_together_is_one_finding_in_its_place(
 @pytest.mark.parametrize("name", [n for n in FUNCTIONS if n != "label"])
 def test_example_of_each_function_has_the_form_it_asks_for(name: str) -> None:
     front = (
-        "materials: {acid: 3.0 M hydrochloric acid, ether: tert-butyl methyl ether}\n"
+        "materials: {acid: 3.0 M hydrochloric acid, ether: tert-butyl methyl ether,"
+        " base: 1.0 M sodium hydroxide}\n"
         "vessels: {flask: beaker 50 mL, receiver: beaker 50 mL}\n"
         "reactions: {ester: HCl + NaOH -> NaCl + H2O}"
     )

@@ -140,16 +140,22 @@ ALL_OF_NOTHING = Code(
     "S112", "all-of-nothing", _ERROR, "all of a material is used, none is provided"
 )
 NOT_LIMITING = Code(
-    "S130", "other-reactant-limits", _ERROR, "another reactant than the declared one limits"
+    "S130", "other-reactant-limits", _WARNING, "another reactant than the declared one limits"
 )
 STATED_AMOUNT_DISAGREES = Code(
-    "S131", "stated-amount-disagrees", _ERROR, "words state an amount that the mark does not bring"
+    "S131", "stated-amount-disagrees", _WARNING, "words state another amount than the mark brings"
 )
 REACTANT_NOT_AT_HAND = Code(
-    "S132", "reactant-not-at-hand", _ERROR, "a reaction needs what no material brings"
+    "S132", "reactant-not-at-hand", _WARNING, "a reaction needs what no material brings"
+)
+REACTANT_NOT_IN_VESSEL = Code(
+    "S133", "reactant-not-in-vessel", _ERROR, "a reaction runs where a reactant never comes"
 )
 STRENGTH_IMPOSSIBLE = Code(
-    "S134", "strength-impossible", _ERROR, "a solution is stronger than its solute can make it"
+    "S134", "strength-impossible", _WARNING, "a solution is stronger than its solute can make it"
+)
+MORE_THAN_FORMS = Code(
+    "S135", "more-than-can-form", _WARNING, "more of a product is stated than can form"
 )
 LABEL_DISAGREES = Code(
     "S120", "label-disagrees", _WARNING, "a label says two strengths that are not the same"
@@ -226,6 +232,17 @@ NO_PH_TEST = Code("X106", "ph-not-tested", _WARNING, "a pH is adjusted and never
 # -- E: editions -------------------------------------------------------------------------------
 ACT_IN_HIDDEN_BLOCK = Code(
     "E110", "act-in-hidden-block", _ERROR, "an act stands where students do not see it"
+)
+
+# -- P: prep and print ---------------------------------------------------------------------------
+STOCK_SOURCE_UNKNOWN = Code(
+    "P101", "stock-source-unknown", _ERROR, "a stock is made from no stock, or from itself"
+)
+STOCK_NOT_FROM_SOURCE = Code(
+    "P102", "stock-not-from-source", _ERROR, "a stock cannot be diluted from the one named"
+)
+STOCK_OFF_STRENGTH = Code(
+    "P103", "stock-off-strength", _WARNING, "what can be weighed misses the strength of a stock"
 )
 
 

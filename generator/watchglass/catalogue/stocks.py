@@ -13,7 +13,8 @@ if TYPE_CHECKING:
 class Stock(NamedTuple):
     """One stock: its `material` is text in the notation of a material, resolved where it is used.
 
-    `density` is that of the solution, as its label has it.
+    `density` is that of the solution, as its label has it; `makes` how much is made at a time;
+    `made_from` the key of another stock that it is diluted from, or empty.
     """
 
     key: str
@@ -22,6 +23,11 @@ class Stock(NamedTuple):
     notes: str
     span: Span
     density: YamlText | None = None
+    makes: Quantity | None = None
+    made_from: str = ""
+    made_from_span: Span | None = None
+    shelf_life: str = ""
+    container: str = ""
 
 
 class Indicator(NamedTuple):

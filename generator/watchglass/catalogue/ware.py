@@ -42,6 +42,8 @@ STOCK_FIELDS: dict[str, Field] = {
     "names": Field(Shape.TEXT_OR_LIST, "further names it goes by"),
     "material": Field(Shape.TEXT, "what it is, as `3.0 M hydrochloric acid`", required=True),
     "density": Field(Shape.TEXT, "density of the solution, as `1.18 g/mL`"),
+    "makes": Field(Shape.TEXT, "how much is made at a time, as `1 L`"),
+    "from": Field(Shape.TEXT, "key of the stock that it is diluted from"),
     "shelf-life": Field(Shape.TEXT, "how long it keeps"),
     "container": Field(Shape.TEXT, "what it is kept in"),
     "note": Field(Shape.TEXT, "a remark"),
@@ -98,6 +100,7 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
     material = record.text("material") if record else None
     if record is None or material is None:
         return None, found
+    findings, makes = list(found), record.text("makes")
     notes = " ".join(filter(None, (_text(record, "note"), _text(record, "notes"))))
     stock = Stock(
         key=entry.key.text,
@@ -106,8 +109,13 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
         notes=notes,
         span=entry.key.span,
         density=record.text("density"),
+        makes=texts.quantity(makes, dim.VOLUME, findings) if makes is not None else None,
+        made_from=_text(record, "from"),
+        made_from_span=record.keys.get("from"),
+        shelf_life=_text(record, "shelf-life"),
+        container=_text(record, "container"),
     )
-    return stock, found
+    return stock, tuple(findings)
 
 
 def _names(record: Record | None) -> tuple[str, ...]:

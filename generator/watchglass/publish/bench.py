@@ -6,7 +6,8 @@ be assessed says so, with its reason.
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING, NamedTuple
+from dataclasses import dataclass, replace
+from typing import TYPE_CHECKING
 
 from watchglass.base.figures import shown
 from watchglass.catalogue.components import PROTON, WATER
@@ -43,7 +44,8 @@ MODEL = (
 )
 
 
-class Content(NamedTuple):
+@dataclass(frozen=True, slots=True)
+class Content:
     """One substance in a phase: its name, its amount with unit, and its share of all there is."""
 
     name: str
@@ -51,7 +53,8 @@ class Content(NamedTuple):
     share: str
 
 
-class Holding(NamedTuple):
+@dataclass(frozen=True, slots=True)
+class Holding:
     """One phase of a vessel.
 
     Attributes:
@@ -71,14 +74,16 @@ class Holding(NamedTuple):
     remarks: tuple[str, ...] = ()
 
 
-class Act(NamedTuple):
+@dataclass(frozen=True, slots=True)
+class Act:
     """One act: as written, and what it did, in sentences."""
 
     written: str
     did: tuple[str, ...]
 
 
-class BenchStep(NamedTuple):
+@dataclass(frozen=True, slots=True)
+class BenchStep:
     """One pass of one step.
 
     Attributes:
@@ -249,7 +254,7 @@ def holdings(vessel: Vessel, ledger: Ledger, known: Knowledge) -> tuple[Holding,
         if contents:
             found.append(Holding(vessel.name, "solid", "", "", contents))
     if remarks and found:
-        found[0] = found[0]._replace(remarks=tuple(remarks))
+        found[0] = replace(found[0], remarks=tuple(remarks))
     return tuple(found)
 
 
@@ -273,7 +278,7 @@ def _contents(
     for key, amount in amounts.items():
         whole = ledger.charged.get(key, 0.0) + ledger.formed.get(key, 0.0)
         thing = known.thing(key)
-        share = share_words(amount / whole) if whole > 0 and not thing.layers else ""
+        share = share_words(amount / whole) if whole > 0 and not (thing.layers or thing.ion) else ""
         made.append((amount, Content(thing.name, amount_words(amount), share)))
     return tuple(content for _, content in sorted(made, key=lambda m: -m[0]))
 

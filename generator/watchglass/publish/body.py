@@ -22,6 +22,7 @@ from watchglass.publish.wording import act_words, mark_words
 from watchglass.read import syntax
 from watchglass.read.terms import Binary, Call, Compare, Held, Negative
 from watchglass.resolve.outline import HIDDEN, headings
+from watchglass.run.bench.evaluator import BenchEvaluator
 from watchglass.run.evaluate import Evaluator, NotKnown, Value, in_unit
 
 if TYPE_CHECKING:
@@ -255,6 +256,8 @@ class BodyBuilder:
         return value_words(digits, "" if unit == "1" else unit)
 
     def _record(self, act: syntax.RecordAct, step: int) -> tuple[m.Words, ...]:
+        if isinstance(self.evaluator, BenchEvaluator):
+            self.evaluator.step = step
         self._blanks += 1
         name = act.name.text if act.name else ""
         unit = act.unit.text if act.unit and act.unit.text != "1" else ""

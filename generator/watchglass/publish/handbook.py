@@ -13,6 +13,7 @@ from watchglass.publish.pages import (
     ordinary_page,
     student_page,
 )
+from watchglass.publish.reference import Use, reference_lists, references
 from watchglass.publish.text import quantity_words
 from watchglass.resolve.outline import slug
 
@@ -21,6 +22,7 @@ if TYPE_CHECKING:
 
     from watchglass.base.findings import Finding
     from watchglass.catalogue.catalogue import Catalogue
+    from watchglass.judge.bench.run import Run as BenchRun
     from watchglass.judge.case import Case
     from watchglass.read.syntax import ProcedureSyntax
     from watchglass.resolve.laboratory import Laboratory
@@ -63,6 +65,11 @@ class _Procedure(Protocol):
     @property
     def case(self) -> Case:
         """The procedure with its course and usage."""
+        ...
+
+    @property
+    def run(self) -> BenchRun | None:
+        """How it went at the bench."""
         ...
 
     @property
@@ -129,6 +136,7 @@ class HandbookPages:
         lists: Procedures by course and by week.
         procedures: One page each; all of the edition's own type.
         pages: Ordinary pages, the welcome page excepted.
+        references: Substances and stocks.
         assets: Pictures: path within the set, address in the handbook.
     """
 
@@ -140,6 +148,7 @@ class HandbookPages:
     procedures: tuple[m.StudentPage, ...] | tuple[m.InstructorPage, ...]
     pages: tuple[m.OrdinaryPage, ...]
     assets: tuple[tuple[str, str], ...]
+    references: tuple[m.ReferencePage, ...] = ()
 
 
 def address_of(code: str) -> str:
@@ -199,6 +208,15 @@ class _Maker:
             lists.append(
                 m.ListPage(kind="weeks", title="Weeks", address="weeks.html", groups=weeks)
             )
+        found = references(
+            (Use(self.links[p.card.code.casefold()], p.case.procedure) for p in self.procedures),
+            self.around.catalogue,
+            laboratory,
+            instructor=self.edition == "instructor",
+        )
+        lists += reference_lists(found)
+        if self.edition == "instructor" and (accepted := self._accepted()) is not None:
+            lists.append(accepted)
         return HandbookPages(
             edition=self.edition,
             laboratory=laboratory.name or "Laboratory handbook",
@@ -208,6 +226,7 @@ class _Maker:
             procedures=self._procedure_pages(),
             pages=pages,
             assets=self._assets(),
+            references=found,
         )
 
     def _procedure_pages(self) -> tuple[m.StudentPage, ...] | tuple[m.InstructorPage, ...]:
@@ -215,10 +234,18 @@ class _Maker:
         catalogue = self.around.catalogue
         pairs = list(zip(self.procedures, places, strict=True))
         if self.edition == "student":
-            return tuple(student_page(p.case, p.path, place, catalogue) for p, place in pairs)
+            return tuple(
+                student_page(p.case, p.path, place, catalogue, p.run) for p, place in pairs
+            )
         return tuple(
             instructor_page(
-                p.case, p.path, place, catalogue, findings=p.findings, accepted=p.accepted
+                p.case,
+                p.path,
+                place,
+                catalogue,
+                findings=p.findings,
+                accepted=p.accepted,
+                run=p.run,
             )
             for p, place in pairs
         )
@@ -254,6 +281,35 @@ class _Maker:
         )
 
     # ------------------------------------------------------------------ lists
+
+    def _accepted(self) -> m.ListPage | None:
+        """List what was found and accepted, by kind of finding, and what is intended."""
+        groups: dict[str, list[m.ListEntry]] = {}
+        titles: dict[str, str] = {}
+        for entry in self.procedures:
+            link = self.links[entry.card.code.casefold()]
+            for finding, acceptance in entry.accepted:
+                code = finding.code
+                titles[code.number] = f"{code.number} {code.name}"
+                groups.setdefault(code.number, []).append(
+                    m.ListEntry(link, f"{finding.message}. Accepted because: {acceptance.reason}")
+                )
+            for intended in entry.case.procedure.intended:
+                titles["~"] = "Intended reactions"
+                groups.setdefault("~", []).append(
+                    m.ListEntry(link, f"{intended.word}: {intended.reason}")
+                )
+        if not groups:
+            return None
+        return m.ListPage(
+            kind="accepted",
+            title="Accepted",
+            address="accepted.html",
+            groups=tuple(
+                m.ListGroup(titles[key], f"accepted-{slug(titles[key])}", tuple(entries))
+                for key, entries in sorted(groups.items())
+            ),
+        )
 
     def _entry(self, entry: _Procedure, more: str = "") -> m.ListEntry:
         head = entry.case.procedure.head

@@ -9,6 +9,8 @@ from __future__ import annotations
 
 from dataclasses import dataclass, field
 
+from watchglass.publish.bench import BenchStep  # noqa: TC001 - templates' tests read the types
+
 # ---------------------------------------------------------------- words
 
 
@@ -331,7 +333,7 @@ class ExpectationLine:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class InstructorPage:
-    """A procedure as instructors see it."""
+    """A procedure as instructors see it; `bench` is what every vessel holds after every step."""
 
     facts: Facts
     before: tuple[Blocks, ...]
@@ -344,6 +346,7 @@ class InstructorPage:
     intended: tuple[tuple[str, str], ...]
     expectations: tuple[ExpectationLine, ...]
     assumptions: tuple[str, ...]
+    bench: tuple[BenchStep, ...] = ()
 
 
 # ---------------------------------------------------------------- other pages
@@ -357,6 +360,40 @@ class OrdinaryPage:
     address: str
     body: tuple[Blocks, ...]
     outline: tuple[tuple[int, str, str], ...] = ()
+
+
+@dataclass(frozen=True, slots=True)
+class ReferenceRow:
+    """One fact of a substance or stock: its name, its value (`unknown` in words), its source."""
+
+    label: str
+    value: tuple[Words, ...]
+    source: str
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class ReferencePage:
+    """A page of a substance or of a stock.
+
+    Attributes:
+        kind: `substance` or `stock`.
+        title: Its name.
+        address: From the edition's root.
+        rows: What is known of it.
+        used_in: Procedures that use it.
+        lines: How it is made, in sentences; empty for substances, and in the student edition.
+        remarks: What the recipe rests on.
+        made: How much the recipe makes; empty where there is none.
+    """
+
+    kind: str
+    title: str
+    address: str
+    rows: tuple[ReferenceRow, ...]
+    used_in: tuple[PageLink, ...]
+    lines: tuple[str, ...]
+    remarks: tuple[str, ...]
+    made: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -378,7 +415,7 @@ class ListGroup:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class ListPage:
-    """A list of procedures: `kind` is `courses` or `weeks`."""
+    """A list: `kind` is `courses`, `weeks`, `substances`, `stocks` or `accepted` (instructors')."""
 
     kind: str
     title: str

@@ -2,17 +2,21 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import TYPE_CHECKING
 
 from watchglass.base.spans import Lines
 from watchglass.publish import model as m
+from watchglass.publish.bench import MODEL, bench_steps
 from watchglass.publish.body import BodyBuilder
 from watchglass.publish.lists import equipment_rows, reaction_lines
 from watchglass.publish.reagents import reagent_rows
 from watchglass.publish.text import quantity_words
+from watchglass.read.terms import Compare, Within
 from watchglass.resolve import model
-from watchglass.run.evaluate import Evaluator
+from watchglass.run.bench.evaluator import BenchEvaluator, reached_words
+from watchglass.run.bench.positions import layer_positions
+from watchglass.run.evaluate import Evaluator, NotKnown
 from watchglass.run.roles import roles
 
 if TYPE_CHECKING:
@@ -20,9 +24,10 @@ if TYPE_CHECKING:
 
     from watchglass.base.findings import Finding
     from watchglass.catalogue.catalogue import Catalogue
+    from watchglass.judge.bench.run import Run as BenchRun
     from watchglass.judge.case import Case
     from watchglass.read.syntax import ProcedureSyntax
-    from watchglass.resolve.model import Acceptance
+    from watchglass.resolve.model import Acceptance, Expectation
 
 ASSUMPTIONS = (
     "Amounts are plain stoichiometry, by the IUPAC 2021 standard atomic weights (conventional values).",
@@ -67,17 +72,28 @@ def _plain(words: tuple[m.Words, ...]) -> str:
 
 
 def _builder(
-    case: Case, path: str, place: Neighbours, catalogue: Catalogue, *, instructor: bool
+    case: Case,
+    path: str,
+    place: Neighbours,
+    catalogue: Catalogue,
+    run: BenchRun | None,
+    *,
+    instructor: bool,
 ) -> BodyBuilder:
-    evaluator = Evaluator(case.procedure, case.usage, catalogue, {})
-    return BodyBuilder(
-        case.procedure, evaluator, place.addresses, path, instructor, case.course.turns
-    )
+    procedure = case.procedure
+    evaluator = Evaluator(procedure, case.usage, catalogue, {})
+    if run is not None:
+        procedure = replace(procedure, positions=layer_positions(run.ledger))
+        if instructor:
+            evaluator = BenchEvaluator(procedure, case.usage, catalogue, {}, asked=run.asked())
+    return BodyBuilder(procedure, evaluator, place.addresses, path, instructor, case.course.turns)
 
 
-def student_page(case: Case, path: str, place: Neighbours, catalogue: Catalogue) -> m.StudentPage:
-    """Make the page that students see."""
-    builder = _builder(case, path, place, catalogue, instructor=False)
+def student_page(
+    case: Case, path: str, place: Neighbours, catalogue: Catalogue, run: BenchRun | None = None
+) -> m.StudentPage:
+    """Make the page that students see; of the bench it takes where layers lie, and nothing else."""
+    builder = _builder(case, path, place, catalogue, run, instructor=False)
     blocks = case.procedure.body
     body = builder.build(blocks)
     return m.StudentPage(
@@ -98,9 +114,10 @@ def instructor_page(
     *,
     findings: tuple[Finding, ...],
     accepted: tuple[tuple[Finding, Acceptance], ...],
+    run: BenchRun | None = None,
 ) -> m.InstructorPage:
     """Make the page that instructors see."""
-    builder = _builder(case, path, place, catalogue, instructor=True)
+    builder = _builder(case, path, place, catalogue, run, instructor=True)
     blocks = case.procedure.body
     body = builder.build(blocks)
     lines = Lines(case.procedure.syntax.source.text)
@@ -115,11 +132,42 @@ def instructor_page(
         accepted=tuple(_finding(f, lines, a.reason) for f, a in accepted),
         intended=tuple((entry.word, entry.reason) for entry in case.procedure.intended),
         expectations=tuple(
-            m.ExpectationLine(e.written, "not assessed: the bench is not yet run")
-            for e in case.procedure.expectations
+            _expectation(e, case, catalogue, run) for e in case.procedure.expectations
         ),
-        assumptions=ASSUMPTIONS,
+        assumptions=_assumptions(case, run),
+        bench=bench_steps(run.ledger, run.known) if run is not None else (),
     )
+
+
+def _expectation(
+    line: Expectation, case: Case, catalogue: Catalogue, run: BenchRun | None
+) -> m.ExpectationLine:
+    """Say what became of an expectation: the figure reached, at both ends where they differ."""
+    if run is None or not isinstance(line.expression, Compare | Within):
+        return m.ExpectationLine(line.written, "not assessed")
+    said: list[str] = []
+    for ledger in run.ledgers:
+        evaluator = BenchEvaluator(
+            case.procedure, case.usage, catalogue, {}, asked=run.asked(ledger)
+        )
+        holds, reached = evaluator.holds(line.expression)
+        if holds is None or isinstance(reached, NotKnown):
+            said.append("not assessed" + (f": {evaluator.why}" if evaluator.why else ""))
+        else:
+            said.append(f"{reached_words(reached)}, {'as expected' if holds else 'missed'}")
+    return m.ExpectationLine(line.written, " to ".join(dict.fromkeys(said)))
+
+
+def _assumptions(case: Case, run: BenchRun | None) -> tuple[str, ...]:
+    """Give what the figures of a page rest on."""
+    found = [*ASSUMPTIONS]
+    if run is not None:
+        found.append(MODEL)
+    for name, material in case.procedure.materials.items():
+        facts = material.solution
+        if facts is not None and facts.source == "water":
+            found.append(f"{name}: taken to be as dense as water, since no table has its density.")
+    return tuple(found)
 
 
 def _finding(finding: Finding, lines: Lines, reason: str) -> m.FindingLine:

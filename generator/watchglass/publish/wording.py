@@ -100,15 +100,25 @@ def _and(parts: list[tuple[Words, ...]], tail: tuple[Words, ...]) -> tuple[Words
 def place_words(place: syntax.Place, procedure: Procedure) -> Words:
     """Name a vessel, a material, or a part of what a vessel holds."""
     if place.part is not None:
-        return Said("vessel", (Run(PARTS[place.part]),))
+        return Said("vessel", (Run(_layer(place, procedure)),))
     kind = "vessel" if place.name.text in procedure.vessels else "material"
     return Said(kind, thing_name(place.name.text, procedure))
+
+
+def _layer(place: syntax.Place, procedure: Procedure) -> str:
+    """Call a layer by where it lies and what it is, as the bench found it; else as written."""
+    found = procedure.positions.get(place.span.start)
+    if found is None:
+        return PARTS[place.part or "liquid"]
+    position, layer, close = found
+    test = ", as a drop of water shows," if close else ""
+    return f"the {position} ({layer}) layer{test}"
 
 
 def contents_words(place: syntax.Place, procedure: Procedure) -> Words:
     """Name what is poured out of a vessel."""
     if place.part is not None:
-        return Said("vessel", (Run(PARTS[place.part]),))
+        return Said("vessel", (Run(_layer(place, procedure)),))
     return Said("vessel", (Run("the contents of "), *thing_name(place.name.text, procedure)))
 
 

@@ -15,7 +15,7 @@ from watchglass.base.findings import Finding, Related
 from watchglass.base.scan import Found, scan_quantity
 from watchglass.read import syntax
 from watchglass.read.terms import Compare, Within
-from watchglass.resolve import model, prose
+from watchglass.resolve import model, prose, stated
 from watchglass.resolve.acts import ActReader
 from watchglass.resolve.charges import charge_table
 from watchglass.resolve.scope import KINDS
@@ -124,7 +124,11 @@ class BodyReader:
 
     # ------------------------------------------------------------------ inlines
 
-    def _inlines(self, inlines: Iterable[syntax.Inline], walk: Walk) -> None:
+    def _inlines(self, inlines: tuple[syntax.Inline, ...], walk: Walk) -> None:
+        measures = self.scope.catalogue.measures
+        # What is stated of a portion in another measure is verified later: `judge/stated.py`.
+        later = stated.beside(inlines, measures) if walk.step and not walk.free else ()
+        places = {one.span.start for one in later}
         for inline in inlines:
             match inline:
                 case syntax.Text():
@@ -133,7 +137,8 @@ class BodyReader:
                     if not words.endswith(("into", "to")):
                         walk.last_target = None
                     if not walk.free:
-                        self._found(prose.untyped(inline, self.scope.catalogue.measures))
+                        untyped = prose.untyped(inline, measures)
+                        self._found(f for f in untyped if f.span.start not in places)
                 case syntax.Emphasis(_, children, _) | syntax.Link(children, _, _, _):
                     self._inlines(children, walk)
                 case syntax.Marked():
@@ -143,7 +148,11 @@ class BodyReader:
 
     def _marked(self, marked: syntax.Marked, walk: Walk) -> None:
         if marked.words is not None:
-            wrong, loose = prose.disagreements(marked, self.scope.catalogue.measures)
+            measures = self.scope.catalogue.measures
+            wrong, loose = prose.disagreements(marked, measures)
+            later = stated.in_words(marked, measures) if walk.step and not walk.free else ()
+            places = {one.span.start for one in later}
+            loose = [finding for finding in loose if finding.span.start not in places]
             self._found(wrong if walk.free else wrong + loose)
         for act in marked.acts:
             self._places(act, walk)

@@ -31,6 +31,7 @@ FIELDS: dict[str, Field] = {
     "temperature": Field(Shape.TEXT, "temperature of the room"),
     "balance": Field(Shape.TEXT, "finest step of the balances, as `0.01 g`"),
     "glassware": Field(Shape.MAPPING, "what is owned: `conical flask 100 mL: 60`"),
+    "reagents": Field(Shape.TEXT_OR_LIST, "what the store holds: `37 % w/w hydrochloric acid`"),
     "measures": Field(Shape.MAPPING, "countable measures with their size, as `drop: 0.05 mL`"),
     "baths": Field(Shape.MAPPING, "baths by name with their temperature"),
     "thresholds": Field(Shape.MAPPING, "limits of the checks that differ here"),
@@ -54,6 +55,7 @@ class Laboratory:
         temperature: Of the room, K; 25 °C where not said.
         balance: Finest step of the balances, kg; 0.01 g where not said.
         glassware: What is owned, with how many.
+        reagents: What the store holds of reagents, in the notation of a material.
         measures: Countable measures of its own, m3 or None.
         baths: Names of baths.
         streams: Names of waste streams, the common ones included.
@@ -68,6 +70,7 @@ class Laboratory:
     temperature: float = 298.15
     balance: float = 1e-5
     glassware: tuple[tuple[VesselType, int], ...] = ()
+    reagents: tuple[YamlText, ...] = ()
     measures: Mapping[str, float | None] = field(default_factory=dict)
     baths: tuple[str, ...] = BATHS
     streams: tuple[str, ...] = STREAMS
@@ -101,6 +104,7 @@ def read_laboratory(
         temperature=temperature.si if temperature else 298.15,
         balance=balance.si if balance and balance.si > 0 else 1e-5,
         glassware=_owned(record, types, findings),
+        reagents=texts.words(record.values.get("reagents")),
         measures=_measures(record, findings),
         baths=(*BATHS, *_keys(record.mapping("baths"))),
         streams=(*STREAMS, *_keys(record.mapping("waste"))),

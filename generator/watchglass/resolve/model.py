@@ -205,6 +205,7 @@ class Reaction(NamedTuple):
         right: Products.
         balanced: Whether atoms and charge are conserved.
         limiting: Local name of the material declared limiting, or empty.
+        limiting_span: Where it is declared, or None.
         conversion: Declared conversion of the limiting reactant, or None.
         heat: As declared, or None.
         span: Its name.
@@ -220,6 +221,7 @@ class Reaction(NamedTuple):
     limiting: str = ""
     conversion: Quantity | None = None
     heat: Quantity | None = None
+    limiting_span: Span | None = None
 
 
 # ---------------------------------------------------------------- events
@@ -416,7 +418,8 @@ class Procedure:
     """A whole procedure, resolved.
 
     `syntax` is the file as its author wrote it, `body` what is printed of it: the same blocks, with
-    other figures where the procedure is scaled. `names` tells for every local name what it is: `material`, `vessel`, `equipment`, `reaction`,
+    other figures where the procedure is scaled. `positions` tells, by offset of a place that draws a
+    layer, where the bench found that layer to lie, which it is, and whether a drop test is due. `names` tells for every local name what it is: `material`, `vessel`, `equipment`, `reaction`,
     `label` or `record`.
     """
 
@@ -435,3 +438,4 @@ class Procedure:
     labels: Mapping[str, int] = field(default_factory=dict)
     names: Mapping[str, str] = field(default_factory=dict)
     used: frozenset[str] = frozenset()
+    positions: Mapping[int, tuple[str, str, bool]] = field(default_factory=dict)

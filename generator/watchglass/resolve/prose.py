@@ -90,39 +90,41 @@ def disagreements(
         Findings for words that say another figure than the mark, and for quantities of a dimension
         that the mark does not carry at all.
     """
-    carried = list(_carried(marked.acts))
+    held = list(carried(marked.acts))
     wrong: list[Finding] = []
     loose: list[Finding] = []
-    for text in _texts(marked.words or ()):
+    for text in texts_in(marked.words or ()):
         for quantity, start, end in quantities_in(text, measures):
-            alike = [c for c in carried if _alike(c, quantity)]
-            if not alike:
+            same = [c for c in held if alike(c, quantity)]
+            if not same:
                 if quantity.dimension != dim.COUNT:
                     loose += untyped(
                         syntax.Text(text.text[start:end], text.span.part(start, end)), measures
                     )
-            elif not any(_equal(c, quantity) for c in alike):
+            elif not any(_equal(c, quantity) for c in same):
                 wrong.append(
                     Finding(
                         code=codes.WORDS_DISAGREE,
                         span=text.span.part(start, end),
-                        message=f"the words say `{quantity.text}`, the mark `{alike[0].text}`",
+                        message=f"the words say `{quantity.text}`, the mark `{same[0].text}`",
                         related=(Related(marked.mark, "the mark they stand for"),),
-                        help=f"write `{alike[0].text}` in the words, or mend the mark",
+                        help=f"write `{same[0].text}` in the words, or mend the mark",
                     )
                 )
     return wrong, loose
 
 
-def _texts(inlines: Iterable[syntax.Inline]) -> Iterator[syntax.Text]:
+def texts_in(inlines: Iterable[syntax.Inline]) -> Iterator[syntax.Text]:
+    """Give the plain texts among inlines, also within emphasis and links."""
     for inline in inlines:
         if isinstance(inline, syntax.Text):
             yield inline
         elif isinstance(inline, syntax.Emphasis | syntax.Link):
-            yield from _texts(inline.children)
+            yield from texts_in(inline.children)
 
 
-def _alike(one: Quantity, other: Quantity) -> bool:
+def alike(one: Quantity, other: Quantity) -> bool:
+    """Tell whether two quantities are of one dimension, so that they must say the same."""
     return one.dimension == other.dimension or (
         one.dimension.exponents == other.dimension.exponents and not one.dimension.plain
     )
@@ -135,7 +137,7 @@ def _equal(one: Quantity, other: Quantity) -> bool:
     return low - margin <= other.si and other.si_high <= high + margin
 
 
-def _carried(acts: Iterable[syntax.Act]) -> Iterator[Quantity]:
+def carried(acts: Iterable[syntax.Act]) -> Iterator[Quantity]:
     """Give every quantity that the acts of a mark hold."""
     for act in acts:
         match act:

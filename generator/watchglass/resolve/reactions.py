@@ -64,6 +64,15 @@ def substances_of(material: Material) -> tuple[Substance, ...]:
             return ()
 
 
+def same_salt(one: Substance, other: Substance) -> bool:
+    """Tell whether two substances are one, but for water of crystallisation."""
+    return (one.hydrate_of or one.key) == (other.hydrate_of or other.key)
+
+
+def _is_same(one: Substance, other: Substance) -> bool:
+    return one.key == other.key
+
+
 _STATE = re.compile(r"\s*\((?:aq|s|l|g)\)$")
 #: A balance with larger coefficients is arithmetic, not a reaction: it is not offered.
 _LARGEST_OFFERED = 12
@@ -91,6 +100,7 @@ class ReactionReader:
         sides = self._sides(node) if node else None
         balanced = node is not None and sides is not None and self._balance(node, *sides)
         left, right = sides or ((), ())
+        limiting = record.text("limiting") if record else None
         return Reaction(
             name=entry.key.text,
             left=left,
@@ -101,6 +111,7 @@ class ReactionReader:
             limiting=self._limiting(record, left) if record else "",
             conversion=self._share(record) if record else None,
             heat=self._heat(record) if record else None,
+            limiting_span=limiting.span if limiting is not None else None,
         )
 
     def _sides(self, node: YamlText) -> tuple[tuple[Species, ...], tuple[Species, ...]] | None:
@@ -203,12 +214,19 @@ class ReactionReader:
         if fits:
             material, substance = fits[0]
             return Species(term.coefficient, term.text, formula, substance, material.name, span)
+        for material in self.materials.values():
+            for held in substances_of(material):
+                salt = self.catalogue.by_key(held.hydrate_of) if held.hydrate_of else None
+                if salt and salt.formula and _same_atoms(salt.formula, formula):
+                    return Species(term.coefficient, term.text, formula, salt, material.name, span)
         return Species(term.coefficient, term.text, formula, None, "", span)
 
     def _holder(self, substance: Substance) -> str:
-        for material in self.materials.values():
-            if any(held.key == substance.key for held in substances_of(material)):
-                return material.name
+        """Give the material that holds a substance, or else another hydrate of it."""
+        for alike in (_is_same, same_salt):
+            for material in self.materials.values():
+                if any(alike(held, substance) for held in substances_of(material)):
+                    return material.name
         return ""
 
     def _balance(

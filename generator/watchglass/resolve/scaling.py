@@ -4,7 +4,8 @@ The procedure is resolved as its author wrote it, and scaled afterwards: what is
 draft is found in the author's own figures. `procedure.syntax` stays as read; `procedure.body` is
 what is printed. Extensive are masses, volumes, amounts of substance and counts of what is charged,
 drawn, provided, given off or left; strengths, temperatures, times and shares are not, nor is
-`12 mL ethanol per g crude`, nor a quantity that stands in a mark by itself (`weigh to {0.1 mg}`).
+`12 mL ethanol per g crude`, nor a quantity that stands in a mark by itself (`weigh to {0.1 mg}`),
+save where it states a portion once more (`{0.65 g acid -> A} ({5.3 mmol})`).
 """
 
 from __future__ import annotations
@@ -22,6 +23,7 @@ from watchglass.read import syntax
 from watchglass.read.terms import Compare, Within
 from watchglass.resolve import model
 from watchglass.resolve.prose import quantities_in
+from watchglass.resolve.stated import stated
 
 if TYPE_CHECKING:
     from collections.abc import Iterator, Mapping
@@ -57,7 +59,8 @@ def rescale(
     """
     if factor == 1.0:
         return procedure, ()
-    scaler = _Scaler(factor, procedure, catalogue, laboratory)
+    beside = frozenset(one.span.start for one in stated(procedure.body, catalogue.measures))
+    scaler = _Scaler(factor, procedure, catalogue, laboratory, beside)
     vessels = {name: scaler.vessel(vessel) for name, vessel in procedure.vessels.items()}
     scaler.vessels = vessels
     result = replace(
@@ -81,6 +84,8 @@ class _Scaler:
     procedure: model.Procedure
     catalogue: Catalogue
     laboratory: Laboratory
+    #: Where a portion is stated once more, in another measure.
+    beside: frozenset[int] = frozenset()
     vessels: Mapping[str, model.Vessel] = field(default_factory=dict)
     findings: list[Finding] = field(default_factory=list)
     _reported: set[int] = field(default_factory=set)
@@ -259,6 +264,8 @@ class _Scaler:
             case syntax.Clause(word, syntax.Measured() as value, _):
                 if word in _EXTENSIVE_CLAUSES:
                     result = node._replace(value=self._measured(value))
+            case syntax.QuantityAct(value, span) if span.start in self.beside:
+                result = node._replace(value=self._measured(value))
             case syntax.QuantityAct() | syntax.ValueAct() | syntax.RecordAct() | syntax.Measured():
                 pass
             case syntax.Marked(words, acts, _, _) if words is not None:
@@ -318,6 +325,8 @@ class _Scaler:
         made, at = [], 0
         for quantity, start, end in quantities_in(text, self.catalogue.measures):
             after = self._said(quantity, changed)
+            if after is None and text.span.start + start in self.beside:
+                after = scaled(quantity, self.factor).quantity
             if after is not None:
                 made += [text.text[at:start], after.text]
                 at = end

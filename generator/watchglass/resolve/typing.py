@@ -27,8 +27,8 @@ if TYPE_CHECKING:
 class Function(NamedTuple):
     """One function: what its arguments are, and the dimension of its value.
 
-    Arguments: `thing` (a material or substance), `held` (`X in V`), `vessel`, `reaction`, `label`,
-    `step`, `number`, `value`, `same…` (one or more values of one dimension), `equation`, `unit`.
+    Arguments: `thing` (a material or substance), `held` (`X in V`), `vessel`, `reaction`, `yield` (a
+    reaction, or what it makes), `label`, `step`, `number`, `value`, `same…` (one or more values of one dimension), `equation`, `unit`.
     """
 
     arguments: tuple[str, ...]
@@ -43,7 +43,7 @@ FUNCTIONS: dict[str, Function] = {
     "strength": Function(("thing",), dim.CONCENTRATION, "strength(acid)"),
     "molar-mass": Function(("thing",), dim.MOLAR_MASS, 'molar-mass("CuSO4·5H2O")'),
     "density": Function(("thing",), dim.MASS_CONCENTRATION, "density(ether)"),
-    "theoretical-yield": Function(("reaction",), dim.MASS, "theoretical-yield(ester)"),
+    "theoretical-yield": Function(("yield",), dim.MASS, "theoretical-yield(ester)"),
     "limiting": Function(("reaction",), None, "limiting(ester)"),
     "recovered": Function(("held",), dim.MASS, "recovered(ester in receiver)"),
     "fraction": Function(("held",), dim.SHARE, "fraction(ester in receiver)"),
@@ -153,6 +153,16 @@ class Typer:
             self._state(node)
         else:
             self._unfit(node.span, f"the name of a {kind} belongs here", None)
+
+    def _of_yield(self, node: Expression) -> None:
+        """Take a reaction, or a product by its local name, its key, or any name in quotes."""
+        if isinstance(node, Words) or (isinstance(node, Name) and node.quoted):
+            return
+        if isinstance(node, Name):
+            kinds = ("reaction", "material", "substance")
+            self.scope.take(node, kinds, "a reaction or its product")
+        else:
+            self._unfit(node.span, "the name of a reaction or of its product belongs here", None)
 
     # ------------------------------------------------------------------ operators
 
@@ -302,6 +312,8 @@ class Typer:
                     self._unfit(node.span, f"`{name}` takes a substance in a vessel", name)
             case "vessel" | "reaction" | "label":
                 self._of_kind(node, kind)
+            case "yield":
+                self._of_yield(node)
             case "number":
                 typed = self.type(node)
                 if typed is not None and not typed.plain:

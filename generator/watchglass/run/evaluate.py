@@ -295,29 +295,19 @@ class Evaluator:
         return NotKnown("data")
 
     def _theoretical_yield(self, node: Expression) -> Result:
-        """Mass of the first product from all that is taken of the limiting reactant, fully converted."""
-        from watchglass.run.roles import roles  # noqa: PLC0415 - roles stand above plain values
+        """Mass of a product, named itself or by its reaction, at full conversion of what limits."""
+        from watchglass.run.yields import makers, most_formed  # noqa: PLC0415 - they stand above
 
-        reaction = self.procedure.reactions.get(node.text) if isinstance(node, Name) else None
-        if reaction is None or not reaction.balanced or not reaction.right:
+        name = node.text if isinstance(node, Name | Words) else ""
+        if name not in self.procedure.names and (substance := self.catalogue.find(name)):
+            name = substance.key
+        found = makers(name, self.procedure)
+        if len(found) != 1:
             return NotKnown("data")
-        limiting = next(
-            (
-                r
-                for r in roles(self.procedure, self.usage)
-                if r.reaction == reaction.name and r.limiting
-            ),
-            None,
-        )
-        if limiting is None:
+        formed = most_formed(*found[0], self.procedure, self.usage)
+        if formed is None or formed.mass is None:
             return NotKnown("data")
-        product = reaction.right[0]
-        reactant = next(s for s in reaction.left if s.material == limiting.material)
-        mass = product.formula.molar_mass if product.formula else None
-        if mass is None:
-            return NotKnown("data")
-        turns = limiting.moles / float(reactant.coefficient)
-        return Value(turns * float(product.coefficient) * mass * 1e-3, dim.MASS, limiting.figures)
+        return Value(formed.mass, dim.MASS, formed.figures)
 
 
 def _place(value: Value) -> int | None:

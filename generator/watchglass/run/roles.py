@@ -6,12 +6,14 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
 from watchglass.chemistry.stoichiometry import Reactant, equivalents, limit
+from watchglass.resolve.reactions import same_salt
 from watchglass.run.content import Content, Missing, contents
 from watchglass.run.usage import total_of
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
 
+    from watchglass.base.quantities import Quantity
     from watchglass.resolve import model
     from watchglass.run.usage import Usage
 
@@ -50,6 +52,11 @@ def material_contents(
     if len([t for t in used.totals if t.dimension != dim.COUNT]) > 1:
         return Missing("sum", None)
     return contents(material, total.dimension, (total.low + total.high) / 2, total.figures)
+
+
+def portion_contents(material: model.Material, quantity: Quantity) -> tuple[Content, ...] | Missing:
+    """Work out what one quantity of a material holds; of a range, its middle."""
+    return contents(material, quantity.dimension, quantity.middle, quantity.figures)
 
 
 def roles(procedure: model.Procedure, used: Mapping[str, Usage]) -> tuple[Role, ...]:
@@ -116,4 +123,6 @@ def _held(
     found = material_contents(material, used.get(material.name))
     if not isinstance(found, tuple):
         return None
-    return next((c for c in found if c.substance.key == species.substance.key), None)
+    substance = species.substance
+    exact = next((c for c in found if c.substance.key == substance.key), None)
+    return exact or next((c for c in found if same_salt(c.substance, substance)), None)

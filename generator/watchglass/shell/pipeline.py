@@ -7,19 +7,19 @@ from contextlib import contextmanager
 from pathlib import Path
 from typing import TYPE_CHECKING, NamedTuple
 
-from watchglass.base.findings import Severity
 from watchglass.base.spans import Source
 from watchglass.base.yaml import YamlMapping, read_yaml
 from watchglass.catalogue.catalogue import Catalogue, name_index, shadowed
 from watchglass.catalogue.decode import decode_substances
 from watchglass.catalogue.plausible import differing
 from watchglass.catalogue.ware import decode_stock
-from watchglass.judge.accept import settle
+from watchglass.judge.accept import can_be_accepted, settle
 from watchglass.judge.bench.checks import judge_bench
 from watchglass.judge.bench.run import Run
 from watchglass.judge.case import Case, faulty_body
 from watchglass.judge.checks import judge
 from watchglass.judge.sets import Appointment, judge_set
+from watchglass.judge.stocks import judge_stocks
 from watchglass.read.procedure import read_page, read_procedure
 from watchglass.resolve.laboratory import Laboratory, read_laboratory
 from watchglass.resolve.page import resolve_page
@@ -167,13 +167,14 @@ def _analyse(files: SetFiles, root: Path, scale: float | None) -> Analysis:
     findings = [*files.findings, *found]
     findings += [finding for entry in procedures for finding in entry.findings]
     findings += [finding for entry in pages for finding in entry.findings]
+    findings += judge_stocks(around.catalogue, around.laboratory)
     findings += judge_set(cards, appointments, files.files)
     return Analysis(
         root=root,
         surroundings=around,
         procedures=procedures,
         pages=pages,
-        findings=tuple(findings),
+        findings=tuple(dict.fromkeys(findings)),  # a faulty stock is met at each of its uses
         files=files.files,
     )
 
@@ -348,7 +349,7 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
         case = _run(scaled, around, faulty=faulty)
     found = (*earlier, *judge(case, draft))
     run = None
-    if not any(f.code.severity is Severity.ERROR for f in found):
+    if all(can_be_accepted(f) for f in found):  # else there is no knowing what was meant
         run = _at_the_bench(case, around)
         found = (*found, *judge_bench(run))
     settled = settle(found, procedure.acceptances)

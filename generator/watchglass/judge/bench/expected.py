@@ -17,6 +17,7 @@ from watchglass.base.figures import shown
 from watchglass.base.findings import Finding, Related
 from watchglass.judge.bench.mending import mended_by_strength
 from watchglass.judge.bench.run import Moment, Run, moments
+from watchglass.judge.expected import at_desk
 from watchglass.read.syntax import Name, Words
 from watchglass.read.terms import After, Call, Compare, Held, Within
 from watchglass.resolve import model
@@ -64,7 +65,7 @@ def missed(run: Run) -> tuple[Missed, ...]:
     found = []
     for line in run.case.procedure.expectations:
         expression = line.expression
-        if not isinstance(expression, Compare | Within):
+        if not isinstance(expression, Compare | Within) or at_desk(run.case, line) is not None:
             continue
         for ledger in run.ledgers:
             holds, reached = evaluator(run, ledger).holds(expression)

@@ -10,9 +10,11 @@ from dataclasses import dataclass, field
 from typing import TYPE_CHECKING
 
 from watchglass.base import dimensions as dim
+from watchglass.base.figures import shown
 from watchglass.read.syntax import Name, Words
 from watchglass.read.terms import After, Call, Compare, Expression, Held, Within
 from watchglass.run.bench.asked import SHARE_FIGURES, TITRE_FIGURES, Asked
+from watchglass.run.bench.figures import share_words
 from watchglass.run.evaluate import Evaluator, NotKnown, Result, Value
 
 if TYPE_CHECKING:
@@ -126,6 +128,17 @@ class BenchEvaluator(Evaluator):
             self.why = answer.why
             return NotKnown("bench")
         return Value(answer.value, dimension, figures)
+
+
+def reached_words(value: Value) -> str:
+    """Write what an expectation comes to."""
+    if value.dimension == dim.SHARE:
+        return share_words(value.si)
+    if value.dimension == dim.VOLUME:
+        return f"{shown(value.si * 1e6, value.figures)} mL"
+    if value.dimension == dim.MASS:
+        return f"{shown(value.si * 1e3, value.figures)} g"
+    return shown(value.si, value.figures)
 
 
 def _text(node: Expression) -> str:

@@ -34,6 +34,7 @@ from mkdocs.structure.files import InclusionLevel
 from mkdocs.utils import CountHandler
 
 from watchglass.publish.handbook import EDITIONS
+from watchglass.publish.search import search_files
 from watchglass.shell.pipeline import uncollected
 from watchglass.shell.rendering.full import render
 from watchglass.shell.rendering.tally import Counts
@@ -147,7 +148,13 @@ class HandbookPlugin(BasePlugin[HandbookConfig]):  # type: ignore[no-untyped-cal
         taken = {f.dest_uri: f.src_uri for f in files if f.inclusion not in _LEFT_OUT}
         self._files = [
             HandbookFile(page, config)
-            for page in (pages.start, *pages.lists, *pages.procedures, *pages.pages)
+            for page in (
+                pages.start,
+                *pages.lists,
+                *pages.procedures,
+                *pages.pages,
+                *pages.references,
+            )
         ]
         root = self.given[0].root if self.given else Path(self.config.set)
         pictures = [asset_file(root, *pair, config) for pair in pages.assets]
@@ -187,6 +194,9 @@ class HandbookPlugin(BasePlugin[HandbookConfig]):  # type: ignore[no-untyped-cal
                 (root / file.dest_uri).write_bytes(html.encode())
                 if isinstance(file.page, HandbookEntry):
                     file.page.keep_places(html)
+            for address, text in search_files(pages):
+                (root / address).parent.mkdir(parents=True, exist_ok=True)
+                (root / address).write_bytes(text.encode())
         self.written = len(self._files)
         return env
 

@@ -20,7 +20,9 @@ from watchglass.shell.site.urls import leads_outside, root_of
 if TYPE_CHECKING:
     from collections.abc import Iterable, Sequence
 
-HandbookPage = m.StudentPage | m.InstructorPage | m.OrdinaryPage | m.ListPage | m.StartPage
+HandbookPage = (
+    m.StudentPage | m.InstructorPage | m.OrdinaryPage | m.ListPage | m.StartPage | m.ReferencePage
+)
 START = "index.html"
 NAMED_MOST = 5
 """Pages that the navigation names; more than these fold away under one word."""
@@ -130,7 +132,7 @@ def address_of(page: HandbookPage) -> str:
     match page:
         case m.StudentPage() | m.InstructorPage():
             return page.facts.address
-        case m.OrdinaryPage() | m.ListPage():
+        case m.OrdinaryPage() | m.ListPage() | m.ReferencePage():
             return page.address
         case m.StartPage():
             return START
@@ -141,7 +143,7 @@ def title_of(page: HandbookPage) -> str:
     match page:
         case m.StudentPage() | m.InstructorPage():
             return page.facts.title
-        case m.OrdinaryPage() | m.ListPage() | m.StartPage():
+        case m.OrdinaryPage() | m.ListPage() | m.StartPage() | m.ReferencePage():
             return page.title
 
 
@@ -153,5 +155,7 @@ def _template(page: HandbookPage) -> str:
             return "page.html"
         case m.ListPage():
             return "list.html"
+        case m.ReferencePage():
+            return "reference.html"
         case m.StartPage():
             return "start.html"
