@@ -7,13 +7,13 @@ from typing import TYPE_CHECKING, NamedTuple
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
     from watchglass.base.spans import Span
-    from watchglass.base.yaml import YamlText
+    from watchglass.base.yaml import YamlMapping, YamlText
 
 
 class Stock(NamedTuple):
     """One stock: its `material` is text in the notation of a material, resolved where it is used.
 
-    `density` is that of the solution, as its label has it; `makes` how much is made at a time;
+    `contains` are its parts where it is a mixture, `solvent` what they are dissolved in. `density` is that of the solution, as its label has it; `makes` how much is made at a time;
     `made_from` the key of another stock that it is diluted from, or empty.
     """
 
@@ -28,6 +28,8 @@ class Stock(NamedTuple):
     made_from_span: Span | None = None
     shelf_life: str = ""
     container: str = ""
+    contains: YamlMapping | None = None
+    solvent: YamlText | None = None
 
 
 class Indicator(NamedTuple):

@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base import dimensions as dim
 from watchglass.base.fields import Field, Record, Shape, read_fields
-from watchglass.base.findings import Finding, did_you_mean
+from watchglass.base.findings import Finding, Related, did_you_mean
 from watchglass.base.scan import Fault, Found, scan_quantity
 from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
@@ -40,7 +40,9 @@ INDICATOR_FIELDS: dict[str, Field] = {
 }
 STOCK_FIELDS: dict[str, Field] = {
     "names": Field(Shape.TEXT_OR_LIST, "further names it goes by"),
-    "material": Field(Shape.TEXT, "what it is, as `3.0 M hydrochloric acid`", required=True),
+    "material": Field(Shape.TEXT, "what it is, as `3.0 M hydrochloric acid`"),
+    "contains": Field(Shape.MAPPING, "its parts, as `{hexane: 3 mL, ethyl acetate: 1 mL}`"),
+    "in": Field(Shape.TEXT, "what the parts are dissolved in, with their strengths"),
     "density": Field(Shape.TEXT, "density of the solution, as `1.18 g/mL`"),
     "makes": Field(Shape.TEXT, "how much is made at a time, as `1 L`"),
     "from": Field(Shape.TEXT, "key of the stock that it is diluted from"),
@@ -98,9 +100,26 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
     """Decode one stock solution; its material is resolved where it is used."""
     record, found = read_fields(entry.value, STOCK_FIELDS, "a stock")
     material = record.text("material") if record else None
-    if record is None or material is None:
-        return None, found
+    contains = record.mapping("contains") if record else None
+    if record is None or (material is None and contains is None):
+        missing = record is not None and not found
+        return None, (*found, *((_unsaid(entry),) if missing else ()))
+    if material is None and contains is not None:
+        material = YamlText(", ".join(e.key.text for e in contains), record.keys["contains"])
+    assert material is not None  # noqa: S101 - one of the two is there
     findings, makes = list(found), record.text("makes")
+    if contains is not None and "material" in record.keys:
+        findings.append(
+            Finding(
+                code=codes.FIELD_UNFIT,
+                span=record.keys["contains"],
+                message="`material` and `contains` both say what this stock is",
+                related=(Related(record.keys["material"], "said here"),),
+                help="leave one of the two",
+            )
+        )
+    if (density := record.text("density")) is not None:
+        texts.quantity(density, dim.MASS_CONCENTRATION, findings)
     notes = " ".join(filter(None, (_text(record, "note"), _text(record, "notes"))))
     stock = Stock(
         key=entry.key.text,
@@ -114,8 +133,19 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
         made_from_span=record.keys.get("from"),
         shelf_life=_text(record, "shelf-life"),
         container=_text(record, "container"),
+        contains=contains,
+        solvent=record.text("in"),
     )
     return stock, tuple(findings)
+
+
+def _unsaid(entry: YamlEntry) -> Finding:
+    return Finding(
+        code=codes.FIELD_MISSING,
+        span=entry.key.span,
+        message=f"the stock `{entry.key.text}` does not say what it is",
+        help="add `material: 3.0 M hydrochloric acid`, or `contains:` with its parts",
+    )
 
 
 def _names(record: Record | None) -> tuple[str, ...]:

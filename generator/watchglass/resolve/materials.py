@@ -43,6 +43,7 @@ if TYPE_CHECKING:
     from watchglass.base.spans import Span
     from watchglass.base.yaml import YamlEntry
     from watchglass.catalogue.catalogue import Catalogue
+    from watchglass.catalogue.stocks import Stock
     from watchglass.catalogue.substances import Substance
     from watchglass.resolve.model import SolutionFacts
 
@@ -207,8 +208,7 @@ class MaterialReader:
         text = node.text
         stock = self.catalogue.stocks.get(text) or self.catalogue.stocks.get(text.casefold())
         if stock is not None and stock.key not in seen:
-            composition, _ = self.described(stock.material, seen=(*seen, stock.key))
-            return composition, stock.key
+            return self.of_stock(stock, seen=seen), stock.key
         unknown = Unknown(text, declared=False)
         if saturated := _SATURATED.match(text):
             found = self._substance_in(node, saturated.end())
@@ -234,6 +234,12 @@ class MaterialReader:
         if strength is None or found is None:
             return unknown, ""
         return Solution(strength, *found), ""
+
+    def of_stock(self, stock: Stock, *, seen: tuple[str, ...] = ()) -> Composition:
+        """Read what a stock is: its parts, or its description."""
+        if stock.contains is not None:
+            return self._contains(stock.contains, stock.solvent)
+        return self.described(stock.material, seen=(*seen, stock.key))[0]
 
     def _misspelt_unit(self, text: str, start: int) -> Fault | None:
         """Tell a unit that is none, in `3.0 mollar hydrochloric acid`, from one that is missing."""

@@ -13,8 +13,10 @@ from typing import TYPE_CHECKING, NamedTuple
 from watchglass.base import dimensions as dim
 from watchglass.base.scan import Found, scan_quantity
 from watchglass.base.yaml import YamlText
+from watchglass.catalogue import texts
 from watchglass.catalogue.measuring import nearest, reach
 from watchglass.resolve import model
+from watchglass.resolve.label import density_against_table
 from watchglass.resolve.materials import MaterialReader
 from watchglass.resolve.solutions import facts_of
 from watchglass.run.content import Missing, contents
@@ -155,7 +157,11 @@ def held_in(stock: Stock, catalogue: Catalogue, laboratory: Laboratory) -> HeldI
 def faults_of(stock: Stock, catalogue: Catalogue, laboratory: Laboratory) -> tuple[Finding, ...]:
     """Give what is wrong in the description of a stock."""
     maker = _Maker(catalogue, laboratory)
-    maker.material(stock.material, stock)
+    material = maker.material(stock.material, stock)
+    facts = material.solution
+    if stock.density is not None and facts is not None and facts.source == "given":
+        plain = facts_of(material.composition, None, catalogue)
+        maker.findings += density_against_table(stock.density, facts, plain)
     return tuple(maker.findings)
 
 
@@ -190,13 +196,12 @@ class _Maker:
     def material(self, text: YamlText, stock: Stock | None = None) -> model.Material:
         """Read what a stock or a reagent is; findings about it stand elsewhere."""
         reader = MaterialReader(self.catalogue)
-        seen = (stock.key,) if stock is not None else ()
-        composition, found = reader.described(text, seen=seen)
-        self.findings += found
+        composition = reader.of_stock(stock) if stock is not None else reader.described(text)[0]
+        self.findings += reader.findings
         own = None
         if stock is not None and stock.density is not None:
-            read = scan_quantity(stock.density.text, 0)
-            own = read.quantity.si if isinstance(read, Found) else None
+            read = texts.quantity(stock.density, dim.MASS_CONCENTRATION, self.findings)
+            own = read.middle if read is not None else None
         return model.Material(
             name=text.text,
             written=text.text,

@@ -38,6 +38,7 @@ def schemas() -> dict[str, Schema]:
     """Give every schema by name."""
     substance = _record(decode.FIELDS)
     stock = _record(ware.STOCK_FIELDS)
+    stock["anyOf"] = [{"required": ["material"]}, {"required": ["contains"]}]
     material = {"anyOf": [_TEXT, _record(materials.FIELDS)]}
     reaction = {"anyOf": [_TEXT, _record(reactions.FIELDS)]}
     limits = {
