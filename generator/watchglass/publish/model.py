@@ -10,6 +10,7 @@ from __future__ import annotations
 from dataclasses import dataclass, field
 
 from watchglass.publish.bench import BenchStep  # noqa: TC001 - templates' tests read the types
+from watchglass.publish.shapes import Figure  # noqa: TC001 - likewise
 
 # ---------------------------------------------------------------- words
 
@@ -308,6 +309,7 @@ class StudentPage:
     equipment: tuple[EquipmentRow, ...]
     reactions: tuple[ReactionLine, ...]
     body: tuple[Blocks, ...]
+    flow: tuple[Figure, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -347,6 +349,8 @@ class InstructorPage:
     expectations: tuple[ExpectationLine, ...]
     assumptions: tuple[str, ...]
     bench: tuple[BenchStep, ...] = ()
+    flow: tuple[Figure, ...] = ()
+    plots: tuple[Figure, ...] = ()
 
 
 # ---------------------------------------------------------------- other pages

@@ -13,10 +13,13 @@ from typing import TYPE_CHECKING, assert_never
 
 from watchglass.publish import model as m
 from watchglass.publish.body import text_of
+from watchglass.publish.shapes import ATTRIBUTES, ELEMENTS
 from watchglass.shell.site.urls import harmless, leads_outside, resolved
 
 if TYPE_CHECKING:
     from collections.abc import Iterable
+
+    from watchglass.publish.shapes import Figure, Shape
 
 _SAID = frozenset(("quantity", "vessel", "material", "act", "figure", "step"))
 _PANELS = {"caution": "Caution", "before": "Before the laboratory", "question": "Question"}
@@ -121,6 +124,37 @@ class Writer:
     def _for_instructors(self, what: str) -> None:
         if not self.instructor:
             raise NotForStudents(f"a student page holds {what}")
+
+    # ------------------------------------------------------------------ drawings
+
+    def drawing(self, figure: Figure) -> str:
+        """Write the SVG of a figure, with its title and description first, as readers need them."""
+        svg = figure.drawing
+        name = escape(figure.name)
+        told = (
+            f'<title id="{name}.title">{escape(figure.title)}</title>'
+            f'<desc id="{name}.desc">{escape(figure.description)}</desc>'
+        )
+        inner = "".join([self._shape(child) for child in svg.children])
+        return (
+            f'<svg role="img" aria-labelledby="{name}.title {name}.desc"'
+            f"{self._attributes(svg)}>{told}{inner}</svg>"
+        )
+
+    def _shape(self, drawn: str | Shape) -> str:
+        if isinstance(drawn, str):
+            return escape(drawn)
+        if drawn.element not in ELEMENTS:
+            return ""
+        inner = "".join([self._shape(child) for child in drawn.children])
+        return f"<{drawn.element}{self._attributes(drawn)}>{inner}</{drawn.element}>"
+
+    def _attributes(self, drawn: Shape) -> str:
+        return "".join(
+            f' {name}="{escape(value)}"'
+            for name, value in drawn.attributes
+            if name in ATTRIBUTES and (name != "href" or value.startswith("#"))
+        )
 
     # ------------------------------------------------------------------ blocks
 

@@ -20,6 +20,8 @@ from watchglass.shell.site.urls import leads_outside, root_of
 if TYPE_CHECKING:
     from collections.abc import Iterable, Sequence
 
+    from watchglass.publish.shapes import Figure
+
 HandbookPage = (
     m.StudentPage | m.InstructorPage | m.OrdinaryPage | m.ListPage | m.StartPage | m.ReferencePage
 )
@@ -117,12 +119,16 @@ class Renderer:
         def blocks(models: Iterable[m.Blocks]) -> Markup:
             return Markup(writer.blocks(models))  # noqa: S704 - the writer escapes every word
 
+        def drawing(figure: Figure) -> Markup:
+            return Markup(writer.drawing(figure))  # noqa: S704 - the writer escapes every word
+
         template = self._environment.get_template(_template(page))
         return template.render(
             context_of(self._frame, address),
             page=page,
             words=words,
             blocks=blocks,
+            drawing=drawing,
             extras=page if isinstance(page, m.InstructorPage) else None,
         )
 
