@@ -123,7 +123,7 @@ def test_small_funnel_is_too_full_only_where_gas_comes_off() -> None:
 
     assert finding.code.name == "vessel-too-full"
     assert _line_of(finding).startswith("6. Add {15 mL base -> funnel}")
-    assert "45.0 mL of 60.0 mL" in finding.message
+    assert "45.0 mL of 60 mL" in finding.message
 
 
 def test_shaking_before_the_gas_is_out_closes_it_in() -> None:

@@ -35,6 +35,8 @@ def times(text: str, factor: float, step: float | None = None) -> str:
         ("2–3 mL", 1.5, "3.0–4.5 mL"),
         ("ca. 5 mL", 1 / 3, "ca. 1.7 mL"),
         (">= 10 mL", 3, ">= 30 mL"),
+        ("0–5 mL", 2, "0–10 mL"),
+        ("0.0–2.5 mL", 2, "0.0–5.0 mL"),
         ("2.00 ± 0.05 g", 2, "4.00 ± 0.1 g"),
         ("1.5e-3 mol", 0.01, "1.5 × 10^−5 mol"),
         ("3 drops", 2, "6 drops"),

@@ -4,10 +4,12 @@ from __future__ import annotations
 
 import pytest
 
-from builders import NAMES, faults, judged, only, places, sound, step, student
+from builders import NAMES, faults, judged, only, places, sound, step, student, surroundings, text
+from watchglass.base.spans import Source
 from watchglass.publish.body import text_of
 from watchglass.publish.model import Para, StepList
 from watchglass.resolve import model
+from watchglass.shell.pipeline import analyse_procedure
 
 OWNED = """\
 name: Lower Laboratory
@@ -164,14 +166,53 @@ def test_vessel_is_taken_in_the_smallest_size_owned_that_serves(
     assert size(procedure, name) == wanted
 
 
-def test_vessel_of_a_size_that_is_not_owned_is_told() -> None:
-    front = "materials: {water: water}\nvessels: {funnel: separatory funnel 125 mL}\nscale: 3\n"
-    entry = step("Put {20 mL water -> funnel}.", front=front, files={"laboratory.yml": OWNED})
+FLASK = "materials: {water: water}\nvessels: {flask: volumetric flask 100 mL}\n"
+FLASKS = "glassware:\n  volumetric flask 100 mL: 4\n  volumetric flask 250 mL: 4\n"
+
+
+def test_flask_with_one_mark_in_a_size_that_is_not_owned_is_told() -> None:
+    front = f"{FLASK}scale: 2\n"
+    entry = step("{fill flask with water to mark}.", front=front, files={"laboratory.yml": FLASKS})
 
     finding = only(entry)
     assert finding.code.name == "size-not-owned"
-    assert "375 mL" in finding.message
-    assert "250 mL" in finding.message
+    assert "200 mL" in finding.message
+    assert "100 mL, 250 mL" in finding.message
+
+
+def test_flask_with_one_mark_changes_to_the_size_that_is_owned() -> None:
+    front = f"{FLASK}scale: 2.5\n"
+    entry = step("{fill flask with water to mark}.", front=front, files={"laboratory.yml": FLASKS})
+
+    assert faults(entry) == ()
+    assert size(entry.procedure, "flask") == "250 mL"
+
+
+FUNNEL = "materials: {water: water}\nvessels: {funnel: separatory funnel 125 mL}\n"
+
+
+@pytest.mark.parametrize(
+    ("factor", "volume", "codes"),
+    [("3", "20 mL", []), ("10", "20 mL", []), ("10", "30 mL", ["B120"])],
+)
+def test_other_vessel_is_the_largest_owned_and_told_only_when_it_runs_over(
+    factor: str, volume: str, codes: list[str]
+) -> None:
+    front = f"{FUNNEL}scale: {factor}\n"
+    entry = step(f"Put {{{volume} water -> funnel}}.", front=front, files={"laboratory.yml": OWNED})
+
+    assert size(entry.procedure, "funnel") == "250 mL"
+    assert [f.code.number for f in entry.findings if f.code.number != "N180"] == codes
+
+
+@pytest.mark.parametrize(("asked", "said"), [(None, 0.5), (1.0, 1.0), (2.0, 2.0)])
+def test_factor_asked_for_wins_over_the_one_declared(asked: float | None, said: float) -> None:
+    source = Source.of(
+        "procedures/t-01.md", text("1. Put {15 mL acid -> A}.", f"{NAMES}scale: 0.5\n")
+    )
+    entry = analyse_procedure(source.name, source, surroundings()._replace(scale=asked))
+
+    assert entry.procedure.head.scale == said
 
 
 def test_sizes_made_count_where_the_laboratory_lists_none() -> None:

@@ -3,6 +3,8 @@
 from __future__ import annotations
 
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
 from builders import golden, judged
 from watchglass.base import dimensions as dim
@@ -15,6 +17,19 @@ SI = {dim.MASS: 1e-3, dim.VOLUME: 1e-6, dim.AMOUNT: 1e-3, dim.COUNT: 1.0}
 
 def material(description: str) -> model.Material:
     return judged("1. Here is {x}.", f"materials:\n  x: {description}").procedure.materials["x"]
+
+
+READ = {
+    description: material(description)
+    for description in (
+        "36 % w/w hydrochloric acid",
+        "saturated sodium chloride",
+        "2.0 M sodium hydroxide",
+        "5 % w/w copper(II) sulfate",
+        "70 % v/v ethanol",
+        "{contains: {ethanol: 3 mL, water: 1 mL}}",
+    )
+}
 
 
 def held(description: str, value: float, dimension: dim.Dimension, figures: int = 4) -> object:
@@ -134,6 +149,154 @@ def test_density_says_where_it_is_from(description: str, source: str) -> None:
 
     assert facts is not None
     assert facts.source == source
+
+
+# Each figure worked out by hand: 10 mL of 37 % acid of 1.18 g/mL hold 4.366 g.
+@pytest.mark.parametrize(
+    ("description", "value", "dimension", "key", "grams"),
+    [
+        # a mass of a solution by volume, a volume of one by mass
+        ("0.5 mol/kg sodium chloride", 1029.22, dim.MASS, "sodium-chloride", 29.22),
+        ("70 % v/v ethanol", 100.0, dim.MASS, "ethanol", 62.4),
+        ("{is: 37 % w/w hydrochloric acid, density: 1.18 g/mL}", 10.0, dim.VOLUME,
+         "hydrogen-chloride", 4.366),
+        ("{is: 37 % w/w hydrochloric acid, density: 1.18 g/mL at 25 °C}", 10.0, dim.VOLUME,
+         "hydrogen-chloride", 4.366),
+        ("{is: 10 % w/w benzoic acid in ethanol, density: 0.82 g/mL}", 10.0, dim.VOLUME,
+         "benzoic-acid", 0.82),
+        # two strengths on a label: 11.65 mol/L of 100.45 g/mol
+        ("{is: 70 % w/w perchloric acid, also: 11.65 M}", 10.0, dim.VOLUME, "perchloric-acid",
+         11.703),
+        # a liquid with its own density
+        ("{is: ethyl acetate, density: 0.902 g/mL}", 10.0, dim.VOLUME, "ethyl-acetate", 9.02),
+        # saturated: 52.6 % w/w; a hydrate by what dissolves of its salt, 210 g/L and 286.14/105.99
+        ("saturated potassium carbonate", 10.0, dim.VOLUME, "potassium-carbonate", 8.283),
+        ("saturated potassium carbonate", 10.0, dim.MASS, "potassium-carbonate", 5.26),
+        ("saturated sodium carbonate decahydrate", 10.0, dim.VOLUME,
+         "sodium-carbonate-decahydrate", 5.669),
+        # mixtures: of 75 mL of 0.7903 and 25 mL of 0.9982 g/mL, ethanol is 70.4 % by mass
+        ("{contains: {ethanol: 3 mL, water: 1 mL}}", 10.0, dim.MASS, "ethanol", 7.037),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}}", 10.0, dim.VOLUME, "ethanol", 5.927),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}, density: 0.860 g/mL}", 10.0, dim.VOLUME,
+         "ethanol", 6.052),
+        ("{contains: {ethanol: 1 g, water: 1 g}}", 10.0, dim.VOLUME, "ethanol", 4.411),
+        ("{contains: {sodium-chloride: 5.0 % w/w, potassium-chloride: 2.0 % w/w}, in: water,"
+         " density: 1.047 g/mL}", 10.0, dim.VOLUME, "sodium-chloride", 0.5235),
+    ],
+)  # fmt: skip
+def test_mass_follows_whichever_way_a_material_is_measured(
+    description: str, value: float, dimension: dim.Dimension, key: str, grams: float
+) -> None:
+    found = held(description, value, dimension)
+    assert isinstance(found, tuple)
+    (content,) = (c for c in found if c.substance.key == key)
+
+    assert content.mass * 1e3 == pytest.approx(grams, rel=1e-3)
+
+
+@pytest.mark.parametrize(
+    ("description", "dimension", "assumptions"),
+    [
+        ("sodium chloride", dim.MASS, ()),
+        ("ethanol", dim.VOLUME, ()),
+        ("3.0 M hydrochloric acid", dim.VOLUME, ()),
+        ("36 % w/w hydrochloric acid", dim.MASS, ()),
+        ("36 % w/w hydrochloric acid", dim.AMOUNT, ()),
+        ("{is: 36 % w/w hydrochloric acid, density: 1.18 g/mL}", dim.VOLUME, ()),
+        ("36 % w/w hydrochloric acid", dim.VOLUME,
+         ("density of 36 % w/w hydrochloric acid 1.179 g/mL, from the table of aqueous solutions at 20 °C",)),
+        ("3.0 M hydrochloric acid", dim.MASS,
+         ("density of 3.0 M hydrochloric acid 1.049 g/mL, from the table of aqueous solutions at 20 °C",)),
+        ("5 % w/w copper(II) sulfate", dim.VOLUME,
+         ("5 % w/w copper(II) sulfate taken to be as dense as water",)),
+        ("saturated sodium chloride", dim.VOLUME, ("solubility 316 g/L at 20 °C of sodium chloride",)),
+        ("saturated benzoic acid", dim.MASS,
+         ("solubility 2.9 g/L at 25 °C of benzoic acid", "saturated benzoic acid taken to be as dense as water")),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}}", dim.VOLUME, ("volumes of ethanol and water added up",)),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}}", dim.MASS, ()),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}, density: 0.86 g/mL}", dim.VOLUME, ()),
+        ("{contains: {hexane: 2 g, toluene: 1 g, ethanol: 1 g}}", dim.VOLUME,
+         ("volumes of hexane, toluene and ethanol added up",)),
+        ("{contains: {ethanol: 1 mL}}", dim.VOLUME, ()),
+    ],
+)  # fmt: skip
+def test_result_names_what_it_rests_on(
+    description: str, dimension: dim.Dimension, assumptions: tuple[str, ...]
+) -> None:
+    found = held(description, 10.0, dimension)
+
+    assert isinstance(found, tuple)
+    assert {content.assumptions for content in found} == {assumptions}
+
+
+@pytest.mark.parametrize(
+    ("description", "figures"),
+    [
+        ("36.00 % w/w hydrochloric acid", 4),
+        ("{is: 36.00 % w/w hydrochloric acid, density: 1.2 g/mL}", 2),
+        ("{is: 36.00 % w/w hydrochloric acid, density: 1.18 g/mL}", 3),
+        ("5.00 % w/w copper(II) sulfate", 2),
+        ("saturated sodium chloride", 3),
+        ("{contains: {ethanol: 3 mL, water: 1 mL}}", 2),
+    ],
+)
+def test_density_between_limits_the_figures(description: str, figures: int) -> None:
+    found = held(description, 10.0, dim.VOLUME, figures=6)
+
+    assert isinstance(found, tuple)
+    assert {content.figures for content in found} == {figures}
+
+
+@given(
+    st.sampled_from(sorted(READ)),
+    st.floats(min_value=1e-9, max_value=1.0),
+    st.floats(min_value=0.01, max_value=100.0),
+)
+def test_so_many_times_the_volume_holds_so_many_times_as_much(
+    description: str, volume: float, times: float
+) -> None:
+    one, many = (contents(READ[description], dim.VOLUME, v, 4) for v in (volume, volume * times))
+    assert isinstance(one, tuple)
+    assert isinstance(many, tuple)
+
+    assert [c.mass for c in many] == pytest.approx([c.mass * times for c in one], rel=1e-9)
+
+
+@given(
+    st.sampled_from(["36 % w/w hydrochloric acid", "2.0 M sodium hydroxide", "70 % v/v ethanol"]),
+    st.floats(min_value=1e-9, max_value=1.0),
+)
+def test_volume_and_the_mass_it_has_hold_the_same(description: str, volume: float) -> None:
+    of = READ[description]
+    assert of.solution is not None
+    assert of.solution.density is not None
+    by_volume = contents(of, dim.VOLUME, volume, 4)
+    by_mass = contents(of, dim.MASS, volume * of.solution.density, 4)
+    assert isinstance(by_volume, tuple)
+    assert isinstance(by_mass, tuple)
+
+    # A volume of spirit counts by the catalogue's ethanol, its mass by that of the table: 0.13 %.
+    assert by_volume[0].moles == pytest.approx(by_mass[0].moles, rel=2e-3)
+
+
+@pytest.mark.parametrize(
+    ("description", "what"),
+    [
+        ("saturated ethanol", "solubility"),  # miscible: there is no such thing
+        ("saturated copper(II) sulfate", "solution density"),
+        ("saturated citric acid", "solution density"),  # beyond the table
+        ("90 % w/w phosphoric acid", "solution density"),
+        ("{contains: {sodium-chloride: 5 % w/w, potassium-chloride: 2 % w/w}, in: water}",
+         "solution density"),
+        ("3 % w/w benzoic acid in ethanol", "solution density"),  # dilute, but not in water
+        ("{contains: {benzocaine: 1 g, ethanol: 1 g}}", "density"),
+    ],
+)  # fmt: skip
+def test_volume_without_a_density_stays_unknown(description: str, what: str) -> None:
+    found = held(description, 10.0, dim.VOLUME)
+
+    assert isinstance(found, Missing)
+    assert found.what == what
 
 
 def test_what_rests_on_an_assumed_density_shows_two_figures() -> None:

@@ -96,6 +96,8 @@ def said(expression: str, unit: str = "", entry: Judged = SETTING) -> str:
         ('molar-mass("CuSO4·5H2O")', "", "249.68 g/mol"),
         ('molar-mass("hydrochloric acid")', "", "36.458 g/mol"),
         ("density(ether)", "", "0.7408 g/mL"),
+        ("density(acid)", "", "1.049 g/mL"),  # of the solution: 3.0 M, 10.4 % by mass
+        ("mass(acid)", "", "16 g"),
         ("melts(benzocaine)", "", "89.6 °C"),
         ("theoretical-yield(neutral)", "g", "2.6 g"),
     ],
@@ -117,7 +119,6 @@ def test_figure_has_value_unit_and_no_more_figures_than_go_in(
         ("recovered(salt in B) / theoretical-yield(neutral)", "bench"),
         ("moles(base)", "bench"),  # two portions: which is meant, the bench will tell
         ("mass(A)", "data"),
-        ("mass(acid)", "data"),  # a solution's density is not known
         ("volume(salt)", "data"),
         ("strength(salt)", "data"),
         ("density(salt)", "data"),
@@ -182,3 +183,52 @@ def test_yield_is_that_of_the_product_named_first() -> None:
 )
 def test_value_is_given_in_a_unit_that_fits(value: Value, unit: str, number: float | None) -> None:
     assert in_unit(value, unit) == (pytest.approx(number) if number is not None else None)
+
+
+SOLUTIONS = step(
+    "Do {10.00 mL strong -> A; 10.00 g brine -> B; 5.00 mL spirit -> A; 5.00 mL tincture -> B}.",
+    "Do {5.00 mL syrup -> A; 5.00 mL labelled -> A; 10.00 mL solvents -> B}.",
+    front="materials:\n  strong: 36.0 % w/w hydrochloric acid\n  brine: saturated sodium chloride\n"
+    "  spirit: 50 % v/v ethanol\n  tincture: 10 % w/w benzoic acid in ethanol\n"
+    "  syrup: 40 % w/w sucrose\n"
+    "  labelled: {is: 10 % w/w benzoic acid in ethanol, density: 0.820 g/mL}\n"
+    "  solvents: {contains: {ethanol: 3 mL, water: 1 mL}, density: 0.860 g/mL}\n"
+    "vessels: {A: beaker 100 mL, B: beaker 100 mL}",
+)
+
+
+@pytest.mark.parametrize(
+    ("expression", "figure"),
+    [
+        ("strength(strong)", "11.6 mol/L"),  # 0.360 × 1179.1 g/L / 36.458 g/mol
+        ("strength(brine)", "5.41 mol/L"),
+        ("strength(spirit)", "8.6 mol/L"),  # 395 g/L / 46.07 g/mol
+        ("strength(labelled)", "0.67 mol/L"),  # 82.0 g/L / 122.12 g/mol
+        ("density(strong)", "1.179 g/mL"),
+        ("density(spirit)", "0.9304 g/mL"),  # never that of pure ethanol
+        ("density(labelled)", "0.820 g/mL"),
+        ("density(solvents)", "0.860 g/mL"),
+        ("mass(strong)", "11.79 g"),
+        ("volume(brine)", "8.336 mL"),
+        ("mass(labelled)", "4.10 g"),
+        ("moles(strong)", "116 mmol"),
+    ],
+)
+def test_figure_of_a_solution_goes_by_its_own_density(expression: str, figure: str) -> None:
+    assert said(expression, entry=SOLUTIONS) == figure
+
+
+@pytest.mark.parametrize(
+    "expression",
+    ["strength(tincture)", "density(tincture)", "mass(tincture)", "strength(syrup)", "mass(syrup)"],
+)
+def test_solution_without_a_density_has_no_such_figure(expression: str) -> None:
+    assert evaluated(expression, SOLUTIONS) == NotKnown("data")
+
+
+def test_mass_of_a_solution_is_by_its_tabulated_density() -> None:
+    # 15 mL of 3.0 M hydrochloric acid, 1.0492 g/mL (10.4 % w/w, the table between 10 % and 15 %).
+    found = evaluated("mass(acid)")
+
+    assert isinstance(found, Value)
+    assert found.si == pytest.approx(15e-6 * 1049.2, rel=2e-3)

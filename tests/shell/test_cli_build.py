@@ -32,9 +32,14 @@ def building(
     asked: list[object] = []
 
     def build_site(
-        site: Path, *, editions: tuple[str, ...], out: Path | None, strict: bool
+        site: Path,
+        *,
+        editions: tuple[str, ...],
+        out: Path | None,
+        scale: float | None,
+        strict: bool,
     ) -> object:
-        asked.append((site, editions, out, strict))
+        asked.append((site, editions, out, scale, strict))
         written = () if failed else tuple(site / "public" / e / "index.html" for e in editions)
         return SimpleNamespace(findings=findings, written=written, failed=failed, pages=3)
 
@@ -60,12 +65,13 @@ def test_each_edition_is_told_where_it_can_be_opened(
 
 
 @pytest.mark.parametrize(
-    ("options", "editions", "out", "strict"),
+    ("options", "editions", "out", "scale", "strict"),
     [
-        ([], ("student", "instructor"), None, False),
-        (["--edition", "student"], ("student",), None, False),
-        (["--edition", "instructor"], ("instructor",), None, False),
-        (["--strict", "--out", "there"], ("student", "instructor"), Path("there"), True),
+        ([], ("student", "instructor"), None, None, False),
+        (["--edition", "student"], ("student",), None, None, False),
+        (["--edition", "instructor"], ("instructor",), None, None, False),
+        (["--strict", "--out", "there"], ("student", "instructor"), Path("there"), None, True),
+        (["--scale", "0.5"], ("student", "instructor"), None, 0.5, False),
     ],
 )
 def test_options_are_handed_on(
@@ -74,6 +80,7 @@ def test_options_are_handed_on(
     options: list[str],
     editions: tuple[str, ...],
     out: Path | None,
+    scale: float | None,
     *,
     strict: bool,
 ) -> None:
@@ -81,7 +88,7 @@ def test_options_are_handed_on(
 
     main(["build", str(site), *options])
 
-    assert asked == [(site, editions, out, strict)]
+    assert asked == [(site, editions, out, scale, strict)]
 
 
 def test_failed_build_says_so_and_names_no_place(

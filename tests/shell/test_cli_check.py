@@ -197,3 +197,55 @@ def test_file_names_are_shown_harmless(capsys: pytest.CaptureFixture[str], tmp_p
 
     assert main(["check", str(path)]) == 2
     assert "a<U+001B>[2J.txt` is no procedure" in capsys.readouterr().err
+
+
+def test_two_hundred_are_shown_in_full(
+    monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str], draft: str
+) -> None:
+    judged(monkeypatch, tuple(finding("⟦a⟧", message=f"fault {n}") for n in range(201)))
+
+    assert main(["check", draft]) == 1
+    assert capsys.readouterr().out.endswith(
+        "1 more finding not shown; `--limit 0` shows all\n\n201 errors in 1 file\n"
+    )
+
+
+def test_limit_of_nought_shows_all(
+    monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str], draft: str
+) -> None:
+    judged(monkeypatch, tuple(finding("⟦a⟧", message=f"fault {n}") for n in range(201)))
+    main(["check", "--limit", "0", draft])
+
+    assert capsys.readouterr().out.count("error[B120]") == 201
+
+
+@pytest.mark.parametrize(
+    ("form", "sign"),
+    [("line", "error[B120 "), ("json", '"B120"'), ("sarif", '"ruleId": "B120"'), ("github", "::e")],
+)
+def test_other_programs_are_given_all(
+    monkeypatch: pytest.MonkeyPatch,
+    capsys: pytest.CaptureFixture[str],
+    draft: str,
+    form: str,
+    sign: str,
+) -> None:
+    judged(monkeypatch, tuple(finding("⟦a⟧", message=f"fault {n}") for n in range(9)))
+    main(["check", "--limit", "2", "--format", form, draft])
+
+    assert capsys.readouterr().out.count(sign) == 9
+
+
+def test_accepted_findings_reach_the_log_with_their_reason(
+    tmp_path: Path, capsys: pytest.CaptureFixture[str]
+) -> None:
+    draft = tmp_path / "a.md"
+    draft.write_text(
+        "---\ntitle: A\ncode: A-1\nmaterials: {water: water, salt: sodium chloride}\n"
+        "vessels: {A: beaker 50 mL}\naccept: {material-unused: shown at the desk only}\n---\n\n"
+        "1. Put {5 mL water -> A} into {A}.\n"
+    )
+
+    assert main(["check", "--format", "sarif", str(draft)]) == 0
+    (found,) = json.loads(capsys.readouterr().out)["runs"][0]["results"]
+    assert found["suppressions"][0]["justification"] == "shown at the desk only"

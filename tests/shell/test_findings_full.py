@@ -9,6 +9,7 @@ import pytest
 
 from shell.findings_builder import NOT_RUN, OVERFILLED, UNUSED, finding, marked
 from watchglass.base.findings import Edit, Finding, Related
+from watchglass.base.spans import Lines
 from watchglass.shell.rendering.cells import text_width
 from watchglass.shell.rendering.full import render
 from watchglass.shell.rendering.style import Style
@@ -182,3 +183,63 @@ def test_a_span_beyond_its_text_is_drawn_in() -> None:
     text = render([Finding(code=OVERFILLED, span=source.span(1, 99), message="m")], style=PLAIN)
 
     assert "   1 | ab\n     |  ^\n" in text
+
+
+def several(number: int) -> list[Finding]:
+    """Make findings on one line, each at a place of its own, half of them warnings."""
+    source = marked("x " * number).source
+    return [
+        Finding(
+            code=UNUSED if n % 2 else OVERFILLED,
+            span=source.span(2 * n, 2 * n + 1),
+            message=f"fault {n}",
+        )
+        for n in range(number)
+    ]
+
+
+def test_no_more_than_the_limit_are_shown_and_all_are_counted() -> None:
+    text = render(several(5), style=PLAIN, limit=2)
+
+    assert "fault 1" in text
+    assert "fault 2" not in text
+    assert text.endswith(
+        "\n\n3 more findings not shown; `--limit 0` shows all\n\n3 errors, 2 warnings in 1 file\n"
+    )
+
+
+def test_one_more_is_one_finding() -> None:
+    assert "1 more finding not shown" in render(several(3), style=PLAIN, limit=2)
+
+
+def test_as_many_as_the_limit_are_all_shown() -> None:
+    assert "not shown" not in render(several(2), style=PLAIN, limit=2)
+
+
+def test_repeats_do_not_count_towards_the_limit() -> None:
+    assert "not shown" not in render(several(2) * 3, style=PLAIN, limit=2)
+
+
+def test_without_a_limit_all_are_shown() -> None:
+    text = render(several(300), style=PLAIN)
+
+    assert "fault 299" in text
+    assert "not shown" not in text
+
+
+def test_very_long_line_is_taken_out_once_for_all_its_findings(
+    monkeypatch: pytest.MonkeyPatch,
+) -> None:
+    """Else printing would grow with the square of a file without line ends."""
+    taken = 0
+    plain = Lines.line
+
+    def counted(table: Lines, number: int) -> str:
+        nonlocal taken
+        taken += 1
+        return plain(table, number)
+
+    monkeypatch.setattr(Lines, "line", counted)
+    render(several(100), style=PLAIN)
+
+    assert taken == 1

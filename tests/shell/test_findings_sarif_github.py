@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import json
+import re
 from functools import cache
 from pathlib import Path
 from typing import TYPE_CHECKING, Any
@@ -11,6 +12,7 @@ import jsonschema
 import pytest
 
 from shell.findings_builder import NOT_RUN, UNUSED, finding
+from watchglass import __version__
 from watchglass.shell.rendering import github, sarif
 from watchglass.shell.rendering.style import Style
 
@@ -51,6 +53,49 @@ def test_result_names_rule_level_and_place() -> None:
     assert (found["ruleId"], found["level"]) == ("B120", "error")
     assert region == {"startLine": 1, "startColumn": 8, "endLine": 1, "endColumn": 32}
     assert found["relatedLocations"][0]["message"]["text"] == "50 mL was already in it"
+
+
+def test_columns_count_code_points() -> None:
+    region = result(finding("\t水 𝒳 ⟦a⟧"))["locations"][0]["physicalLocation"]["region"]
+
+    assert log()["columnKind"] == "unicodeCodePoints"
+    assert (region["startColumn"], region["endColumn"]) == (6, 7)
+
+
+def test_tool_is_named_with_its_version() -> None:
+    driver = log()["tool"]["driver"]
+
+    assert (driver["name"], driver["version"]) == ("watchglass", __version__)
+
+
+def test_braces_are_doubled_since_single_ones_are_placeholders() -> None:
+    """SARIF 2.1.0, 3.11.5: within message strings `{` and `}` are written `{{` and `}}`."""
+    found = finding(LEAK, message="`{0}` is no mark", related=("see {x}",))
+
+    assert result(found)["message"]["text"] == "`{{0}}` is no mark"
+    assert result(found)["relatedLocations"][0]["message"]["text"] == "see {{x}}"
+
+
+def test_pages_double_their_braces_too() -> None:
+    (rule,) = log(finding(LEAK))["tool"]["driver"]["rules"]
+    texts = [rule["help"]["text"], rule["help"]["markdown"], rule["fullDescription"]["text"]]
+
+    assert "{{" in rule["help"]["markdown"]
+    assert [re.findall(r"(?<!\{)\{(?:\{\{)*(?!\{)", text) for text in texts] == [[], [], []]
+
+
+def test_author_s_text_makes_no_link() -> None:
+    """SARIF 2.1.0, 3.11.6: `[words](1)` in a message would lead to a related location."""
+    text = result(finding(LEAK, message="`[acid](1)` is no mark"))["message"]["text"]
+
+    assert text == r"`[acid\](1)` is no mark"
+
+
+def test_fix_is_written_as_it_is() -> None:
+    change = result(finding(LEAK, fix="{5 mL}"))["fixes"][0]["artifactChanges"][0]
+
+    assert change["replacements"][0]["insertedContent"]["text"] == "{5 mL}"
+    assert change["replacements"][0]["deletedRegion"]["startColumn"] == 8
 
 
 def test_help_stands_with_the_message() -> None:
@@ -98,6 +143,38 @@ def test_path_is_an_address() -> None:
     assert uri["artifactLocation"]["uri"] == "mein%20Satz/oc-04%20%C3%A4.md"
 
 
+def test_path_from_the_root_is_a_file_address() -> None:
+    place = result(finding(LEAK, name="/srv/set a/oc-04.md"))["locations"][0]["physicalLocation"]
+
+    assert place["artifactLocation"] == {"uri": "file:///srv/set%20a/oc-04.md"}
+
+
+def test_path_on_a_drive_is_a_file_address() -> None:
+    place = result(finding(LEAK, name="C:/set/oc-04.md"))["locations"][0]["physicalLocation"]
+
+    assert place["artifactLocation"] == {"uri": "file:///C:/set/oc-04.md"}
+
+
+def test_file_name_of_another_encoding_keeps_its_bytes() -> None:
+    place = result(finding(LEAK, name="s\udce4tze/a.md"))["locations"][0]["physicalLocation"]
+
+    assert place["artifactLocation"]["uri"] == "s%E4tze/a.md"
+
+
+def test_same_text_twice_gives_two_fingerprints() -> None:
+    first, second = log(finding("⟦bas⟧ and bas"), finding("bas and ⟦bas⟧"))["results"]
+
+    assert first["partialFingerprints"] != second["partialFingerprints"]
+
+
+def test_fingerprint_of_the_second_stays_when_lines_move() -> None:
+    def second(before: str) -> Any:
+        found = finding(f"{before}⟦bas⟧ and bas"), finding(f"{before}bas and ⟦bas⟧")
+        return log(*found)["results"][1]["partialFingerprints"]
+
+    assert second("") == second("\n\n")
+
+
 def test_fingerprint_stays_when_lines_move() -> None:
     moved = result(finding("\n\n" + LEAK))["partialFingerprints"]
 
@@ -125,7 +202,7 @@ def test_errors_come_first_and_the_tally_last() -> None:
     ).splitlines()
 
     assert [line.split(" ")[0] for line in lines[:3]] == ["::error", "::warning", "::notice"]
-    assert lines[3] == "1 errors, 1 warnings, 1 notes"
+    assert lines[3] == "1 error, 1 warning, 1 note in 1 file"
 
 
 @pytest.mark.parametrize(
@@ -143,6 +220,25 @@ def test_path_cannot_end_its_property() -> None:
     line = github.render([finding(LEAK, name="a,b:c.md")], style=STYLE)
 
     assert "file=a%2Cb%3Ac.md,line=" in line
+
+
+def test_columns_are_left_out_over_several_lines() -> None:
+    line = github.render([finding("⟦a\nb⟧")], style=STYLE)
+
+    assert line.startswith("::error file=procedures/oc-04.md,line=1,endLine=2,title=")
+
+
+def test_author_s_escape_sequences_do_not_reach_the_log() -> None:
+    line = github.render([finding(LEAK, message="\x1b[2J\x9b\u202e", name="\x1b.md")], style=STYLE)
+
+    assert "\x1b" not in line
+    assert "<U+001B>[2J<U+009B><U+202E>" in line
+
+
+def test_carriage_return_cannot_end_a_line() -> None:
+    line = github.render([finding(LEAK, message="a\rb\r\nc", help=None)], style=STYLE)
+
+    assert "::a%0Db%0D%0Ac\n" in line
 
 
 def test_nothing_found_prints_nothing_for_the_forge() -> None:

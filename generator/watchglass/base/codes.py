@@ -176,7 +176,7 @@ ONE_MARK_OTHER_VOLUME = Code(
     "B103", "one-mark-other-volume", _WARNING, "ware with one mark is to give another volume"
 )
 SIZE_NOT_OWNED = Code(
-    "B110", "size-not-owned", _WARNING, "a scaled vessel is owned in no such size"
+    "B110", "size-not-owned", _WARNING, "scaled measuring ware is owned in no such size"
 )
 SCALED_BEYOND_MEASURE = Code(
     "B111", "scaled-beyond-measure", _WARNING, "a scaled amount is too small to be measured"

@@ -17,6 +17,7 @@ from watchglass.base.yaml import YamlList, YamlMapping, YamlNode, YamlText
 if TYPE_CHECKING:
     from collections.abc import Mapping
 
+    from watchglass.base.dimensions import Dimension
     from watchglass.base.spans import Span
 
 
@@ -47,12 +48,28 @@ class Field(NamedTuple):
     Attributes:
         shape: What it takes.
         about: What it is for, in a line; shown by schemas.
-        required: Whether it may be left out.
+        required: Whether it must be there and say something.
+        words: The only words that its text may be; beside `quantity`, words that may stand instead.
+        pattern: What its whole text must match: a regular expression of ASCII that Python and
+            JSON Schema read alike, without anchors.
+        quantity: The dimensions of the quantity that its text is; without a plain number among
+            them the text has a unit.
+        each: What stands under each of the author's own keys, where it takes a mapping.
+        fields: The fields of its mapping, where they are known ones.
+
+    `words`, `pattern` and `quantity` hold for each entry of a list, too. They, `each` and `fields`
+    are what schemas say beyond the reader here: the texts themselves are read, and their faults
+    found, by the decoder of each file, from the same constants.
     """
 
     shape: Shape
     about: str
     required: bool = False
+    words: tuple[str, ...] = ()
+    pattern: str = ""
+    quantity: tuple[Dimension, ...] = ()
+    each: Field | None = None
+    fields: Mapping[str, Field] | None = None
 
 
 class Record(NamedTuple):

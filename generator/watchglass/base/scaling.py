@@ -120,6 +120,8 @@ def _alike(low: Number, high: Number) -> tuple[Number, Number]:
 
 
 def _to_place(number: Number, place: int) -> Number:
+    if number.value == 0:
+        return number  # nought is nought to every place
     figures = max(number.figures, floor(log10(abs(number.value)) + 1e-9) - place + 1)
     if figures > MOST_FIGURES:
         return number

@@ -12,35 +12,61 @@ from watchglass.base.yaml import YamlEntry, YamlMapping, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.plausible import implausible
 from watchglass.catalogue.substances import At, Substance
-from watchglass.chemistry.cas import check_digit_holds
+from watchglass.chemistry.cas import FORM, check_digit_holds
 from watchglass.chemistry.formulas import Formula, FormulaFault, parse_formula
 from watchglass.chemistry.smiles import SmilesFault, count_atoms
 
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
 
+_STATES = ("solid", "liquid", "gas")
 FIELDS: dict[str, Field] = {
     "names": Field(Shape.TEXT_OR_LIST, "what it is called; the first is shown", required=True),
-    "cas": Field(Shape.TEXT, "CAS registry number; its check digit is verified"),
+    "cas": Field(Shape.TEXT, "CAS registry number; its check digit is verified", pattern=FORM),
     "formula": Field(Shape.TEXT, "formula, as `CuSO4·5H2O` or `SO4^2-`"),
     "smiles": Field(Shape.TEXT, "structure; its atoms must be those of the formula"),
-    "state": Field(Shape.TEXT, "solid, liquid or gas at 20 °C"),
-    "density": Field(Shape.TEXT, "density of the liquid, as `0.789 g/mL at 20 °C`"),
-    "melts": Field(Shape.TEXT, "melting point, as `122 °C`"),
-    "boils": Field(Shape.TEXT, "boiling point at 1 atm"),
-    "flash": Field(Shape.TEXT, "flash point"),
-    "acid": Field(Shape.TEXT_OR_LIST, "pKa of each acidic group, 25 °C, in water"),
-    "base": Field(Shape.TEXT_OR_LIST, "pKa of each conjugate acid, 25 °C, in water"),
-    "log-p": Field(Shape.TEXT, "octanol–water partition of the neutral form"),
-    "partition": Field(Shape.MAPPING, "measured ratio organic/water by solvent"),
-    "soluble": Field(Shape.MAPPING, "what dissolves in a solvent, or `miscible`"),
+    "state": Field(Shape.TEXT, "solid, liquid or gas at 20 °C", words=_STATES),
+    "density": Field(
+        Shape.TEXT,
+        "density of the liquid, as `0.789 g/mL at 20 °C`",
+        quantity=(dim.MASS_CONCENTRATION,),
+    ),
+    "melts": Field(Shape.TEXT, "melting point, as `122 °C`", quantity=(dim.TEMPERATURE,)),
+    "boils": Field(Shape.TEXT, "boiling point at 1 atm", quantity=(dim.TEMPERATURE,)),
+    "flash": Field(Shape.TEXT, "flash point", quantity=(dim.TEMPERATURE,)),
+    "acid": Field(
+        Shape.TEXT_OR_LIST, "pKa of each acidic group, 25 °C, in water", quantity=(dim.NUMBER,)
+    ),
+    "base": Field(
+        Shape.TEXT_OR_LIST, "pKa of each conjugate acid, 25 °C, in water", quantity=(dim.NUMBER,)
+    ),
+    "log-p": Field(
+        Shape.TEXT, "octanol–water partition of the neutral form", quantity=(dim.NUMBER,)
+    ),
+    "partition": Field(
+        Shape.MAPPING,
+        "measured ratio organic/water by solvent",
+        each=Field(Shape.TEXT, "organic over water", quantity=(dim.NUMBER,)),
+    ),
+    "soluble": Field(
+        Shape.MAPPING,
+        "what dissolves in a solvent, or `miscible`",
+        each=Field(Shape.TEXT_OR_LIST, "as `12 g/L at 100 °C`, or `miscible`"),
+    ),
     "hydrate-of": Field(Shape.TEXT, "key of the anhydrous substance"),
     "groups": Field(Shape.TEXT_OR_LIST, "functional groups in plain words"),
-    "ghs": Field(Shape.MAPPING, "classification as declared by the supplier, with its source"),
-    "sources": Field(Shape.TEXT_OR_MAPPING, "where each value is from"),
+    "ghs": Field(
+        Shape.MAPPING,
+        "classification as declared by the supplier, with its source",
+        each=Field(Shape.TEXT_OR_LIST, "classes, statements, source"),
+    ),
+    "sources": Field(
+        Shape.TEXT_OR_MAPPING,
+        "where each value is from",
+        each=Field(Shape.TEXT, "where it is from"),
+    ),
 }
 _SOURCED = ("density", "melts", "boils", "flash", "acid", "base", "log-p", "partition", "soluble")
-_STATES = ("solid", "liquid", "gas")
 
 
 def decode_substance(entry: YamlEntry) -> tuple[Substance | None, tuple[Finding, ...]]:

@@ -13,8 +13,10 @@ if TYPE_CHECKING:
 class Stock(NamedTuple):
     """One stock: its `material` is text in the notation of a material, resolved where it is used.
 
-    `contains` are its parts where it is a mixture, `solvent` what they are dissolved in. `density` is that of the solution, as its label has it; `makes` how much is made at a time;
-    `made_from` the key of another stock that it is diluted from, or empty.
+    `contains` are its parts where it is a mixture, `solvent` what they are dissolved in. `density`
+    is that of the solution and `also` its strength in another measure, as its label has them;
+    `makes` is how much is made at a time; `made_from` the key of another stock that it is diluted
+    from, or empty.
     """
 
     key: str
@@ -30,6 +32,7 @@ class Stock(NamedTuple):
     container: str = ""
     contains: YamlMapping | None = None
     solvent: YamlText | None = None
+    also: YamlText | None = None
 
 
 class Indicator(NamedTuple):

@@ -41,10 +41,17 @@ INDICATOR_FIELDS: dict[str, Field] = {
 STOCK_FIELDS: dict[str, Field] = {
     "names": Field(Shape.TEXT_OR_LIST, "further names it goes by"),
     "material": Field(Shape.TEXT, "what it is, as `3.0 M hydrochloric acid`"),
-    "contains": Field(Shape.MAPPING, "its parts, as `{hexane: 3 mL, ethyl acetate: 1 mL}`"),
+    "contains": Field(
+        Shape.MAPPING,
+        "its parts, as `{hexane: 3 mL, ethyl acetate: 1 mL}`",
+        each=Field(Shape.TEXT, "its part, or its strength", required=True),
+    ),
     "in": Field(Shape.TEXT, "what the parts are dissolved in, with their strengths"),
-    "density": Field(Shape.TEXT, "density of the solution, as `1.18 g/mL`"),
-    "makes": Field(Shape.TEXT, "how much is made at a time, as `1 L`"),
+    "density": Field(
+        Shape.TEXT, "density of the solution, as `1.18 g/mL`", quantity=(dim.MASS_CONCENTRATION,)
+    ),
+    "also": Field(Shape.TEXT, "the strength again, as its label has it in other units: `12 M`"),
+    "makes": Field(Shape.TEXT, "how much is made at a time, as `1 L`", quantity=(dim.VOLUME,)),
     "from": Field(Shape.TEXT, "key of the stock that it is diluted from"),
     "shelf-life": Field(Shape.TEXT, "how long it keeps"),
     "container": Field(Shape.TEXT, "what it is kept in"),
@@ -119,7 +126,7 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
             )
         )
     if (density := record.text("density")) is not None:
-        texts.quantity(density, dim.MASS_CONCENTRATION, findings)
+        texts.measured(density, dim.MASS_CONCENTRATION, findings)
     notes = " ".join(filter(None, (_text(record, "note"), _text(record, "notes"))))
     stock = Stock(
         key=entry.key.text,
@@ -135,6 +142,7 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
         container=_text(record, "container"),
         contains=contains,
         solvent=record.text("in"),
+        also=record.text("also"),
     )
     return stock, tuple(findings)
 

@@ -9,7 +9,8 @@ from __future__ import annotations
 import re
 
 # Expressions are compiled where they are used, and `re` keeps them: start-up is felt.
-_FORM = r"([1-9][0-9]{1,6})-([0-9]{2})-([0-9])"
+#: What such a number looks like, its check digit left aside.
+FORM = r"([1-9][0-9]{1,6})-([0-9]{2})-([0-9])"
 
 
 def check_digit(text: str) -> int | None:
@@ -25,7 +26,7 @@ def check_digit(text: str) -> int | None:
     Returns:
         The digit, 0 to 9, or None where the text has not the form of a CAS number.
     """
-    form = re.compile(_FORM).fullmatch(text)
+    form = re.compile(FORM).fullmatch(text)
     if form is None:
         return None
     digits = form[1] + form[2]

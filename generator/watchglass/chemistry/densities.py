@@ -1,8 +1,10 @@
 """Densities of aqueous solutions: mass fraction to density, and what follows from the two.
 
-The specific volume is taken as a parabola in the mass fraction through the three nearest points of
-a table: it is straight where volumes add up, and bends a little where they do not. Points left out
-one by one come back within 0.5 %, most within 0.1 % (tests/outside).
+The specific volume is a smooth curve in the mass fraction: straight where volumes add up, bent a
+little where they do not. Between two points of a table it goes over from the parabola through the
+point before and these two into that through these two and the point after, so that neither it nor
+its slope jumps. Points left out one by one come back within 0.3 %, half of them within 0.03 %
+(tests/outside); so the curve between is better than that.
 """
 
 from __future__ import annotations
@@ -43,6 +45,9 @@ def density_at(table: DensityTable, fraction: float) -> float | None:
     Returns:
         Density, kg/m3; None beyond the table.
 
+    Source:
+        Two parabolas blended along the interval (A. W. Overhauser, 1968), here of 1/ρ over w.
+
     >>> table = DensityTable(((0.0, 998.2), (0.1, 1047.6), (0.2, 1098.0)), ("", "R", "R"))
     >>> round(density_at(table, 0.15), 1), density_at(table, 0.3)
     (1072.7, None)
@@ -50,20 +55,19 @@ def density_at(table: DensityTable, fraction: float) -> float | None:
     if not 0.0 <= fraction <= table.most * (1 + 1e-9):
         return None
     points = table.points
-    at = next(i for i, (high, _) in enumerate(points) if fraction <= high * (1 + 1e-9))
-    if len(points) < 3:
-        first, second = points[0], points[-1]
-        return _through(fraction, (first, second))
-    start = max(at - 1, 0)
-    if start + 2 >= len(points):
-        start = len(points) - 3
-    elif start > 0 and fraction - points[start - 1][0] < points[start + 2][0] - fraction:
-        start -= 1
-    return _through(fraction, points[start : start + 3])
+    at = next(i for i, (high, _) in enumerate(points) if i and fraction <= high * (1 + 1e-9))
+    before, after = points[max(at - 2, 0) : at + 1], points[at - 1 : at + 2]
+    (low, _), (high, _) = points[at - 1], points[at]
+    along = (fraction - low) / (high - low)
+    if len(before) < 3:
+        before = after
+    elif len(after) < 3:
+        after = before
+    return 1.0 / ((1 - along) * _volume(fraction, before) + along * _volume(fraction, after))
 
 
-def _through(fraction: float, points: Sequence[tuple[float, float]]) -> float:
-    """Give the density at a fraction by Lagrange's formula for the specific volume."""
+def _volume(fraction: float, points: Sequence[tuple[float, float]]) -> float:
+    """Give the specific volume at a fraction by Lagrange's formula through points, m3/kg."""
     volume = 0.0
     for place, density in points:
         weight = 1.0
@@ -71,7 +75,7 @@ def _through(fraction: float, points: Sequence[tuple[float, float]]) -> float:
             if other != place:
                 weight *= (fraction - other) / (place - other)
         volume += weight / density
-    return 1.0 / volume
+    return volume
 
 
 def fraction_of_concentration(

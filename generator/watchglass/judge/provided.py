@@ -79,9 +79,10 @@ def _incomparable(material: model.Material, used: Usage) -> Iterator[Finding]:
         return
     if isinstance(material.composition, model.Unknown):
         return
-    density = None
-    if isinstance(material.composition, model.Pure) and material.composition.substance.density:
-        density = material.composition.substance.density.value.si
+    density = material.solution.density if material.solution is not None else None
+    composition = material.composition
+    if density is None and isinstance(composition, model.Pure) and composition.substance.density:
+        density = composition.substance.density.value.si
     if density is None:
         if not _no_density(material):  # that is a finding of its own
             yield Finding(
@@ -134,6 +135,8 @@ def volume_without_density(case: Case) -> Iterator[Finding]:
 
 
 def _no_density(material: model.Material) -> str:
+    if material.solution is not None and material.solution.density is not None:
+        return ""
     match material.composition:
         case model.Pure(substance) if substance.density is None and substance.state != "gas":
             what = (
@@ -144,7 +147,9 @@ def _no_density(material: model.Material) -> str:
                 if substance.state == "solid"
                 else what
             )
-        case model.Mixture(_, basis, _) if basis in ("amount", "mass"):
+        case model.Mixture(parts, basis, _) if basis in ("amount", "mass"):
+            if all(part.substance.density for part in parts):
+                return ""  # liquids: their volumes are added up
             return "a mixture by parts is weighed: its density is not known"
         case _:
             return ""

@@ -241,6 +241,7 @@ class ReagentRow:
         equivalents: One entry a reaction: (reaction's name or empty, figure, limiting).
         strength: Strength, density or composition.
         provided: What a station is handed.
+        rests_on: What the amount rests on beside what is written, each a clause.
     """
 
     name: tuple[Words, ...]
@@ -253,6 +254,7 @@ class ReagentRow:
     equivalents: tuple[tuple[str, str, bool], ...]
     strength: tuple[Words, ...]
     provided: tuple[Words, ...]
+    rests_on: tuple[str, ...] = ()
 
     @property
     def limiting(self) -> bool:
@@ -296,6 +298,7 @@ class Facts:
     outline: tuple[tuple[int, str, str], ...]  # level, id, text
     previous: PageLink | None
     following: PageLink | None
+    scale: str = ""  # `0.5`: what every amount was multiplied by; empty for the size as written
     lang: str = "en"
 
 

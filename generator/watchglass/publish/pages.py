@@ -5,6 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 from typing import TYPE_CHECKING
 
+from watchglass.base.figures import shown
 from watchglass.base.spans import Lines
 from watchglass.publish import model as m
 from watchglass.publish.bench import MODEL, bench_steps
@@ -17,7 +18,7 @@ from watchglass.resolve import model
 from watchglass.run.bench.evaluator import BenchEvaluator, reached_words
 from watchglass.run.bench.positions import layer_positions
 from watchglass.run.evaluate import Evaluator, NotKnown
-from watchglass.run.roles import roles
+from watchglass.run.roles import material_contents, roles
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
@@ -64,6 +65,7 @@ def _facts(case: Case, place: Neighbours, outline: list[tuple[int, str, str]]) -
         outline=tuple(outline),
         previous=place.previous,
         following=place.following,
+        scale="" if head.scale == 1.0 else shown(head.scale, 4),
     )
 
 
@@ -164,10 +166,10 @@ def _assumptions(case: Case, run: BenchRun | None) -> tuple[str, ...]:
     if run is not None:
         found.append(MODEL)
     for name, material in case.procedure.materials.items():
-        facts = material.solution
-        if facts is not None and facts.source == "water":
-            found.append(f"{name}: taken to be as dense as water, since no table has its density.")
-    return tuple(found)
+        held = material_contents(material, case.usage.get(name))
+        for content in held if isinstance(held, tuple) else ():
+            found += [f"{name}: {words}." for words in content.assumptions]
+    return tuple(dict.fromkeys(found))
 
 
 def _finding(finding: Finding, lines: Lines, reason: str) -> m.FindingLine:

@@ -62,6 +62,7 @@ def _material(
             equivalents=() if mixture else _equivalents(found, several=several),
             strength=_strength(material),
             provided=_provided(material),
+            rests_on=contents[0].assumptions if isinstance(contents, tuple) and amount else (),
         )
     ]
     if mixture and isinstance(contents, tuple):
@@ -88,6 +89,7 @@ def _component(content: Content, found: list[Role], several: bool) -> m.ReagentR
         equivalents=_equivalents(found, several=several),
         strength=(),
         provided=(),
+        rests_on=content.assumptions,
     )
 
 
@@ -198,6 +200,9 @@ def _strength(material: model.Material) -> tuple[m.Words, ...]:
             return (*quantity_words(strength.quantity), *in_)
         case model.Saturated():
             return (m.Run("saturated"),)
+        case model.Pure() if material.solution is not None and material.solution.density:
+            density = shown(material.solution.density / 1000, material.solution.figures)
+            return (*value_words(density, "g/mL"), m.Run(" as given"))
         case model.Pure(substance) if substance.density is not None:
             at = substance.density
             tail = (m.Run(" at "), *quantity_words(at.temperature)) if at.temperature else ()

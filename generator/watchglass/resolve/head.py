@@ -11,36 +11,70 @@ from watchglass.base.fields import Field, Record, Shape
 from watchglass.base.findings import Finding, did_you_mean
 from watchglass.base.yaml import YamlText
 from watchglass.catalogue import texts
+from watchglass.resolve import materials, reactions
 from watchglass.resolve.model import Acceptance, Head
 
 if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
     from watchglass.base.spans import Span
 
+SHOWN = ("adjust-volumes", "yield", "components")
+_ADDRESS = re.compile(r"[A-Za-z0-9][A-Za-z0-9-]{0,39}")
+_MATERIAL = Field(
+    Shape.TEXT_OR_MAPPING,
+    "what it is, as `3.0 M hydrochloric acid`",
+    required=True,
+    fields=materials.FIELDS,
+)
+_VESSEL = Field(
+    Shape.TEXT_OR_MAPPING,
+    "type and size, as `conical flask 100 mL`; or a family by numbers",
+    required=True,
+    each=Field(Shape.TEXT, "type and size of these numbers", required=True),
+)
+_REACTION = Field(
+    Shape.TEXT_OR_MAPPING,
+    "the equation, or fields with it",
+    required=True,
+    fields=reactions.FIELDS,
+)
 FIELDS: dict[str, Field] = {
     "title": Field(Shape.TEXT, "the procedure's title", required=True),
     "code": Field(
-        Shape.TEXT, "its code, unique in the set: its address in the handbook", required=True
+        Shape.TEXT,
+        "its code, unique in the set: its address in the handbook",
+        required=True,
+        pattern=_ADDRESS.pattern,
     ),
     "course": Field(Shape.TEXT, "the course it belongs to"),
     "revision": Field(Shape.TEXT, "number and date of the revision"),
-    "time": Field(Shape.TEXT_OR_LIST, "time of each period, as `165 min`"),
+    "time": Field(Shape.TEXT_OR_LIST, "time of each period, as `165 min`", quantity=(dim.TIME,)),
     "group": Field(Shape.TEXT, "who shares a station, as `2 students`"),
     "after": Field(Shape.TEXT_OR_LIST, "codes of procedures that come before"),
     "references": Field(Shape.TEXT_OR_LIST, "books and articles it rests on"),
     "read": Field(Shape.TEXT_OR_LIST, "what to read before"),
-    "materials": Field(Shape.MAPPING, "local names of materials with what they are"),
-    "vessels": Field(Shape.MAPPING, "local names of vessels with type and size"),
-    "equipment": Field(Shape.MAPPING, "what is neither vessel nor material"),
-    "reactions": Field(Shape.MAPPING, "reactions by name"),
-    "scale": Field(Shape.TEXT, "multiplies every extensive quantity"),
+    "materials": Field(
+        Shape.MAPPING, "local names of materials with what they are", each=_MATERIAL
+    ),
+    "vessels": Field(Shape.MAPPING, "local names of vessels with type and size", each=_VESSEL),
+    "equipment": Field(
+        Shape.MAPPING, "what is neither vessel nor material", each=Field(Shape.TEXT, "what it is")
+    ),
+    "reactions": Field(Shape.MAPPING, "reactions by name", each=_REACTION),
+    "scale": Field(Shape.TEXT, "multiplies every extensive quantity", quantity=(dim.NUMBER,)),
     "expect": Field(Shape.TEXT_OR_LIST, "what the experiment is designed to give"),
-    "accept": Field(Shape.MAPPING, "findings looked at and accepted, each with its reason"),
-    "intended": Field(Shape.MAPPING, "planned reactions, each with its reason and controls"),
-    "show": Field(Shape.TEXT_OR_LIST, "what students see beyond the default"),
+    "accept": Field(
+        Shape.MAPPING,
+        "findings looked at and accepted, each with its reason",
+        each=Field(Shape.TEXT, "why it is sound all the same", required=True),
+    ),
+    "intended": Field(
+        Shape.MAPPING,
+        "planned reactions, each with its reason and controls",
+        each=Field(Shape.TEXT, "the reason, and the controls taken", required=True),
+    ),
+    "show": Field(Shape.TEXT_OR_LIST, "what students see beyond the default", words=SHOWN),
 }
-SHOWN = ("adjust-volumes", "yield", "components")
-_ADDRESS = re.compile(r"[A-Za-z0-9][A-Za-z0-9-]{0,39}")
 
 
 def read_head(record: Record, findings: list[Finding]) -> Head:

@@ -14,6 +14,7 @@ from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.streams import STREAMS
 from watchglass.catalogue.ware import read_measures, read_vessel
+from watchglass.resolve.thresholds import FIELDS as LIMITS
 from watchglass.resolve.thresholds import THRESHOLDS, read_thresholds
 
 if TYPE_CHECKING:
@@ -23,22 +24,46 @@ if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
     from watchglass.catalogue.glassware import GlasswareType, VesselType
 
+_COUNT = re.compile(r"[0-9]{1,6}")
+_MEASURE: dict[str, Field] = {
+    "size": Field(Shape.TEXT, "what one of them holds", quantity=(dim.VOLUME,)),
+    "plural": Field(Shape.TEXT_OR_LIST, "words for several, where an `s` is not enough"),
+}
 FIELDS: dict[str, Field] = {
     "name": Field(Shape.TEXT, "name of the laboratory"),
     "institution": Field(Shape.TEXT, "the college or school"),
-    "stations": Field(Shape.TEXT, "how many stations there are"),
-    "spare": Field(Shape.TEXT, "share prepared beyond what the stations need, as `10 %`"),
-    "temperature": Field(Shape.TEXT, "temperature of the room"),
-    "balance": Field(Shape.TEXT, "finest step of the balances, as `0.01 g`"),
-    "glassware": Field(Shape.MAPPING, "what is owned: `conical flask 100 mL: 60`"),
+    "stations": Field(Shape.TEXT, "how many stations there are", pattern=_COUNT.pattern),
+    "spare": Field(
+        Shape.TEXT, "share prepared beyond what the stations need, as `10 %`", quantity=(dim.SHARE,)
+    ),
+    "temperature": Field(Shape.TEXT, "temperature of the room", quantity=(dim.TEMPERATURE,)),
+    "balance": Field(Shape.TEXT, "finest step of the balances, as `0.01 g`", quantity=(dim.MASS,)),
+    "glassware": Field(
+        Shape.MAPPING,
+        "what is owned: `conical flask 100 mL: 60`",
+        each=Field(Shape.TEXT, "how many there are", pattern=_COUNT.pattern),
+    ),
     "reagents": Field(Shape.TEXT_OR_LIST, "what the store holds: `37 % w/w hydrochloric acid`"),
-    "measures": Field(Shape.MAPPING, "countable measures with their size, as `drop: 0.05 mL`"),
-    "baths": Field(Shape.MAPPING, "baths by name with their temperature"),
-    "thresholds": Field(Shape.MAPPING, "limits of the checks that differ here"),
-    "waste": Field(Shape.MAPPING, "waste streams by name with what goes into them"),
+    "measures": Field(
+        Shape.MAPPING,
+        "countable measures with their size, as `drop: 0.05 mL`",
+        each=Field(
+            Shape.TEXT_OR_MAPPING, "what one of them holds", quantity=(dim.VOLUME,), fields=_MEASURE
+        ),
+    ),
+    "baths": Field(
+        Shape.MAPPING,
+        "baths by name with their temperature",
+        each=Field(Shape.TEXT, "its temperature"),
+    ),
+    "thresholds": Field(Shape.MAPPING, "limits of the checks that differ here", fields=LIMITS),
+    "waste": Field(
+        Shape.MAPPING,
+        "waste streams by name with what goes into them",
+        each=Field(Shape.TEXT_OR_LIST, "what goes into it"),
+    ),
     "rules": Field(Shape.TEXT_OR_LIST, "local rules, in words"),
 }
-_COUNT = re.compile(r"[0-9]{1,6}")
 #: Baths every laboratory has. Common practice, no source.
 BATHS = ("ice", "ice-salt", "water-bath", "oil-bath", "sand-bath", "steam-bath", "heating-mantle")
 

@@ -35,7 +35,6 @@ from watchglass.resolve.model import (
     Strength,
     Unknown,
 )
-from watchglass.resolve.solutions import facts_of
 
 if TYPE_CHECKING:
     from watchglass.base.findings import Code
@@ -45,28 +44,43 @@ if TYPE_CHECKING:
     from watchglass.catalogue.catalogue import Catalogue
     from watchglass.catalogue.stocks import Stock
     from watchglass.catalogue.substances import Substance
-    from watchglass.resolve.model import SolutionFacts
 
+_HANDED = (dim.MASS, dim.VOLUME, dim.AMOUNT, dim.COUNT)
+_PART = Field(
+    Shape.TEXT,
+    "its part in the ratio, or its strength",
+    required=True,
+    quantity=(dim.AMOUNT, dim.MASS, dim.VOLUME, *label.STRENGTHS),
+)
 FIELDS: dict[str, Field] = {
-    "contains": Field(Shape.MAPPING, "substances with their ratio, or strengths with `in:`"),
+    "contains": Field(
+        Shape.MAPPING, "substances with their ratio, or strengths with `in:`", each=_PART
+    ),
     "in": Field(Shape.TEXT, "the solvent of what it contains"),
-    "density": Field(Shape.TEXT, "density of the solution, as its label has it: `1.18 g/mL`"),
-    "also": Field(Shape.TEXT, "the strength again, as its label has it in other units: `12 M`"),
-    "provided": Field(Shape.TEXT, "what a station is handed, as `0.900 g`"),
-    "composition": Field(Shape.TEXT, "`unknown` where nobody can say what is in it"),
+    "density": Field(
+        Shape.TEXT,
+        "its density, as its label has it: `1.18 g/mL`",
+        quantity=(dim.MASS_CONCENTRATION,),
+    ),
+    "also": Field(
+        Shape.TEXT,
+        "the strength again, as its label has it in other units: `12 M`",
+        quantity=label.STRENGTHS,
+    ),
+    "provided": Field(Shape.TEXT, "what a station is handed, as `0.900 g`", quantity=_HANDED),
+    "composition": Field(
+        Shape.TEXT, "`unknown` where nobody can say what is in it", words=("unknown",)
+    ),
     "is": Field(Shape.TEXT, "what it is, in words or as a material"),
     "from": Field(Shape.TEXT, "code of the procedure whose product it is"),
     "vessel": Field(Shape.TEXT, "how that product comes, as `tared`"),
-    "one-of": Field(Shape.MAPPING, "candidates by letter; students see the station's code only"),
+    "one-of": Field(
+        Shape.MAPPING,
+        "candidates by letter; students see the station's code only",
+        each=Field(Shape.TEXT, "the substance", required=True),
+    ),
     "as": Field(Shape.TEXT, "strength and solvent of the sample, as `1 % w/v in ethanol`"),
 }
-_STRENGTHS = (
-    dim.CONCENTRATION,
-    dim.MASS_CONCENTRATION,
-    dim.MASS_FRACTION,
-    dim.VOLUME_FRACTION,
-    dim.MOLALITY,
-)
 _BASES = {dim.AMOUNT: "amount", dim.MASS: "mass", dim.VOLUME: "volume"}
 _FOR_CLASS = re.compile(r"\s+for the class\s*$")
 _SATURATED = re.compile(r"saturated\s+(?:aqueous\s+)?")
@@ -85,32 +99,18 @@ class MaterialReader:
     def read(self, entry: YamlEntry) -> Material:
         """Read one entry of `materials:`; what cannot be read is unknown, with a finding."""
         material = self._read(entry)
-        facts = facts_of(material.composition, self._own_density(entry, material), self.catalogue)
-        if facts is None:
-            return material
-        self._label(entry, material, facts)
-        return material._replace(solution=facts)
-
-    def _own_density(self, entry: YamlEntry, material: Material) -> float | None:
-        """Give the density that stands with the material, or with the stock it is, kg/m3."""
-        node = entry.value.get("density") if isinstance(entry.value, YamlMapping) else None
-        if node is None and material.stock:
-            node = self.catalogue.stocks[material.stock.casefold()].density
-        if not isinstance(node, YamlText):
-            return None
-        quantity = texts.quantity(node, dim.MASS_CONCENTRATION, self.findings)
-        return quantity.middle if quantity is not None else None
-
-    def _label(self, entry: YamlEntry, material: Material, facts: SolutionFacts) -> None:
-        """Hold what a label says twice to itself, and its density to the table."""
-        if not isinstance(entry.value, YamlMapping):
-            return
-        density, also = entry.value.get("density"), entry.value.get("also")
-        if isinstance(density, YamlText) and facts.source == "given":
-            plain = facts_of(material.composition, None, self.catalogue)
-            self.findings += label.density_against_table(density, facts, plain)
-        if isinstance(also, YamlText):
-            self.findings += label.strengths_against_each_other(also, material, facts)
+        mapping = entry.value if isinstance(entry.value, YamlMapping) else None
+        stock = self.catalogue.stocks.get(material.stock.casefold()) if material.stock else None
+        density = _text(mapping, "density") or (stock.density if stock is not None else None)
+        also = _text(mapping, "also") or (stock.also if stock is not None else None)
+        beside = label.read_label(density, also, self.findings)
+        if mapping is not None:
+            own = label.read_label(_text(mapping, "density"), _text(mapping, "also"), [])
+            written = material.written or material.name
+            self.findings += label.faults_of_label(
+                own, written, material.composition, self.catalogue
+            )
+        return material._replace(solution=beside.facts(material.composition, self.catalogue))
 
     def _read(self, entry: YamlEntry) -> Material:
         name, value = entry.key.text, entry.value
@@ -263,7 +263,7 @@ class MaterialReader:
 
     def _strength(self, node: YamlText, quantity: Quantity) -> Strength | None:
         span = node.part(0, len(quantity.text))
-        if quantity.dimension in _STRENGTHS:
+        if quantity.dimension in label.STRENGTHS:
             if (
                 quantity.dimension in (dim.MASS_FRACTION, dim.VOLUME_FRACTION)
                 and quantity.si_high > 1
@@ -473,7 +473,13 @@ class MaterialReader:
         self.findings.append(Finding(code=code, span=span, message=message, help=help_))
 
 
+def _text(mapping: YamlMapping | None, field: str) -> YamlText | None:
+    """Give a field's text where there is one; a value of another kind is reported elsewhere."""
+    node = mapping.get(field) if mapping is not None else None
+    return node if isinstance(node, YamlText) and node.text.strip() else None
+
+
 def _strength_basis(quantity: Quantity) -> str | None:
-    if quantity.dimension in _STRENGTHS and quantity.kind is not Kind.BOUND:
+    if quantity.dimension in label.STRENGTHS and quantity.kind is not Kind.BOUND:
         return "strength"
     return None

@@ -112,12 +112,16 @@ class SolutionFacts(NamedTuple):
         per_volume: Mass of solute over volume of solution, kg/m3, or None.
         source: Where the density is from: `given`, `table`, `water` (a dilute solution taken to be
             as dense as water), or empty.
+        figures: Significant figures that the density is good for.
+        solubility: Of a saturated solution: what dissolves, in the catalogue's words.
     """
 
     density: float | None
     fraction: float | None
     per_volume: float | None
     source: str
+    figures: int = 4
+    solubility: str = ""
 
 
 class Material(NamedTuple):
@@ -131,7 +135,7 @@ class Material(NamedTuple):
         provided_span: Where that stands.
         for_class: Whether `provided` is for the whole class.
         stock: Key of the stock it is, or empty.
-        solution: What is known of it as a solution; None for what is none.
+        solution: What is known of it as a solution, or a density given with it; else None.
         span: Its name in the front matter.
         value_span: Its description there.
     """

@@ -44,8 +44,15 @@ if TYPE_CHECKING:
 FIELDS: dict[str, Field] = {
     "equation": Field(Shape.TEXT, "the equation, by catalogue names or formulas", required=True),
     "limiting": Field(Shape.TEXT, "local name of the material that limits it"),
-    "conversion": Field(Shape.TEXT, "share of the limiting reactant that reacts, as `80 %`"),
-    "heat": Field(Shape.TEXT, "heat of reaction per mole of limiting reactant, or `unknown`"),
+    "conversion": Field(
+        Shape.TEXT, "share of the limiting reactant that reacts, as `80 %`", quantity=(dim.SHARE,)
+    ),
+    "heat": Field(
+        Shape.TEXT,
+        "heat of reaction per mole of limiting reactant, or `unknown`",
+        words=("unknown",),
+        quantity=(dim.MOLAR_ENERGY,),
+    ),
 }
 
 

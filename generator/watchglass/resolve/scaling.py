@@ -11,6 +11,7 @@ save where it states a portion once more (`{0.65 g acid -> A} ({5.3 mmol})`).
 from __future__ import annotations
 
 from dataclasses import dataclass, field, replace
+from math import inf
 from typing import TYPE_CHECKING, TypeVar
 
 from watchglass.base import codes
@@ -36,6 +37,10 @@ if TYPE_CHECKING:
 
 #: Clauses whose quantity goes with the size of the batch.
 _EXTENSIVE_CLAUSES = frozenset(("with", "giving", "leaving"))
+#: Two sizes that differ by less are one [-].
+_SAME = 1e-6
+#: Sizes that a finding names.
+_NAMED = 4
 #: Rounding beyond this is worth a word to the author [-].
 _CHANGED = 0.02
 
@@ -58,7 +63,7 @@ def rescale(
         are not owned in the size needed, amounts that can no longer be measured.
     """
     if factor == 1.0:
-        return procedure, ()
+        return replace(procedure, head=procedure.head._replace(scale=1.0)), ()
     beside = frozenset(one.span.start for one in stated(procedure.body, catalogue.measures))
     scaler = _Scaler(factor, procedure, catalogue, laboratory, beside)
     vessels = {name: scaler.vessel(vessel) for name, vessel in procedure.vessels.items()}
@@ -143,21 +148,41 @@ class _Scaler:
         return material._replace(provided=self.quantity(material.provided, material.provided_span))
 
     def vessel(self, vessel: model.Vessel) -> model.Vessel:
-        """Take the smallest size owned that holds as much more as is charged more."""
+        """Take the smallest size owned that holds as much more as is charged more.
+
+        Where none is so large it is the largest: whether what comes into it has room is for the
+        bench to say. Ware with one mark has to be of just the size: where there is none, that is
+        reported, and it is taken to be of that size. What delivers is filled again.
+        """
         type_ = vessel.type
         if type_ is None or type_.size is None or type_.size.dimension != dim.VOLUME:
             return vessel
-        needed = type_.size.si * self.factor
+        needed = scaled(type_.size, self.factor).quantity
         sizes = sorted({size.si: size for size in self._sizes(type_)}.items())
-        fitting = [size for si, size in sizes if si >= needed * (1 - 1e-6)]
-        if self.factor < 1 and type_.size.si < (fitting[0].si if fitting else 1e9):
-            fitting = [type_.size]  # what the author has serves a smaller batch, too
+        if self._one_mark(type_):
+            fitting = [size for si, size in sizes if abs(si - needed.si) <= _SAME * needed.si]
+        else:
+            fitting = [size for si, size in sizes if si >= needed.si * (1 - _SAME)]
+            if self.factor < 1 and type_.size.si < (fitting[0].si if fitting else inf):
+                fitting = [type_.size]  # what the author has serves a smaller batch, too
+            if not fitting:
+                largest = [size for si, size in sizes if si > type_.size.si]
+                delivers = type_.type.measures == "delivers"
+                fitting = [type_.size] if delivers or not largest else largest[-1:]
         if not fitting:
-            if type_.type.measures != "delivers":  # what delivers is filled again
-                self._not_owned(vessel, type_, sizes[-1][1] if sizes else type_.size)
-            return vessel
-        written = vessel.written.replace(type_.size.text, fitting[0].text, 1)
-        return vessel._replace(type=type_._replace(size=fitting[0]), written=written)
+            self._not_owned(vessel, type_, needed, [size for _, size in sizes])
+        size = fitting[0] if fitting else needed
+        written = vessel.written.replace(type_.size.text, size.text, 1)
+        return vessel._replace(type=type_._replace(size=size), written=written)
+
+    def _one_mark(self, type_: VesselType) -> bool:
+        """Tell whether a vessel measures one volume only: a volumetric flask, a pipette with one mark."""
+        if not type_.type.measures:
+            return False
+        from watchglass.catalogue.measuring import reach  # noqa: PLC0415 - its tables are read when asked
+
+        found = reach(type_)
+        return found is not None and found.fixed
 
     def _sizes(self, type_: VesselType) -> Iterator[Quantity]:
         """Give the sizes of a type that the laboratory owns; those made, where it lists none."""
@@ -171,18 +196,20 @@ class _Scaler:
                 if isinstance(read, Found):
                     yield read.quantity
 
-    def _not_owned(self, vessel: model.Vessel, type_: VesselType, largest: Quantity) -> None:
-        size = type_.size
-        if size is None or not self._used(vessel):
+    def _not_owned(
+        self, vessel: model.Vessel, type_: VesselType, needed: Quantity, sizes: list[Quantity]
+    ) -> None:
+        if not self._used(vessel):
             return
-        needed = scaled(size, self.factor).quantity.text
+        there = ", ".join(size.text for size in sizes[-_NAMED:]) if sizes else ""
         self.findings.append(
             Finding(
                 code=codes.SIZE_NOT_OWNED,
                 span=vessel.span,
                 message=f"scaled by {self.factor:.4g}, `{vessel.name}` has to be a"
-                f" {type_.written} of {needed}; the largest there is holds {largest.text}",
-                help="scale by less, do the step in portions, or list the larger size under"
+                f" {type_.written} of {needed.text}; "
+                + (f"there is {there}" if there else "none is owned in any size"),
+                help="scale by another factor, do the step in portions, or list the size under"
                 " `glassware:` in laboratory.yml",
             )
         )

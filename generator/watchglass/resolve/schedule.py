@@ -14,17 +14,19 @@ from watchglass.catalogue import texts
 if TYPE_CHECKING:
     from watchglass.base.spans import Span
 
+_COUNT = re.compile(r"[0-9]{1,5}")
 FIELDS: dict[str, Field] = {
-    "week": Field(Shape.TEXT, "week of the term, a whole number", required=True),
+    "week": Field(
+        Shape.TEXT, "week of the term, a whole number", required=True, pattern=_COUNT.pattern
+    ),
     "procedure": Field(
         Shape.TEXT_OR_LIST, "code of the procedure, or a list of codes", required=True
     ),
     "course": Field(Shape.TEXT, "the course"),
     "sections": Field(Shape.TEXT_OR_LIST, "when it is run, one entry a section"),
-    "stations": Field(Shape.TEXT, "stations laid out for one section"),
+    "stations": Field(Shape.TEXT, "stations laid out for one section", pattern=_COUNT.pattern),
     "note": Field(Shape.TEXT, "a remark"),
 }
-_COUNT = re.compile(r"[0-9]{1,5}")
 
 
 class Slot(NamedTuple):

@@ -10,6 +10,7 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base import dimensions as dim
+from watchglass.base.fields import Field, Shape
 from watchglass.base.findings import Finding, did_you_mean
 from watchglass.base.yaml import YamlText
 from watchglass.catalogue import texts
@@ -84,6 +85,10 @@ THRESHOLDS: Mapping[str, Threshold] = {
     "concentrated-base": Threshold(
         dim.CONCENTRATION, 10000.0, "strength from which water is not poured into a base", _PRACTICE
     ),
+}
+FIELDS: dict[str, Field] = {
+    name: Field(Shape.TEXT, f"{limit.words}; {limit.source}", quantity=(limit.dimension,))
+    for name, limit in THRESHOLDS.items()
 }
 
 

@@ -24,6 +24,7 @@ if TYPE_CHECKING:
     from collections.abc import Mapping
 
     from watchglass.base.dimensions import Dimension
+    from watchglass.base.quantities import Quantity
     from watchglass.catalogue.catalogue import Catalogue
     from watchglass.catalogue.substances import Substance
     from watchglass.run.usage import Usage
@@ -209,6 +210,11 @@ class Evaluator:
         return Value(mass * 1e-3, dim.MOLAR_MASS, CATALOGUE_FIGURES)
 
     def _property(self, name: str, thing: Expression) -> Result:
+        material = self.procedure.materials.get(thing.text) if isinstance(thing, Name) else None
+        if name == "density" and material is not None:
+            whole = _density(material)
+            if whole is not None or not isinstance(material.composition, model.Pure):
+                return whole or NotKnown("data")  # never that of what is dissolved in it
         substance = self._substance(thing)
         if substance is None:
             return NotKnown("data")
@@ -264,8 +270,8 @@ class Evaluator:
             return Value(value, quantity.dimension, quantity.figures)
         if name == "strength":
             return self._strength(material)
-        if name == "mass" and isinstance(material.composition, model.Solution | model.Saturated):
-            return NotKnown("data")  # of the solution, not of what is dissolved in it
+        if name != "moles" and isinstance(material.composition, model.Solution | model.Saturated):
+            return _of_solution(name, material, value, quantity)  # not of what is dissolved in it
         found = contents(material, quantity.dimension, value, quantity.figures)
         if not isinstance(found, tuple) or len(found) != 1:
             return NotKnown("data")
@@ -282,17 +288,13 @@ class Evaluator:
         return NotKnown("data")
 
     def _strength(self, material: model.Material) -> Result:
-        match material.composition:
-            case model.Solution(strength, solute, _):
-                quantity = strength.quantity
-                if quantity.dimension == dim.CONCENTRATION:
-                    return Value(quantity.middle, dim.CONCENTRATION, quantity.figures)
-                if quantity.dimension == dim.MASS_CONCENTRATION and solute.molar_mass:
-                    amount = quantity.middle / (solute.molar_mass * 1e-3)
-                    return Value(amount, dim.CONCENTRATION, quantity.figures)
-            case _:
-                pass
-        return NotKnown("data")
+        """Give the amount of solute in a volume of a solution, by its density where that is needed."""
+        if not isinstance(material.composition, model.Solution | model.Saturated):
+            return NotKnown("data")
+        held = contents(material, dim.VOLUME, 1.0, MOST_FIGURES)
+        if not isinstance(held, tuple):
+            return NotKnown("data")
+        return Value(held[0].moles, dim.CONCENTRATION, held[0].figures)
 
     def _theoretical_yield(self, node: Expression) -> Result:
         """Mass of a product, named itself or by its reaction, at full conversion of what limits."""
@@ -308,6 +310,24 @@ class Evaluator:
         if formed is None or formed.mass is None:
             return NotKnown("data")
         return Value(formed.mass, dim.MASS, formed.figures)
+
+
+def _density(material: model.Material) -> Value | None:
+    """Give the density of a material as a whole, where it is given or a table has it."""
+    facts = material.solution
+    if facts is None or facts.density is None:
+        return None
+    return Value(facts.density, dim.MASS_CONCENTRATION, facts.figures)
+
+
+def _of_solution(name: str, material: model.Material, value: float, measured: Quantity) -> Result:
+    """Give the volume of a mass of a solution, or the mass of a volume."""
+    whole = _density(material)
+    wanted = dim.MASS if name == "mass" else dim.VOLUME
+    if whole is None or {measured.dimension, wanted} != {dim.MASS, dim.VOLUME}:
+        return NotKnown("data")
+    found = value * whole.si if wanted == dim.MASS else value / whole.si
+    return Value(found, wanted, min(measured.figures, whole.figures))
 
 
 def _place(value: Value) -> int | None:

@@ -13,12 +13,10 @@ from typing import TYPE_CHECKING, NamedTuple
 from watchglass.base import dimensions as dim
 from watchglass.base.scan import Found, scan_quantity
 from watchglass.base.yaml import YamlText
-from watchglass.catalogue import texts
 from watchglass.catalogue.measuring import nearest, reach
 from watchglass.resolve import model
-from watchglass.resolve.label import density_against_table
+from watchglass.resolve.label import faults_of_label, read_label
 from watchglass.resolve.materials import MaterialReader
-from watchglass.resolve.solutions import facts_of
 from watchglass.run.content import Missing, contents
 
 if TYPE_CHECKING:
@@ -158,10 +156,8 @@ def faults_of(stock: Stock, catalogue: Catalogue, laboratory: Laboratory) -> tup
     """Give what is wrong in the description of a stock."""
     maker = _Maker(catalogue, laboratory)
     material = maker.material(stock.material, stock)
-    facts = material.solution
-    if stock.density is not None and facts is not None and facts.source == "given":
-        plain = facts_of(material.composition, None, catalogue)
-        maker.findings += density_against_table(stock.density, facts, plain)
+    label = read_label(stock.density, stock.also, [])
+    maker.findings += faults_of_label(label, material.written, material.composition, catalogue)
     return tuple(maker.findings)
 
 
@@ -198,17 +194,15 @@ class _Maker:
         reader = MaterialReader(self.catalogue)
         composition = reader.of_stock(stock) if stock is not None else reader.described(text)[0]
         self.findings += reader.findings
-        own = None
-        if stock is not None and stock.density is not None:
-            read = texts.quantity(stock.density, dim.MASS_CONCENTRATION, self.findings)
-            own = read.middle if read is not None else None
+        density, also = (stock.density, stock.also) if stock is not None else (None, None)
+        label = read_label(density, also, self.findings)
         return model.Material(
             name=text.text,
             written=text.text,
             composition=composition,
             span=text.span,
             value_span=text.span,
-            solution=facts_of(composition, own, self.catalogue),
+            solution=label.facts(composition, self.catalogue),
         )
 
     def _concentrate(self, solute: Substance) -> model.Material | None:

@@ -343,7 +343,7 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
     faulty = faulty_body(earlier, syntax.front.span.end if syntax.front else 0)
     draft = case = _run(procedure, around, faulty=faulty)
     factor = procedure.head.scale if around.scale is None else around.scale
-    if factor != 1.0:
+    if (factor, procedure.head.scale) != (1.0, 1.0):
         scaled, more = rescale(procedure, factor, around.catalogue, around.laboratory)
         earlier = (*earlier, *more)
         case = _run(scaled, around, faulty=faulty)

@@ -1,78 +1,62 @@
 """JSON Schemas (draft 2020-12) of the YAML files and of the JSON that commands print.
 
-Those of the YAML files are made from the same field tables that the readers use. YAML readers of
-editors give bare numbers and dates as such, so every place for text takes them, too.
+Those of the YAML files are made from the same field tables that the readers use. What they say is
+certain: a file that `check` passes in silence holds to its schema. Readers of YAML in editors take
+what looks like a number, a truth value or nothing for such, where ours take all text as it is
+written; so places for text take those, too.
 """
 
 from __future__ import annotations
 
 import json
-from typing import TYPE_CHECKING, Any
+import re
+from typing import TYPE_CHECKING
 
+from watchglass.base import codes
+from watchglass.base import dimensions as dim
 from watchglass.base.fields import Field, Shape
+from watchglass.base.findings import Finding
+from watchglass.base.spans import Source
 from watchglass.catalogue import decode, ware
-from watchglass.resolve import head, laboratory, materials, page, reactions, schedule, thresholds
+from watchglass.judge.accept import can_be_accepted
+from watchglass.resolve import head, laboratory, page, schedule
+from watchglass.shell.output_schemas import Schema, findings_schema, ledger_schema
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
     from pathlib import Path
 
-Schema = dict[str, Any]
-
 DRAFT = "https://json-schema.org/draft/2020-12/schema"
-#: Text as YAML readers give it: they turn what looks like a number, a truth value or nothing.
-_TEXT: Schema = {"type": ["string", "number", "boolean", "null"]}
-_LIST: Schema = {"type": "array", "items": _TEXT}
-_MAPPING: Schema = {"type": "object"}
-_SHAPES: dict[Shape, Schema] = {
-    Shape.TEXT: _TEXT,
-    Shape.LIST: {"type": "array"},
-    Shape.MAPPING: {"type": ["object", "null"]},
-    Shape.TEXT_OR_LIST: {"anyOf": [_TEXT, _LIST]},
-    Shape.TEXT_OR_MAPPING: {"anyOf": [_TEXT, _MAPPING]},
-    Shape.ANY: {},
-}
+_TEXT = (Shape.TEXT, Shape.TEXT_OR_LIST, Shape.TEXT_OR_MAPPING, Shape.ANY)
+_LIST = (Shape.LIST, Shape.TEXT_OR_LIST, Shape.ANY)
+_MAPPING = (Shape.MAPPING, Shape.TEXT_OR_MAPPING, Shape.ANY)
+#: A quantity has a digit in it, in our digits; nothing less is said of it, since its units are many.
+_DIGIT = "[0-9]"
 
 
 def schemas() -> dict[str, Schema]:
     """Give every schema by name."""
-    substance = _record(decode.FIELDS)
-    stock = _record(ware.STOCK_FIELDS)
-    stock["anyOf"] = [{"required": ["material"]}, {"required": ["contains"]}]
-    material = {"anyOf": [_TEXT, _record(materials.FIELDS)]}
-    reaction = {"anyOf": [_TEXT, _record(reactions.FIELDS)]}
-    limits = {
-        "type": ["object", "null"],
-        "properties": {
-            name: {**_TEXT, "description": f"{limit.words}; {limit.source}"}
-            for name, limit in thresholds.THRESHOLDS.items()
-        },
-        "additionalProperties": False,
-    }
-    front = _record(
-        head.FIELDS,
-        materials=_each(material),
-        vessels=_each({"anyOf": [_TEXT, _MAPPING]}),
-        equipment=_each(_TEXT),
-        reactions=_each(reaction),
-        accept=_each(_TEXT),
-        intended=_each(_TEXT),
-    )
-    return {
-        "procedure": _titled(front, "Front matter of a procedure"),
-        "page": _titled(_record(page.FIELDS), "Front matter of a page"),
-        "laboratory": _titled(
-            _record(laboratory.FIELDS, thresholds=limits, glassware=_each(_TEXT)),
+    made = {
+        "procedure": ("Front matter of a procedure", _front_matter()),
+        "page": ("Front matter of a page", _record(page.FIELDS)),
+        "laboratory": (
             "laboratory.yml: facts of a teaching laboratory",
+            {**_record(laboratory.FIELDS), "type": ["object", "null"]},
         ),
-        "stocks": _titled(_each(stock), "stocks.yml: solutions that the prep room keeps"),
-        "substances": _titled(_each(substance), "substances/*.yml: additions to the catalogue"),
-        "schedule": _titled(
-            {"type": ["array", "null"], "items": _record(schedule.FIELDS)},
+        "stocks": ("stocks.yml: solutions that the prep room keeps", _each(_stock())),
+        "substances": (
+            "substances/*.yml: additions to the catalogue",
+            _each(_record(decode.FIELDS)),
+        ),
+        "schedule": (
             "schedule.yml: which procedure runs when",
+            {"type": ["array", "null"], "items": _record(schedule.FIELDS)},
         ),
-        "findings": _titled(_findings(), "What `watchglass check --format json` prints"),
-        "ledger": _titled(_ledger(), "What `watchglass ledger --format json` prints"),
+        "findings": ("What `watchglass check --format json` prints", findings_schema()),
+        "ledger": ("What `watchglass ledger --format json` prints", ledger_schema()),
+    }
+    return {
+        name: {"$schema": DRAFT, "title": title, **schema} for name, (title, schema) in made.items()
     }
 
 
@@ -87,131 +71,109 @@ def write_schemas(folder: Path) -> tuple[Path, ...]:
     written = []
     for name, schema in schemas().items():
         path = folder / f"{name}.schema.json"
-        path.write_text(text_of(schema), encoding="utf-8")
+        path.write_text(text_of(schema), encoding="utf-8", newline="\n")
         written.append(path)
     return tuple(written)
 
 
-# ---------------------------------------------------------------- of the YAML files
-
-
-def _titled(schema: Schema, title: str) -> Schema:
-    return {"$schema": DRAFT, "title": title, **schema}
-
-
-def _record(fields: Mapping[str, Field], **inside: Schema) -> Schema:
-    """Make the schema of a mapping with known fields."""
-    properties = {
-        name: {**(inside.get(name) or _SHAPES[field.shape]), "description": field.about}
-        for name, field in fields.items()
+def _front_matter() -> Schema:
+    """Give the front matter's schema, with the findings that `accept:` can take by name."""
+    schema = _record(head.FIELDS)
+    reason = head.FIELDS["accept"].each
+    assert reason is not None  # noqa: S101 - the table says what stands there
+    nowhere = Source.of("", "").span(0, 0)
+    accept = schema["properties"]["accept"]
+    accept["properties"] = {
+        code.name: {**_value(reason), "description": code.summary}
+        for code in codes.ALL
+        if can_be_accepted(Finding(code=code, span=nowhere, message=""))
     }
-    schema: Schema = {
-        "type": "object",
-        "properties": properties,
-        "additionalProperties": False,
-    }
-    required = [name for name, field in fields.items() if field.required]
-    if required:
-        schema["required"] = required
+    accept["patternProperties"] = {"^[A-Za-z][0-9]{3}$": _value(reason)}
+    accept["additionalProperties"] = False
     return schema
 
 
+def _stock() -> Schema:
+    """Give a stock's schema; it says what it is in one of two ways, not in both."""
+    one, other = ({"required": [name]} for name in ("material", "contains"))
+    rule: Schema = {"if": {"type": "object"}, "then": {"oneOf": [one, other]}}
+    return _record(ware.STOCK_FIELDS) | rule
+
+
+# ---------------------------------------------------------------- from the tables
+
+
+def _record(fields: Mapping[str, Field]) -> Schema:
+    """Make the schema of a mapping with known fields."""
+    return {"type": "object", **_inside(fields)}
+
+
+def _inside(fields: Mapping[str, Field]) -> Schema:
+    schema: Schema = {
+        "properties": {
+            name: {"description": field.about, **_value(field)} for name, field in fields.items()
+        },
+        "additionalProperties": False,
+    }
+    required = [name for name, field in fields.items() if field.required]
+    return schema | ({"required": required} if required else {})
+
+
 def _each(entry: Schema) -> Schema:
-    """Make the schema of a mapping whose keys are the author's."""
+    """Make the schema of a mapping whose keys are the author's; an empty file is one, too."""
     return {"type": ["object", "null"], "additionalProperties": entry}
 
 
-# ---------------------------------------------------------------- of the JSON outputs
+def _value(field: Field) -> Schema:
+    """Make the schema of what a field takes.
 
-_WHOLE: Schema = {"type": "integer", "minimum": 0}
-_MAYBE_TEXT: Schema = {"type": ["string", "null"]}
-
-
-def _object(**properties: Schema) -> Schema:
-    return {"type": "object", "properties": properties, "required": list(properties)}
-
-
-def _point() -> Schema:
-    return _object(line=_WHOLE, column=_WHOLE, offset=_WHOLE)
-
-
-def _place(**more: Schema) -> Schema:
-    return _object(path={"type": "string"}, start=_point(), end=_point(), **more)
-
-
-def _findings() -> Schema:
-    finding = _object(
-        code={"type": "string", "pattern": "^[A-Z][0-9]{3}$"},
-        name={"type": "string"},
-        severity={"enum": ["error", "warning", "note"]},
-        message={"type": "string"},
-        label=_MAYBE_TEXT,
-        path={"type": "string"},
-        start=_point(),
-        end=_point(),
-        related={"type": "array", "items": _place(message={"type": "string"})},
-        help=_MAYBE_TEXT,
-        fix={"anyOf": [{"type": "null"}, _place(text={"type": "string"})]},
-    )
-    return _object(
-        version={"const": 1},
-        tool=_object(name={"const": "watchglass"}, version={"type": "string"}),
-        counts=_object(errors=_WHOLE, warnings=_WHOLE, notes=_WHOLE, files=_WHOLE),
-        findings={"type": "array", "items": finding},
-    )
+    The kinds of value are told by `type` alone wherever they can be: other keywords say nothing of
+    values of another kind, and what a validator reports is plainer than of alternatives.
+    """
+    kinds: set[str] = set()
+    schema: Schema = {}
+    if field.shape in _TEXT:
+        kinds, schema = _text(field)
+    if field.shape in _LIST:
+        kinds.add("array")
+        schema["items"] = _value(field._replace(shape=Shape.TEXT, required=False))
+    if field.shape in _MAPPING:
+        kinds.add("object")
+        schema |= _mapping(field)
+    if not field.required:
+        kinds.add("null")
+    order = ("object", "array", "string", "integer", "number", "boolean", "null")
+    types = [kind for kind in order if kind in kinds]
+    if field.words and not field.quantity and not kinds & {"array", "object"}:
+        # editors offer the words of an enum
+        schema = {"enum": [*field.words, *([] if field.required else [None])]}
+    return {"type": types[0] if len(types) == 1 else types, **schema}
 
 
-def _ledger() -> Schema:
-    number = _object(
-        value={"type": "number"}, unit={"type": "string"}, **{"from": {"type": "string"}}
-    )
-    maybe: Schema = {"anyOf": [{"type": "null"}, number]}
-    amounts: Schema = {"type": "object", "additionalProperties": number}
-    words: Schema = {"type": "array", "items": {"type": "string"}}
-    phase = {"anyOf": [{"type": "null"}, _object(volume=number, amounts=amounts)]}
-    vessel = _object(
-        aqueous=phase,
-        organic=phase,
-        solid=amounts,
-        ph=maybe,
-        temperature=number,
-        closure={"type": "string"},
-        place={"type": "string"},
-        bath={"type": "string"},
-        mixed={"type": "boolean"},
-        settled={"type": "boolean"},
-        unknown=words,
-        not_assessed=words,
-    )
-    vessels: Schema = {"type": "object", "additionalProperties": vessel}
-    sink = _object(volume=number, liquids=amounts, solids=amounts, unknown=words)
-    kinds = ["taken", "moved", "added", "reacted", "warmed", "supposed", "not_assessed", "mixed"]
-    result = _object(
-        vessel={"type": "string"},
-        words={"type": "string"},
-        kind={"enum": [*kinds, "layers"]},
-    )
-    entry = _object(
-        step=_WHOLE,
-        turn=_WHOLE,
-        act={"type": "string"},
-        start=_WHOLE,
-        results={"type": "array", "items": result},
-        vessels=vessels,
-    )
-    run = _object(
-        labels={"type": "object", "additionalProperties": _WHOLE},
-        charged=amounts,
-        entries={"type": "array", "items": entry},
-        end=_object(vessels=vessels, sinks={"type": "object", "additionalProperties": sink}),
-    )
-    return _object(
-        version={"const": 1},
-        procedure=_object(
-            code={"type": "string"}, title={"type": "string"}, path={"type": "string"}
-        ),
-        model={"type": "string"},
-        sources={"type": "object", "additionalProperties": {"type": "string"}},
-        components={"type": "object"},
-        runs={"type": "object", "additionalProperties": run},
-    )
+def _mapping(field: Field) -> Schema:
+    if field.fields is not None:
+        return _inside(field.fields)
+    if field.each is not None:
+        return {"additionalProperties": {"description": field.each.about, **_value(field.each)}}
+    return {}
+
+
+def _text(field: Field) -> tuple[set[str], Schema]:
+    """Give the types that text may seem to be to readers of editors, and what else it holds to."""
+    patterns = [f"^{word}$" for word in field.words]
+    if field.quantity:
+        patterns.append(_DIGIT)
+        types = {"string", "number"} if dim.NUMBER in field.quantity else {"string"}
+        return types, {"pattern": "|".join(patterns)}
+    if field.words:
+        return {"string"}, {"pattern": "|".join(patterns)}
+    if field.pattern:
+        types = {"string"}
+        schema: Schema = {"pattern": f"^(?:{field.pattern})$"}
+        if re.fullmatch(field.pattern, "1"):
+            types.add("integer")
+            schema |= {} if re.fullmatch(field.pattern, "-1") else {"minimum": 0}
+        if re.fullmatch(field.pattern, "true"):
+            types.add("boolean")
+        return types, schema
+    return {"string", "number", "boolean"}, {}

@@ -17,7 +17,7 @@ from watchglass.judge.bench.heating import (
     heated_while_closed,
     hotter_than_it_boils,
 )
-from watchglass.judge.bench.moving import done_with_nothing, drawn_from_nothing, no_such_layer
+from watchglass.judge.bench.moving import drawn_from_nothing, no_such_layer
 from watchglass.judge.bench.opposites import opposites_poured_together
 from watchglass.judge.bench.reagents import (
     adjusts_the_wrong_way,
@@ -37,7 +37,6 @@ BENCH_CHECKS: tuple[Callable[[Run], Iterable[Finding]], ...] = (
     no_such_layer,
     opposites_poured_together,
     drawn_from_nothing,
-    done_with_nothing,
     overfilled,
     too_full,
     gas_in_closed_vessel,

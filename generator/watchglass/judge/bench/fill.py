@@ -5,10 +5,11 @@ from __future__ import annotations
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
+from watchglass.base.figures import shown
 from watchglass.base.findings import Finding, Related
 from watchglass.judge.bench.run import Moment, Run, filled_by, moments
 from watchglass.resolve import model
-from watchglass.run.bench.figures import share_words, volume_words
+from watchglass.run.bench.figures import volume_words
 from watchglass.run.bench.mixing import gas_volume_of
 
 if TYPE_CHECKING:
@@ -47,11 +48,20 @@ def overfilled(run: Run) -> Iterator[Finding]:
                 code=codes.VESSEL_OVERFILLED,
                 span=moment.span,
                 message=f"{what} would hold {volume_words(after.volume)}; its size is"
-                f" {volume_words(size)}",
+                f" {_size(run, after)}",
                 related=_earlier(ledger, moment, after),
                 help=f"take a larger vessel, of {volume_words(after.volume, 2)} or more, or do it in"
                 " portions",
             )
+
+
+def _size(run: Run, vessel: Vessel) -> str:
+    """Give the nominal size as it was declared."""
+    declared = run.case.procedure.vessels.get(vessel.name)
+    type_ = declared.type if declared is not None else None
+    if type_ is not None and type_.size is not None:
+        return type_.size.text
+    return volume_words(vessel.capacity or 0.0)
 
 
 def too_full(run: Run) -> Iterator[Finding]:
@@ -77,8 +87,8 @@ def too_full(run: Run) -> Iterator[Finding]:
             code=codes.VESSEL_TOO_FULL,
             span=moment.span,
             message=f"{_named(run, name)} holds {volume_words(vessel.volume)} of"
-            f" {volume_words(size)}; {limit.why}, and then no more than"
-            f" {share_words(allowed)} may be filled",
+            f" {_size(run, vessel)}; {limit.why}, and then no more than"
+            f" {shown(allowed * 100, 2)} % may be filled",
             related=_earlier(ledger, moment, vessel),
             help=f"take one of {volume_words(vessel.volume / allowed, 2)} or more, or do it in portions",
         )

@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.findings import Finding
 from watchglass.judge.bench.run import Moment, Run, moments
+from watchglass.read import syntax
 from watchglass.resolve import model
 from watchglass.run.bench.figures import volume_words
 from watchglass.run.bench.layers import layers
@@ -15,81 +16,96 @@ from watchglass.run.bench.ledger import Moved
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
-    from watchglass.read import syntax
     from watchglass.run.bench.state import Vessel
 
+#: Less than is missing by rounding, m3 (1 µL).
+_LEAST_SHORT = 1e-9
 _LAYERED = ("aqueous", "organic", "upper", "lower")
-
-
-def drawn_from_nothing(run: Run) -> Iterator[Finding]:
-    """Report transfers out of what is empty, and aliquots larger than what is there."""
-    seen: set[int] = set()
-    for moment in moments(run.ledger):
-        for result in moment.entry.results:
-            moved = result.outcome
-            if not isinstance(moved, Moved) or moment.span.start in seen:
-                continue
-            vessel = moment.before.vessel(moved.origin)
-            if moved.nothing and not moved.part and not vessel.unknown:
-                seen.add(moment.span.start)
-                yield Finding(
-                    code=codes.VESSEL_EMPTY,
-                    span=moment.span,
-                    message=f"`{moved.origin}` is empty here: nothing comes out of it",
-                    related=(),
-                    help="see in which vessel it is, or what was to be charged before",
-                )
-            elif moved.short > 1e-9 and moved.volume:
-                seen.add(moment.span.start)
-                yield Finding(
-                    code=codes.MORE_THAN_THERE,
-                    span=moment.span,
-                    message=f"{volume_words(moved.volume + moved.short)} is taken from"
-                    f" `{moved.origin}`, which holds {volume_words(moved.volume)}",
-                    help="take less, or charge more before",
-                )
 
 
 #: Verbs that make no sense with an empty vessel.
 _NEED_CONTENTS = frozenset(
     (
-        "adjust",
-        "titrate",
-        "filter",
-        "decant",
-        "evaporate",
-        "distil",
-        "settle",
-        "shake",
-        "test",
-        "collect",
+        *("adjust", "titrate", "filter", "decant", "evaporate", "distil"),
+        *("settle", "shake", "test", "collect"),
     )
 )
 
 
-def done_with_nothing(run: Run) -> Iterator[Finding]:
-    """Report acts on vessels into which nothing has come."""
-    seen: set[str] = set()
+def drawn_from_nothing(run: Run) -> Iterator[Finding]:
+    """Report what is done with an empty vessel, and more drawn from one than it holds.
+
+    Each vessel is reported once, and not where its emptiness follows from what was reported
+    before: what would have come from there, or a titre that took more than the burette had.
+    """
+    told: set[str] = set()
     for moment in moments(run.ledger):
-        event = moment.entry.happening.event
-        if (
-            not isinstance(event, model.Operation)
-            or event.verb not in _NEED_CONTENTS
-            or event.object is None
-            or event.portions
-        ):
-            continue
-        name = moment.entry.happening.name(event.object.name.text)
-        vessel = moment.before.vessels.get(name)
-        if vessel is None or not vessel.empty or name in seen or _delivers(run, name):
-            continue
-        seen.add(name)
-        yield Finding(
+        told |= _overdrawn(moment)
+        moves = [r.outcome for r in moment.entry.results if isinstance(r.outcome, Moved)]
+        for moved in moves:
+            finding = _drawn(moment, moved)
+            if finding is None:
+                continue
+            if moved.origin not in told:
+                yield finding
+            told |= {moved.origin, moved.target}
+        name = _needing(run, moment)
+        if name and not moves and name not in told:
+            told.add(name)
+            yield Finding(
+                code=codes.VESSEL_EMPTY,
+                span=moment.span,
+                message=f"`{name}` is empty here",
+                help="see in which vessel it is, or what was to be charged before",
+            )
+
+
+def _drawn(moment: Moment, moved: Moved) -> Finding | None:
+    if moved.nothing and not moved.part and not moment.before.vessel(moved.origin).unknown:
+        return Finding(
             code=codes.VESSEL_EMPTY,
             span=moment.span,
-            message=f"`{name}` is empty here",
+            message=f"`{moved.origin}` is empty here: nothing comes out of it",
             help="see in which vessel it is, or what was to be charged before",
         )
+    if moved.short > _LEAST_SHORT and moved.volume:
+        return Finding(
+            code=codes.MORE_THAN_THERE,
+            span=moment.span,
+            message=f"{volume_words(moved.volume + moved.short)} is taken from"
+            f" `{moved.origin}`, which holds {volume_words(moved.volume)}",
+            help="take less, or charge more before",
+        )
+    return None
+
+
+def _needing(run: Run, moment: Moment) -> str:
+    """Give the empty vessel with which an act makes no sense, or nothing."""
+    event = moment.entry.happening.event
+    if (
+        not isinstance(event, model.Operation)
+        or event.verb not in _NEED_CONTENTS
+        or event.object is None
+        or event.portions
+    ):
+        return ""
+    name = moment.entry.happening.name(event.object.name.text)
+    vessel = moment.before.vessels.get(name)
+    return name if vessel is not None and vessel.empty and not _delivers(run, name) else ""
+
+
+def _overdrawn(moment: Moment) -> set[str]:
+    """Give the burette that a titre took more from than it held."""
+    event = moment.entry.happening.event
+    if not isinstance(event, model.Operation) or event.verb != "titrate":
+        return set()
+    return {
+        name
+        for clause in event.clauses
+        if clause.word == "from" and isinstance(clause.value, syntax.Place)
+        for name in (moment.entry.happening.name(clause.value.name.text),)
+        if moment.entry.bench.vessel(name).empty
+    }
 
 
 def _delivers(run: Run, name: str) -> bool:

@@ -40,8 +40,15 @@ SITE_MARK = "mkdocs.yml"
     type=click.Path(file_okay=False, path_type=Path),
     help="Folder to build in; by default the one the site names.",
 )
+@click.option(
+    "--scale",
+    type=click.FloatRange(min=0, min_open=True, max=1000),
+    help="Scale every procedure by this factor, whatever it declares.",
+)
 @click.option("--strict", is_flag=True, help="Let warnings stop the build too.")
-def command(site: Path, edition: str, out: Path | None, *, strict: bool) -> int:
+def command(
+    site: Path, edition: str, out: Path | None, scale: float | None, *, strict: bool
+) -> int:
     """Build the handbook of a site.
 
     SITE is a folder whose mkdocs.yml names the set. Its procedures are judged first; nothing is
@@ -55,7 +62,7 @@ def command(site: Path, edition: str, out: Path | None, *, strict: bool) -> int:
     from watchglass.shell.site.build import build_site
 
     editions = EDITIONS if edition == "both" else (edition,)
-    result = build_site(site, editions=editions, out=out, strict=strict)
+    result = build_site(site, editions=editions, out=out, scale=scale, strict=strict)
     style = style_of(sys.stderr, os.environ)
     said = render(result.findings, style=style)
     if said:

@@ -11,10 +11,11 @@ from typing import TYPE_CHECKING, NamedTuple
 import click
 
 from watchglass.shell.commands.verdict import Refused, status_of
+from watchglass.shell.rendering.cells import visible
 from watchglass.shell.streams import put, say, style_of
 
 if TYPE_CHECKING:
-    from collections.abc import Callable, Sequence
+    from collections.abc import Sequence
 
     from watchglass.shell.pipeline import CheckResult
 
@@ -76,7 +77,10 @@ def command(
     if not watch:
         return _check(call)
     if form in ("json", "sarif"):
-        raise Refused(f"--watch prints again and again; {form} is one document")
+        raise Refused(
+            f"--watch prints again and again, and {form} is one document; "
+            "take `--format full`, `line` or `github`"
+        )
     return _watch(call)
 
 
@@ -91,69 +95,82 @@ class _Call(NamedTuple):
 
 
 def _check(call: _Call) -> int:
+    text, status = _judged(call)
+    put(text)
+    return status
+
+
+def _judged(call: _Call) -> tuple[str, int]:
+    """Check once; give what is to be printed, and the status."""
     from watchglass.shell.pipeline import check_paths
 
     result = check_paths(call.paths, scale=call.scale)
     status = status_of(result.findings, strict=call.strict)
     if not result.checked and not status and any(path.is_dir() for path in call.paths):
         raise Refused(f"there is no procedure in {_listed(call.paths)}")
-    put(_printed(call, result))
-    return status
+    return _printed(call, result), status
 
 
 def _printed(call: _Call, result: CheckResult) -> str:
     style = style_of(sys.stdout, os.environ)
-    if call.form == "sarif":
-        from watchglass.shell.rendering.sarif import render
+    match call.form:
+        case "full":
+            from watchglass.shell.rendering import full
 
-        return render(result.findings, style=style, accepted=result.accepted)
-    if call.form == "full" and 0 < call.limit < len(result.findings):
-        from watchglass.shell.rendering.tally import arrange
+            return full.render(result.findings, style=style, limit=call.limit)
+        case "line":
+            from watchglass.shell.rendering import line
 
-        arranged = arrange(result.findings)
-        more = len(arranged) - call.limit
-        if more > 0:
-            text = _renderer("full")(arranged[: call.limit], style=style)
-            return text + f"and {more} more findings; `--limit 0` shows all\n"
-    return _renderer(call.form)(result.findings, style=style)
+            return line.render(result.findings, style=style)
+        case "github":
+            from watchglass.shell.rendering import github
+
+            return github.render(result.findings, style=style)
+        case "sarif":
+            from watchglass.shell.rendering import sarif
+
+            return sarif.render(result.findings, style=style, accepted=result.accepted)
+        case _:
+            from watchglass.shell.rendering import json_
+
+            return json_.render(result.findings, style=style)
 
 
 def _watch(call: _Call) -> int:
     """Check, and check again on each save, until Ctrl-C; the status is the last check's."""
-    from watchglass.shell.watching import changes
+    from watchglass.shell.watching import Watch
 
+    watch = Watch(call.paths)
     status = _check(call)
-    told = "watching for changes; Ctrl-C ends\n"
-    say(told)
+    count = 1
     try:
-        for _ in changes(call.paths):
-            if sys.stdout.isatty():
-                put("\x1b[2J\x1b[H")
-            else:
-                put("-" * 40 + "\n")
-            try:
-                status = _check(call)
-            except (Refused, OSError) as error:  # a file went, or the folder is half written
-                say(f"{error}\n")
-            say(told)
+        while True:
+            say("watching for changes; Ctrl-C ends\n")
+            watch.wait()
+            count += 1
+            status = _again(call, count, status)
     except KeyboardInterrupt:
-        pass
+        return status
+
+
+def _again(call: _Call, count: int, status: int) -> int:
+    """Check once more; where that cannot be done (a file went), say why and keep the status.
+
+    It is all worked out before anything is cleared, so that the screen does not stand empty.
+    """
+    refusal = ""
+    try:
+        for path in call.paths:
+            _refuse_unfit(path)
+        text, status = _judged(call)
+    except (Refused, OSError) as error:
+        text, refusal = "", f"{visible(str(error))}\n"
+    terminal = sys.stdout.isatty() and os.environ.get("TERM") != "dumb"
+    clear = "\x1b[2J\x1b[3J\x1b[H" if terminal else ""
+    put(f"{clear}{'-' * 28} check {count}\n{text}")
+    if refusal:
+        say(refusal)
     return status
-
-
-def _renderer(form: str) -> Callable[..., str]:
-    """Import the one renderer that is needed."""
-    render: Callable[..., str]
-    match form:
-        case "full":
-            from watchglass.shell.rendering.full import render
-        case "line":
-            from watchglass.shell.rendering.line import render
-        case "github":
-            from watchglass.shell.rendering.github import render
-        case _:
-            from watchglass.shell.rendering.json_ import render
-    return render
 
 
 def _refuse_unfit(path: Path) -> None:
@@ -161,6 +178,8 @@ def _refuse_unfit(path: Path) -> None:
     if path.is_dir():
         if not (path / SET_MARK).is_file():
             raise Refused(f"`{path}` {_no_set(path)}")
+    elif not path.exists():
+        raise Refused(f"`{path}` is not there any more")
     elif path.suffix != ".md":
         raise Refused(f"`{path}` is no procedure: its name does not end in .md")
 

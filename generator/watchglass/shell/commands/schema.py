@@ -31,8 +31,11 @@ def command(name: str | None, out: Path | None) -> int:
     if out is not None:
         if name is not None:
             raise Refused("give a NAME, or `--out` for all of them")
-        for path in write_schemas(out):
-            say(f"{path}\n")
+        try:
+            written = write_schemas(out)
+        except OSError as error:
+            raise Refused(f"`{out}` cannot be written ({error.strerror})") from error
+        say("".join(f"{path}\n" for path in written))
         return CLEAN
     made = schemas()
     if name is None:

@@ -11,7 +11,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import dimensions as dim
 from watchglass.base.figures import shown
 from watchglass.resolve import model
-from watchglass.run.content import ASSUMED_FIGURES, DENSITY_FIGURES, SOLUBILITY_FIGURES
+from watchglass.run.content import DENSITY_FIGURES, SOLUBILITY_FIGURES
 from watchglass.run.evaluate import NotKnown, Value
 
 if TYPE_CHECKING:
@@ -118,4 +118,4 @@ def _uses_density(name: str, basis: dim.Dimension, quantity: Quantity | None) ->
 
 def _figures(material: model.Material) -> int:
     facts = material.solution
-    return ASSUMED_FIGURES if facts is not None and facts.source == "water" else DENSITY_FIGURES
+    return min(DENSITY_FIGURES, facts.figures) if facts is not None else DENSITY_FIGURES

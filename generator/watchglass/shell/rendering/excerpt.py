@@ -90,8 +90,8 @@ def _add(section: _Section, span: Span, places: Places, *, words: str, primary: 
 
 def _add_context(section: _Section, number: int, source: Source, places: Places) -> None:
     """Show the line above a blank one, since a caret under nothing tells little."""
-    table = places.lines(source)
-    if number > 1 and not table.line(number).strip():
+    text = places.line(source, number)
+    if number > 1 and (not text or text.isspace()):
         section.lines.append(_Shown(number - 1))
 
 
@@ -124,7 +124,7 @@ def _draw(
     numbered = f"{_INDENT}{line.number:>{digits}} |"
     blank = f"{_INDENT}{'':>{digits}} |"
     room = max(style.width - len(blank) - 1, 20)
-    text = places.lines(source).line(line.number)
+    text = places.line(source, line.number)
     for view in views(text, line.marks, room=room, style=style):
         yield (style.faint(numbered) + " " + view.text).rstrip()
         for mark, first, last in view.marks:

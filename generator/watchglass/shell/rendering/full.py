@@ -34,20 +34,30 @@ _RECOGNISED = 60
 """Characters of a replaced text that are shown."""
 
 
-def render(findings: Iterable[Finding], *, style: Style) -> str:
-    """Render findings in full, with the sentence that counts them at the end."""
+def render(findings: Iterable[Finding], *, style: Style, limit: int = 0) -> str:
+    """Render findings in full, with the sentence that counts them at the end.
+
+    Args:
+        findings: In any order.
+        style: How the text is dressed.
+        limit: Show no more than this many, and say how many more there are; 0 for all. The
+            sentence counts all in any case.
+    """
     arranged = arrange(findings)
     if not arranged:
         return ""
     places = Places()
     lines: list[str] = []
     after_note = True
-    for finding in arranged:
+    for finding in arranged[: limit or None]:
         note = finding.code.severity is Severity.NOTE
         if lines and not (note and after_note):
             lines.append("")
         lines.extend(_note(finding, places, style) if note else _finding(finding, places, style))
         after_note = note
+    more = len(arranged) - limit
+    if limit and more > 0:
+        lines += ["", f"{more} more finding{'s' * (more > 1)} not shown; `--limit 0` shows all"]
     lines += ["", style.strong(Counts.of(arranged).sentence)]
     return "\n".join(lines) + "\n"
 

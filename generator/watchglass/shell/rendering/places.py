@@ -17,11 +17,12 @@ if TYPE_CHECKING:
 class Places:
     """The line tables of the sources met so far."""
 
-    __slots__ = ("_tables",)
+    __slots__ = ("_last", "_tables")
 
     def __init__(self) -> None:
         """Begin with none."""
         self._tables: dict[Source, Lines] = {}
+        self._last: tuple[Source | None, int, str] = (None, 0, "")
 
     def lines(self, source: Source) -> Lines:
         """Give the line table of a source."""
@@ -29,6 +30,15 @@ class Places:
         if table is None:
             table = self._tables[source] = Lines(source.text)
         return table
+
+    def line(self, source: Source, number: int) -> str:
+        """Give the text of a line; the last one is kept, since findings come in their order.
+
+        Without that, many findings on one very long line would each copy the line.
+        """
+        if self._last[:2] != (source, number):
+            self._last = (source, number, self.lines(source).line(number))
+        return self._last[2]
 
     def position(self, source: Source, offset: int) -> Position:
         """Give line and column of an offset, both from 1."""

@@ -2,14 +2,18 @@
 
 One run; each kind of finding that occurs is a rule, with the text of its explanation page; what
 was accepted is a result with a suppression that carries its reason. Columns count Unicode code
-points. Addresses are relative to where `check` was called, with forward slashes, percent-encoded.
-A fingerprint takes in kind, path and the text underlined, so that lines moved above do not make a
-finding new.
+points. Addresses are relative to where `check` was called, with forward slashes, percent-encoded;
+a path given from the root is a `file:` address. A fingerprint takes in kind, path, the text
+underlined, and the how-manieth of its like it is, so that lines moved above do not make a finding
+new. In all messages braces are doubled and what looks like a link is escaped, since the standard
+gives both a meaning (3.11.5 and 3.11.6).
 """
 
 from __future__ import annotations
 
 import json
+import re
+from collections import Counter
 from hashlib import sha256
 from typing import TYPE_CHECKING, Any
 from urllib.parse import quote
@@ -17,6 +21,7 @@ from urllib.parse import quote
 from watchglass import __version__
 from watchglass.base.findings import Severity
 from watchglass.shell.rendering.places import Places
+from watchglass.shell.rendering.style import Style
 from watchglass.shell.rendering.tally import arrange
 
 if TYPE_CHECKING:
@@ -24,12 +29,14 @@ if TYPE_CHECKING:
 
     from watchglass.base.findings import Code, Finding
     from watchglass.base.spans import Span
-    from watchglass.shell.rendering.style import Style
 
 SCHEMA = (
     "https://docs.oasis-open.org/sarif/sarif/v2.1.0/errata01/os/schemas/sarif-schema-2.1.0.json"
 )
 _LEVELS = {Severity.ERROR: "error", Severity.WARNING: "warning", Severity.NOTE: "note"}
+_BASE = "%SRCROOT%"
+_DRIVE = re.compile(r"[A-Za-z]:/")
+_LINK = re.compile(r"\](?=\()")
 _Object = dict[str, Any]
 
 
@@ -53,6 +60,7 @@ def render(
     rules = sorted({finding.code for finding in everything}, key=lambda code: code.number)
     index = {code.number: place for place, code in enumerate(rules)}
     places = Places()
+    met: Counter[tuple[str, str, str]] = Counter()
     log = {
         "$schema": SCHEMA,
         "version": "2.1.0",
@@ -61,14 +69,15 @@ def render(
                 "tool": {
                     "driver": {
                         "name": "watchglass",
+                        "version": __version__,
                         "semanticVersion": __version__,
                         "rules": [_rule(code) for code in rules],
                     }
                 },
                 "columnKind": "unicodeCodePoints",
-                "originalUriBaseIds": {"%SRCROOT%": {"description": {"text": "where it was run"}}},
+                "originalUriBaseIds": {_BASE: {"description": {"text": "where it was run"}}},
                 "results": [
-                    _result(finding, index, places, reasons.get(id(finding)))
+                    _result(finding, index, places, met, reasons.get(id(finding)))
                     for finding in everything
                 ],
             }
@@ -78,21 +87,36 @@ def render(
 
 
 def _rule(code: Code) -> _Object:
-    from watchglass.shell.explain import page_text, parse_explanation  # noqa: PLC0415 - rare
+    """Give a kind of finding, with its page: set for reading as text, and as the Markdown it is."""
+    from watchglass.shell.explain import page, page_text, parse_explanation  # noqa: PLC0415 - rare
 
     text = page_text(code)
     opening = parse_explanation(text).sections[0].text.strip() if text else code.summary
+    shown = {"text": _message(page(code, style=Style(width=88)))}
+    if text:
+        shown["markdown"] = _message(text)
     return {
         "id": code.number,
         "name": code.name,
-        "shortDescription": {"text": code.summary[0].upper() + code.summary[1:] + "."},
-        "fullDescription": {"text": opening},
-        "help": {"text": f"`watchglass explain {code.number}` tells more."},
+        "shortDescription": {"text": _message(code.summary[0].upper() + code.summary[1:] + ".")},
+        "fullDescription": {"text": _message(opening)},
+        "help": shown,
         "defaultConfiguration": {"level": _LEVELS[code.severity]},
     }
 
 
-def _result(finding: Finding, index: dict[str, int], places: Places, reason: str | None) -> _Object:
+def _message(text: str) -> str:
+    """Write a message so that nothing in it is taken for a placeholder or a link."""
+    return _LINK.sub(r"\\]", text.replace("{", "{{").replace("}", "}}"))
+
+
+def _result(
+    finding: Finding,
+    index: dict[str, int],
+    places: Places,
+    met: Counter[tuple[str, str, str]],
+    reason: str | None,
+) -> _Object:
     message = finding.message
     if finding.help:
         message += f" ({finding.help})"
@@ -100,36 +124,27 @@ def _result(finding: Finding, index: dict[str, int], places: Places, reason: str
         "ruleId": finding.code.number,
         "ruleIndex": index[finding.code.number],
         "level": _LEVELS[finding.code.severity],
-        "message": {"text": message},
+        "message": {"text": _message(message)},
         "locations": [{"physicalLocation": _place(finding.span, places)}],
-        "partialFingerprints": {"text/v1": _fingerprint(finding)},
+        "partialFingerprints": {"text/v1": _fingerprint(finding, met)},
     }
     if finding.related:
         result["relatedLocations"] = [
             {
                 "id": number,
                 "physicalLocation": _place(related.span, places),
-                "message": {"text": related.message},
+                "message": {"text": _message(related.message)},
             }
             for number, related in enumerate(finding.related)
         ]
     if finding.fix is not None:
         place = _place(finding.fix.span, places)
-        result["fixes"] = [
-            {
-                "artifactChanges": [
-                    {
-                        "artifactLocation": place["artifactLocation"],
-                        "replacements": [
-                            {
-                                "deletedRegion": place["region"],
-                                "insertedContent": {"text": finding.fix.text},
-                            }
-                        ],
-                    }
-                ]
-            }
-        ]
+        replacement = {
+            "deletedRegion": place["region"],
+            "insertedContent": {"text": finding.fix.text},
+        }
+        change = {"artifactLocation": place["artifactLocation"], "replacements": [replacement]}
+        result["fixes"] = [{"artifactChanges": [change]}]
     if reason is not None:
         result["suppressions"] = [{"kind": "inSource", "justification": reason}]
     return result
@@ -139,7 +154,7 @@ def _place(span: Span, places: Places) -> _Object:
     line, column = places.position(span.source, span.start)
     last_line, last_column = places.position(span.source, span.end)
     return {
-        "artifactLocation": {"uri": quote(span.source.name), "uriBaseId": "%SRCROOT%"},
+        "artifactLocation": _address(span.source.name),
         "region": {
             "startLine": line,
             "startColumn": column,
@@ -149,6 +164,19 @@ def _place(span: Span, places: Places) -> _Object:
     }
 
 
-def _fingerprint(finding: Finding) -> str:
+def _address(name: str) -> _Object:
+    """Give the address of a file; bytes of its name that are no UTF-8 are kept as they are."""
+    path = name.encode("utf-8", "surrogateescape")
+    if name.startswith("/"):
+        return {"uri": "file://" + quote(path)}
+    if _DRIVE.match(name):
+        return {"uri": "file:///" + quote(path, safe="/:")}
+    return {"uri": quote(path), "uriBaseId": _BASE}
+
+
+def _fingerprint(finding: Finding, met: Counter[tuple[str, str, str]]) -> str:
     parts = (finding.code.number, finding.span.source.name, finding.span.text)
-    return sha256("\0".join(parts).encode()).hexdigest()[:32]
+    earlier = met[parts]
+    met[parts] += 1
+    text = "\0".join((*parts, str(earlier)) if earlier else parts)
+    return sha256(text.encode("utf-8", "surrogatepass")).hexdigest()[:32]

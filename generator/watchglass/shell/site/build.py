@@ -51,7 +51,12 @@ class BuildResult:
 
 
 def build_site(
-    site: Path, *, editions: Sequence[str], out: Path | None, strict: bool
+    site: Path,
+    *,
+    editions: Sequence[str],
+    out: Path | None,
+    scale: float | None = None,
+    strict: bool,
 ) -> BuildResult:
     """Build a site's handbook.
 
@@ -59,6 +64,7 @@ def build_site(
         site: Folder that holds `mkdocs.yml`.
         editions: `student`, `instructor` or both.
         out: Folder that gets one folder an edition; by default `public` in the site.
+        scale: What every procedure is scaled by, whatever it declares; None: as declared.
         strict: Whether warnings, of the set or of MkDocs, stop the build too.
 
     Raises:
@@ -68,16 +74,22 @@ def build_site(
     stops.begin()
     try:
         with host_log() as log:
-            return _build(site, tuple(editions), out or site / PUBLIC, log, strict=strict)
+            return _build(site, tuple(editions), out or site / PUBLIC, log, scale, strict=strict)
     finally:
         stops.end()
 
 
 def _build(
-    site: Path, editions: tuple[str, ...], out: Path, log: HostLog, *, strict: bool
+    site: Path,
+    editions: tuple[str, ...],
+    out: Path,
+    log: HostLog,
+    scale: float | None,
+    *,
+    strict: bool,
 ) -> BuildResult:
     first = configured(site, log, None, strict=strict)
-    analysis = source.analyse(Path(plugin_of(first).config.set))
+    analysis = source.analyse(Path(plugin_of(first).config.set), scale)
     nothing = BuildResult(findings=analysis.findings, written=(), failed=True, pages=0)
     if Counts.of(analysis.findings).fails(strict=strict):
         return nothing

@@ -15,11 +15,11 @@ if TYPE_CHECKING:
     from watchglass.shell.pipeline import Analysis
 
 
-def analyse(folder: Path) -> Analysis:
-    """Read, run and judge a whole set."""
+def analyse(folder: Path, scale: float | None = None) -> Analysis:
+    """Read, run and judge a whole set, scaled by a factor where one is given."""
     from watchglass.shell.pipeline import analyse_set
 
-    return analyse_set(folder, shown=f"{shown(folder)}/")
+    return analyse_set(folder, shown=f"{shown(folder)}/", scale=scale)
 
 
 def pages(analysis: Analysis, edition: str) -> HandbookPages:
