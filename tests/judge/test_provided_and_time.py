@@ -44,6 +44,20 @@ def test_a_volume_taken_is_held_to_a_mass_provided_by_the_density(
     assert found == ([("S111", provided)] if exceeded else [])
 
 
+@pytest.mark.parametrize(("provided", "exceeded"), [("12 g", False), ("11 g", True)])
+@pytest.mark.parametrize(
+    "material",
+    ["36 % w/w hydrochloric acid", "40 % w/w sucrose, density: 1.18 g/mL"],
+)
+def test_volume_of_a_solution_is_held_to_a_mass_provided_by_its_own_density(
+    material: str, provided: str, *, exceeded: bool
+) -> None:
+    # 10 mL of 1.179 or 1.18 g/mL are 11.8 g
+    found = told(f"{{is: {material}, provided: {provided}}}", "1. Take {10.0 mL x -> A}.")
+
+    assert found == ([("S111", provided)] if exceeded else [])
+
+
 def test_all_of_what_nobody_provides_is_found() -> None:
     assert told("sodium chloride", "1. Take {all x -> A}.") == [("S112", "all x")]
 
@@ -55,6 +69,8 @@ def test_all_of_what_nobody_provides_is_found() -> None:
         ("ethanol", ""),
         ("1.0 M hydrochloric acid", ""),
         ("{contains: {benzoic-acid: 1 g, naphthalene: 1 g}}", "S110"),
+        ("{contains: {benzoic-acid: 1 g, naphthalene: 1 g}, density: 1.2 g/mL}", ""),
+        ("{contains: {ethanol: 1 mol, water: 1 mol}}", ""),
     ],
 )
 def test_a_solid_measured_by_volume_has_no_amount(material: str, code: str) -> None:

@@ -8,7 +8,7 @@ from __future__ import annotations
 
 import pytest
 
-from builders import golden, student
+from builders import golden, instructor, step, student
 from watchglass.publish.body import text_of
 from watchglass.publish.model import Lowered, ReagentRow, Run
 
@@ -80,3 +80,64 @@ def test_strength_and_density_stand_beside_the_name() -> None:
 
     assert text_of(table["sodium hydrogencarbonate"].strength).replace("\u2060", "") == "5.0 % w/v"
     assert text_of(table["tert-butyl methyl ether"].strength) == "0.7408 g/mL at 20 °C"
+
+
+def resting(material: str, taken: str) -> tuple[tuple[ReagentRow, ...], tuple[str, ...]]:
+    """Give the rows of a procedure of one material, and the assumptions its page names."""
+    entry = step(
+        f"Put {{{taken} x -> A}}.",
+        front=f"materials: {{x: {material}}}\nvessels: {{A: beaker 100 mL}}\n",
+    )
+    page = instructor(entry)
+    return page.reagents, tuple(said for said in page.assumptions if said.startswith("x: "))
+
+
+@pytest.mark.parametrize(
+    ("material", "taken", "amount", "rests_on"),
+    [
+        ("36 % w/w hydrochloric acid", "10 mL", "120 mmol",
+         "density of 36 % w/w hydrochloric acid 1.179 g/mL, from the table of aqueous solutions at 20 °C"),
+        ("5.0 % w/w copper(II) sulfate", "10 mL", "3.1 mmol",
+         "5.0 % w/w copper(II) sulfate taken to be as dense as water"),
+        ("saturated sodium chloride", "10.0 mL", "54.1 mmol",
+         "solubility 316 g/L at 20 °C of sodium chloride"),
+    ],
+)  # fmt: skip
+def test_amount_that_rests_on_something_says_so_in_table_and_page(
+    material: str, taken: str, amount: str, rests_on: str
+) -> None:
+    (row,), said = resting(material, taken)
+
+    assert text_of(row.amount) == amount
+    assert row.rests_on == (rests_on,)
+    assert said == (f"x: {rests_on}.",)
+
+
+@pytest.mark.parametrize(
+    ("material", "taken"),
+    [
+        ("3.0 M hydrochloric acid", "10 mL"),
+        ("{is: 36 % w/w hydrochloric acid, density: 1.18 g/mL}", "10 mL"),
+        ("36 % w/w hydrochloric acid", "10 g"),
+        ("40 % w/w sucrose", "10 mL"),  # unknown rests on nothing
+    ],
+)
+def test_amount_that_rests_on_nothing_but_the_label_says_nothing(material: str, taken: str) -> None:
+    (row,), said = resting(material, taken)
+
+    assert row.rests_on == ()
+    assert said == ()
+
+
+def test_volumes_added_up_are_named_with_each_part() -> None:
+    (whole, *parts), said = resting("{contains: {ethanol: 3 mL, water: 1 mL}}", "10 mL")
+
+    assert whole.rests_on == ()
+    assert [part.rests_on for part in parts] == [("volumes of ethanol and water added up",)] * 2
+    assert said == ("x: volumes of ethanol and water added up.",)
+
+
+def test_density_given_with_a_liquid_stands_beside_it() -> None:
+    (row,), _ = resting("{is: ethanol, density: 0.79 g/mL}", "10 mL")
+
+    assert text_of(row.strength) == "0.79 g/mL as given"

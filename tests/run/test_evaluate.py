@@ -96,7 +96,7 @@ def said(expression: str, unit: str = "", entry: Judged = SETTING) -> str:
         ('molar-mass("CuSO4·5H2O")', "", "249.68 g/mol"),
         ('molar-mass("hydrochloric acid")', "", "36.458 g/mol"),
         ("density(ether)", "", "0.7408 g/mL"),
-        ("density(acid)", "", "1.049 g/mL"),  # of the solution: 3.0 M, 10.4 % by mass
+        ("density(acid)", "", "1.050 g/mL"),  # of the solution: 3.0 M, 10.4 % by mass
         ("mass(acid)", "", "16 g"),
         ("melts(benzocaine)", "", "89.6 °C"),
         ("theoretical-yield(neutral)", "g", "2.6 g"),
@@ -205,7 +205,7 @@ SOLUTIONS = step(
         ("strength(spirit)", "8.6 mol/L"),  # 395 g/L / 46.07 g/mol
         ("strength(labelled)", "0.67 mol/L"),  # 82.0 g/L / 122.12 g/mol
         ("density(strong)", "1.179 g/mL"),
-        ("density(spirit)", "0.9304 g/mL"),  # never that of pure ethanol
+        ("density(spirit)", "0.9302 g/mL"),  # never that of pure ethanol
         ("density(labelled)", "0.820 g/mL"),
         ("density(solvents)", "0.860 g/mL"),
         ("mass(strong)", "11.79 g"),

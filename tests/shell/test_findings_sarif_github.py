@@ -10,14 +10,17 @@ from typing import TYPE_CHECKING, Any
 
 import jsonschema
 import pytest
+from markdown_it import MarkdownIt
 
 from shell.findings_builder import NOT_RUN, UNUSED, finding
 from watchglass import __version__
+from watchglass.base import codes
+from watchglass.shell.explain import page_text
 from watchglass.shell.rendering import github, sarif
 from watchglass.shell.rendering.style import Style
 
 if TYPE_CHECKING:
-    from watchglass.base.findings import Finding
+    from watchglass.base.findings import Code, Finding
 
 STYLE = Style()
 SCHEMA = Path(__file__).parents[1] / "outside" / "data" / "sarif-schema-2.1.0.json"
@@ -82,6 +85,22 @@ def test_pages_double_their_braces_too() -> None:
 
     assert "{{" in rule["help"]["markdown"]
     assert [re.findall(r"(?<!\{)\{(?:\{\{)*(?!\{)", text) for text in texts] == [[], [], []]
+
+
+@pytest.mark.parametrize("code", codes.ALL, ids=lambda code: code.number)
+def test_every_kind_of_finding_makes_a_valid_rule(code: Code) -> None:
+    (rule,) = log(finding(LEAK, code=code))["tool"]["driver"]["rules"]
+
+    assert (rule["id"], rule["name"]) == (code.number, code.name)
+
+
+@pytest.mark.parametrize("code", codes.ALL, ids=lambda code: code.number)
+def test_pages_hold_no_html(code: Code) -> None:
+    """SARIF 2.1.0, 3.11.4.2: producers shall not emit messages that contain HTML."""
+    tokens = MarkdownIt("commonmark").parse(page_text(code) or "")
+    inside = [child.type for token in tokens for child in token.children or ()]
+
+    assert not {"html_block", "html_inline"} & {*inside, *(token.type for token in tokens)}
 
 
 def test_author_s_text_makes_no_link() -> None:

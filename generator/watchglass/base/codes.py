@@ -212,6 +212,21 @@ TITRE_OUT_OF_RANGE = Code(
 OPPOSITES_POURED = Code(
     "B134", "opposites-poured-together", _ERROR, "a basic layer goes into an acid one"
 )
+PEROXIDE_FORMER_UNTESTED = Code(
+    "B135", "peroxide-former-untested", _ERROR, "a peroxide former is concentrated without a test"
+)
+SOLID_IN_FUNNEL = Code(
+    "B136", "solid-in-funnel", _WARNING, "a solid stands in a funnel whose layers are drawn"
+)
+EMULSION_TO_EXPECT = Code(
+    "B137", "emulsion-to-expect", _WARNING, "layers are shaken with a soap between them"
+)
+VESSEL_NOT_CLEAN = Code(
+    "B138", "vessel-not-clean", _WARNING, "a vessel is used again unrinsed where it matters"
+)
+PRODUCT_NOT_COLLECTED = Code(
+    "B139", "product-not-collected", _WARNING, "a product is thrown away or never taken up"
+)
 
 # -- X: acid–base and partition ------------------------------------------------------------------
 EXPECTATION_MISSED = Code(
@@ -226,6 +241,9 @@ REAGENT_WRONG_WAY = Code(
 GOES_ALONG = Code("X104", "second-goes-along", _WARNING, "a reagent takes a second substance along")
 WANTED_DISCARDED = Code(
     "X105", "wanted-discarded", _ERROR, "a layer is thrown away with what is wanted later"
+)
+INDICATOR_ELSEWHERE = Code(
+    "X107", "indicator-elsewhere", _WARNING, "an indicator changes away from the equivalence point"
 )
 NO_PH_TEST = Code("X106", "ph-not-tested", _WARNING, "a pH is adjusted and never tested")
 

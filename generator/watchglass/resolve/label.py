@@ -54,9 +54,7 @@ class Label(NamedTuple):
         return facts_of(composition, own, catalogue, also=self.also, figures=figures)
 
 
-def read_label(
-    density: YamlText | None, also: YamlText | None, findings: list[Finding]
-) -> Label:
+def read_label(density: YamlText | None, also: YamlText | None, findings: list[Finding]) -> Label:
     """Read `density:` and `also:`; what cannot be read is a finding and counts as not said."""
     at = texts.measured(density, dim.MASS_CONCENTRATION, findings) if density is not None else None
     again = _strength(also, findings) if also is not None else None
@@ -79,9 +77,7 @@ def _strength(node: YamlText, findings: list[Finding]) -> Quantity | None:
     else:
         code, said = codes.DIMENSION_WRONG, f"is {read.dimension.words}; a strength belongs here"
         help_ = "write the strength that the label gives beside the first, as in `12.1 M`"
-    findings.append(
-        Finding(code=code, span=node.span, message=f"`{read.text}` {said}", help=help_)
-    )
+    findings.append(Finding(code=code, span=node.span, message=f"`{read.text}` {said}", help=help_))
     return None
 
 
@@ -162,7 +158,9 @@ def _strengths_apart(
     solute: Substance | None = getattr(composition, "solute", None)
     if solute is None:
         return ()
-    if isinstance(composition, model.Solution) and (facts.density is None or facts.source == "water"):
+    if isinstance(composition, model.Solution) and (
+        facts.density is None or facts.source == "water"
+    ):
         between = density_between(composition.strength.quantity, also, solute)
         if between is not None and not LEAST <= between <= MOST:
             said = f"would make a solution of {shown(between / 1000, 2)} g/mL"
@@ -179,7 +177,9 @@ def _strengths_apart(
         return ()
     figure = f"{shown(said_again / also.unit.factor, 3)} {also.unit.symbol}"
     return (
-        _label_finding(node, f"`{written}` comes to {figure}, and `{node.text}` is said of it, too"),
+        _label_finding(
+            node, f"`{written}` comes to {figure}, and `{node.text}` is said of it, too"
+        ),
     )
 
 

@@ -76,8 +76,14 @@ THRESHOLDS: Mapping[str, Threshold] = {
         "share of a burette that a titre takes at least",
         "USP General Chapter 31, volumetric apparatus",
     ),
-    "indicator-step": Threshold(
-        dim.NUMBER, 1.0, "pH between an indicator's range and the equivalence point", _PRACTICE
+    "indicator-error": Threshold(
+        dim.SHARE,
+        0.01,
+        "how far an indicator's change lies from the equivalence point, over the titre",
+        _PRACTICE,
+    ),
+    "solid-in-funnel": Threshold(
+        dim.MASS, 1e-5, "mass of a solid in a separatory funnel that is worth a word", _PRACTICE
     ),
     "concentrated-acid": Threshold(
         dim.CONCENTRATION, 6000.0, "strength from which water is not poured into an acid", _PRACTICE

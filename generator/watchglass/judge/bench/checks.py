@@ -8,17 +8,22 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.findings import Related
 from watchglass.judge.bench.along import goes_along
+from watchglass.judge.bench.cleaning import vessel_not_clean
 from watchglass.judge.bench.ends import never_emptied
 from watchglass.judge.bench.expected import expectations
 from watchglass.judge.bench.fill import overfilled, too_full
+from watchglass.judge.bench.funnels import emulsion_to_expect, solid_in_funnel
 from watchglass.judge.bench.gas import gas_in_closed_vessel
 from watchglass.judge.bench.heating import (
     heat_without_cooling,
     heated_while_closed,
     hotter_than_it_boils,
 )
+from watchglass.judge.bench.indicators import indicator_elsewhere
 from watchglass.judge.bench.moving import drawn_from_nothing, no_such_layer
 from watchglass.judge.bench.opposites import opposites_poured_together
+from watchglass.judge.bench.peroxides import peroxide_former_concentrated
+from watchglass.judge.bench.products import product_not_collected
 from watchglass.judge.bench.reagents import (
     adjusts_the_wrong_way,
     no_test_after_adjusting,
@@ -49,7 +54,13 @@ BENCH_CHECKS: tuple[Callable[[Run], Iterable[Finding]], ...] = (
     goes_along,
     wanted_is_discarded,
     titre_out_of_range,
+    indicator_elsewhere,
+    solid_in_funnel,
+    emulsion_to_expect,
+    peroxide_former_concentrated,
+    vessel_not_clean,
     never_emptied,
+    product_not_collected,
     expectations,
 )
 
@@ -77,6 +88,8 @@ _CONSEQUENCES = frozenset(
         codes.GOES_ALONG,
         codes.WANTED_DISCARDED,
         codes.VESSEL_NEVER_EMPTIED,
+        codes.SOLID_IN_FUNNEL,
+        codes.PRODUCT_NOT_COLLECTED,
     )
 )
 
@@ -84,6 +97,8 @@ _CONSEQUENCES = frozenset(
 def judge_bench(run: Run) -> tuple[Finding, ...]:
     """Make every check of the bench; what follows from an earlier mistake is attached to it."""
     found = [finding for check in BENCH_CHECKS for finding in check(run)]
+    elsewhere = {f.span for f in found if f.code is codes.INDICATOR_ELSEWHERE}
+    found = [f for f in found if f.code is not codes.TITRE_OUT_OF_RANGE or f.span not in elsewhere]
     wrong_order = {f.span for f in found if f.code is codes.WATER_INTO_ACID}
     found = [
         f for f in found if f.code is not codes.HEAT_WITHOUT_COOLING or f.span not in wrong_order

@@ -27,9 +27,9 @@ def never_emptied(run: Run) -> Iterator[Finding]:
     """
     if not _says_where_things_go(run):
         return
-    asked = _asked_for(run)
+    asked = asked_for(run)
     for name, vessel in run.ledger.end.vessels.items():
-        if vessel.volume <= _DREGS or name in asked or _kept(run, vessel) or _delivers(run, name):
+        if vessel.volume <= _DREGS or name in asked or kept(run, vessel) or _delivers(run, name):
             continue
         filled = filled_by(run.ledger, len(run.ledger.entries), name)
         if not filled:
@@ -60,7 +60,7 @@ def _delivers(run: Run, name: str) -> bool:
     return bool(declared and declared.type and declared.type.type.measures == "delivers")
 
 
-def _kept(run: Run, vessel: Vessel) -> bool:
+def kept(run: Run, vessel: Vessel) -> bool:
     """Tell whether a vessel is a product's: tared, or a vial."""
     declared = run.case.procedure.vessels.get(vessel.name)
     if declared is None or declared.type is None:
@@ -68,7 +68,7 @@ def _kept(run: Run, vessel: Vessel) -> bool:
     return "tared" in declared.type.states or declared.type.type.key in ("sample-vial", "vial")
 
 
-def _asked_for(run: Run) -> frozenset[str]:
+def asked_for(run: Run) -> frozenset[str]:
     """Give the vessels that a record, an expectation or a plain mark speaks of at their end."""
     names: set[str] = set()
     for line in run.case.procedure.expectations:

@@ -1,0 +1,299 @@
+"""Findings of the bench one by one: a draft that has the fault, and the like that is sound."""
+
+from __future__ import annotations
+
+import pytest
+
+from builders import judged, steps
+
+
+def found(code: str, front: str, *written: str, laboratory: str = "") -> list[str]:
+    """Give the messages of a code."""
+    files = {"laboratory.yml": laboratory} if laboratory else None
+    entry = judged(steps(*written), front, files)
+    return [f.message for f in entry.findings if f.code.number == code]
+
+
+# ---------------------------------------------------------------- indicators
+
+
+TITRATION = """\
+materials:
+  sample: {sample}
+  titrant: {titrant}
+vessels:
+  flask: conical flask 250 mL
+  burette: burette 50 mL
+"""
+TITRATE = (
+    "Fill {{burette}} with {{50 mL titrant -> burette}}; put {{25.00 mL sample -> flask}} into {{flask}}.",
+    "{{titrate flask with titrant from burette to {0}}}",
+)
+
+
+@pytest.mark.parametrize(
+    ("sample", "titrant", "indicator", "wrong"),
+    [
+        # Textbook pairs: weak acid with phenolphthalein, weak base with methyl red or orange.
+        ("0.100 M acetic acid", "0.100 M sodium hydroxide", "phenolphthalein", False),
+        ("0.100 M acetic acid", "0.100 M sodium hydroxide", "methyl-orange", True),
+        ("0.100 M acetic acid", "0.100 M sodium hydroxide", "bromothymol-blue", True),
+        ("0.100 M ammonia", "0.100 M hydrochloric acid", "methyl-red", False),
+        ("0.100 M ammonia", "0.100 M hydrochloric acid", "phenolphthalein", True),
+        ("0.100 M hydrochloric acid", "0.100 M sodium hydroxide", "methyl-orange", False),
+        ("0.100 M hydrochloric acid", "0.100 M sodium hydroxide", "phenolphthalein", False),
+        ("0.0500 M sodium carbonate", "0.100 M hydrochloric acid", "methyl-orange", False),
+        ("0.100 M ammonium chloride", "0.100 M sodium hydroxide", "thymolphthalein", True),
+    ],
+)
+def test_indicator_away_from_the_equivalence_point_is_found(
+    sample: str, titrant: str, indicator: str, wrong: bool
+) -> None:
+    front = TITRATION.format(sample=sample, titrant=titrant)
+    said = found("X107", front, *(line.format(indicator) for line in TITRATE))
+
+    assert bool(said) is wrong
+
+
+def test_equivalence_point_is_told_with_its_ph() -> None:
+    # Acetate of 0.050 mol/L: pH = 7 + (4.76 + log10 0.050) / 2 = 8.73.
+    front = TITRATION.format(sample="0.100 M acetic acid", titrant="0.100 M sodium hydroxide")
+    (said,) = found("X107", front, *(line.format("methyl-orange") for line in TITRATE))
+
+    assert "25.0 mL and pH 8.7" in said
+
+
+def test_titrant_that_gives_no_sharp_change_is_told() -> None:
+    front = TITRATION.format(sample="0.100 M ammonium chloride", titrant="0.100 M sodium hydroxide")
+    (said,) = found("X107", front, *(line.format("thymolphthalein") for line in TITRATE))
+
+    assert "nowhere sharply" in said
+
+
+def test_laboratory_can_allow_more() -> None:
+    front = TITRATION.format(sample="0.100 M acetic acid", titrant="0.100 M sodium hydroxide")
+    written = [line.format("bromothymol-blue") for line in TITRATE]
+
+    assert found("X107", front, *written, laboratory="thresholds: {indicator-error: 10 %}") == []
+
+
+# ---------------------------------------------------------------- peroxides
+
+
+ETHER = """\
+materials:
+  acid: benzoic acid
+  ether: {0}
+vessels:
+  flask: round-bottom flask 100 mL, tared
+  still: round-bottom flask 100 mL
+"""
+DISSOLVE = (
+    "Put {0.50 g acid -> flask} and {30 mL ether -> flask} into {flask}; {swirl flask, open}."
+)
+
+
+@pytest.mark.parametrize("ether", ["diethyl ether", "tetrahydrofuran", "1,4-dioxane"])
+@pytest.mark.parametrize(
+    "act", ["evaporate flask, in hood", "distil flask at 30–110 °C into still"]
+)
+def test_peroxide_former_is_not_concentrated_untested(ether: str, act: str) -> None:
+    (said,) = found("B135", ETHER.format(ether), DISSOLVE, f"{{{act}}}")
+
+    assert ether in said
+
+
+@pytest.mark.parametrize(
+    "ether", ["tert-butyl methyl ether", "ethyl acetate", "dichloromethane", "ethanol"]
+)
+def test_resistant_solvent_needs_no_test(ether: str) -> None:
+    assert found("B135", ETHER.format(ether), DISSOLVE, "{evaporate flask, in hood}") == []
+
+
+@pytest.mark.parametrize("tested", ["test ether peroxides", "test flask peroxides"])
+def test_test_of_bottle_or_vessel_serves(tested: str) -> None:
+    front = ETHER.format("diethyl ether")
+
+    assert found("B135", front, DISSOLVE, f"{{{tested}}}", "{evaporate flask, in hood}") == []
+
+
+def test_test_after_the_evaporation_is_too_late() -> None:
+    front = ETHER.format("diethyl ether")
+
+    assert found("B135", front, DISSOLVE, "{evaporate flask, in hood}", "{test ether peroxides}")
+
+
+def test_traces_of_a_peroxide_former_do_not_count() -> None:
+    front = ETHER.format("diethyl ether").replace("vessels", "  toluene: toluene\nvessels")
+    steps_ = "Put {0.50 g acid -> flask}, {2 mL ether -> flask} and {50 mL toluene -> flask} in."
+
+    assert found("B135", front, steps_, "{swirl flask, open}", "{evaporate flask, in hood}") == []
+
+
+# ---------------------------------------------------------------- funnels
+
+
+SALT = """\
+materials:
+  salt: 0.50 M sodium benzoate
+  strong: 3.0 M hydrochloric acid
+  ether: tert-butyl methyl ether
+vessels:
+  funnel: separatory funnel 125 mL
+  A: beaker 100 mL
+"""
+ACIDIFY = "Put {30 mL salt -> funnel} and {8 mL strong -> funnel} in and {swirl funnel, open}."
+
+
+def test_solid_at_the_tap_is_found_with_its_mass() -> None:
+    # 15 mmol of benzoic acid is 1.83 g; 3.4 g/L stays in 38 mL of water, so about 1.7 g separates.
+    (said,) = found("B136", SALT, ACIDIFY, "Draw {funnel.aqueous -> A} into {A}.")
+
+    assert said.startswith("1.7 g of benzoic acid")
+
+
+def test_solid_that_the_solvent_takes_up_is_no_matter() -> None:
+    more = "Add {40 mL ether -> funnel} and {swirl funnel, open; settle funnel}."
+
+    assert found("B136", SALT, ACIDIFY, more, "Draw {funnel.aqueous -> A} into {A}.") == []
+
+
+def test_solid_in_a_beaker_is_no_matter() -> None:
+    beaker = ACIDIFY.replace("funnel", "A")
+
+    assert found("B136", SALT, beaker, "{decant A into funnel}") == []
+
+
+SOAP = """\
+materials:
+  soap: {0}
+  ether: tert-butyl methyl ether
+vessels:
+  funnel: separatory funnel 125 mL
+"""
+
+
+@pytest.mark.parametrize(
+    ("soap", "verb", "slow"),
+    [
+        ("0.050 M sodium dodecyl sulfate", "shake", True),
+        ("0.050 M sodium dodecyl sulfate", "swirl", False),
+        ("0.00001 M sodium dodecyl sulfate", "shake", False),
+        ("0.050 M sodium acetate", "shake", False),
+        ("0.050 M sodium benzoate", "shake", False),
+        ("0.050 M sodium hydrogencarbonate", "shake", False),
+    ],
+)
+def test_soap_that_is_shaken_is_found(soap: str, verb: str, slow: bool) -> None:
+    charge = "Put {30 mL ether -> funnel} and {20 mL soap -> funnel} in."
+
+    assert bool(found("B137", SOAP.format(soap), charge, f"{{{verb} funnel}}")) is slow
+
+
+# ---------------------------------------------------------------- vessels used again
+
+
+AGAIN = """\
+materials:
+  strong: 1.00 M hydrochloric acid
+  weak: 0.100 M sodium hydroxide
+  ether: tert-butyl methyl ether
+  drier: anhydrous magnesium sulfate
+  water: water
+vessels:
+  flask: {0}
+  A: beaker 250 mL
+  B: beaker 250 mL
+"""
+TWICE = (
+    "Put {40 mL strong -> flask} in and pour {flask -> A} out.",
+    "Put {40 mL weak -> flask} in and pour {flask -> B} out.",
+)
+
+
+@pytest.mark.parametrize(
+    ("vessel", "matters"),
+    [
+        ("volumetric flask 100 mL", True),
+        ("burette 50 mL", True),
+        ("conical flask 100 mL, tared", True),
+        ("conical flask 100 mL, oven-dried", True),
+        ("conical flask 100 mL", False),
+        ("beaker 100 mL", False),
+    ],
+)
+def test_vessel_used_again_unrinsed_is_found_where_it_matters(vessel: str, matters: bool) -> None:
+    assert bool(found("B138", AGAIN.format(vessel), *TWICE)) is matters
+
+
+@pytest.mark.parametrize(
+    "rinse", ["with 10 mL water into A", "with 10 mL water to aqueous-neutral"]
+)
+def test_rinsed_vessel_is_clean(rinse: str) -> None:
+    first, second = TWICE
+    front = AGAIN.format("volumetric flask 100 mL")
+
+    assert found("B138", front, first, f"{{rinse flask {rinse}}}", second) == []
+
+
+def test_same_liquid_again_needs_no_rinse() -> None:
+    first, _ = TWICE
+
+    assert found("B138", AGAIN.format("volumetric flask 100 mL"), first, first) == []
+
+
+def test_fresh_pass_begins_with_clean_vessels() -> None:
+    first, second = TWICE
+    front = AGAIN.format("volumetric flask 100 mL")
+
+    assert found("B138", front, first, "{again 1, 2 more times, fresh}") == []
+    assert found("B138", front, f"{first} {second}", "{again 1, fresh}") != []
+
+
+def test_dried_liquid_does_not_run_into_what_held_water() -> None:
+    front = AGAIN.format("conical flask 100 mL")
+    wet = "Put {20 mL water -> flask} in and pour {flask -> A} out."
+    dry = "Put {20 mL ether -> B} in, {dry B with 1 g drier} and {decant B into flask}."
+
+    assert found("B138", front, wet, dry) != []
+    assert found("B138", front, dry) == []
+
+
+# ---------------------------------------------------------------- products
+
+
+ESTER = """\
+materials:
+  alcohol: 3-methylbutan-1-ol
+  acid: acetic acid
+  water: water
+vessels:
+  flask: round-bottom flask 50 mL
+  vial: sample vial 20 mL
+reactions:
+  ester: {equation: "3-methylbutan-1-ol + acetic acid -> isopentyl acetate + water", limiting: alcohol}
+"""
+MAKE = "Put {5.0 mL alcohol -> flask} and {8.0 mL acid -> flask} in, {reflux flask, under condenser; react ester in flask}."
+
+
+@pytest.mark.parametrize(
+    ("end", "lost"),
+    [
+        ("{discard flask to non-halogenated-organic}", True),
+        ("{discard flask to non-halogenated-organic} and {weigh vial}", True),
+        ("{collect flask}", False),
+        ("Pour {flask -> vial} over; {collect vial}.", False),
+        ("{weigh flask}", False),
+        ("Leave it.", False),
+    ],
+)
+def test_product_that_nobody_takes_up_is_found(end: str, lost: bool) -> None:
+    assert bool(found("B139", ESTER, MAKE, end)) is lost
+
+
+def test_lost_product_points_to_where_it_formed() -> None:
+    entry = judged(steps(MAKE, "{discard flask to non-halogenated-organic}"), ESTER)
+    (finding,) = (f for f in entry.findings if f.code.number == "B139")
+
+    assert "isopentyl acetate" in finding.message
+    assert "react ester" in finding.related[0].span.text
