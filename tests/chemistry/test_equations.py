@@ -83,6 +83,13 @@ def test_equation_is_split_into_coefficients_and_species(
         ("0 A -> B", "0", "`0` is no coefficient", None),
         ("0.5 O2 -> B", "0.5", "`0.5` is no coefficient", "write `1/2 O2`"),
         ("½ O2 -> B", "½", "`½` is no coefficient", "write `1/2 O2`"),
+        ("A + 0 B -> C", "0", "`0` is no coefficient", None),
+        ("A -> 2.5 B", "2.5", "`2.5` is no coefficient", "write `5/2 B`"),
+        ("A -> B + 3", "3", "`3` counts no species", None),
+        ("A -> B <=> C", "<=>", "a second arrow", "write one equation for each step"),
+        ("A -> B + ", "+", "a species is missing beside `+`", None),
+        ("=> B", "=>", "`=>` is no arrow", "write ` -> `"),
+        ("A =>", "=>", "`=>` is no arrow", "write ` -> `"),
         (
             "1/0 A -> B",
             "1/0",
@@ -98,7 +105,17 @@ def test_equation_fault_says_what_is_wrong_and_where(
 
     assert isinstance(fault, EquationFault)
     assert text[fault.start : fault.end] == marked
+    assert fault.end - fault.start == len(marked)
     assert (fault.message, fault.help) == (message, help_)
+
+
+def test_equation_at_the_limits_is_split() -> None:
+    longest = split_equation("A" * 1995 + " -> B")
+    widest = split_equation(" + ".join("A" * 20) + " -> B")
+
+    assert isinstance(longest, EquationText)
+    assert isinstance(widest, EquationText)
+    assert len(widest.left) == 20
 
 
 def test_equation_too_long_is_refused_beyond_the_limit() -> None:

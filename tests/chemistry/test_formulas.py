@@ -64,6 +64,23 @@ def formula(text: str) -> Formula:
         ("+", "+", "`+` cannot stand in a formula"),
         ("e^-", "e^-", "`e^-` is the electron, not a substance"),
         ("((((((((((H))))))))))", "(", "more than 8 brackets in one another"),
+        ("Na + Cl", "Na + Cl", "this is a sum of substances, not one formula"),
+        ("NaCl ", " ", "a formula holds no space"),
+        ("Nacl", "cl", "`cl` begins without a capital letter, as no element does"),
+        ("Naxyz", "xyz", "`xyz` begins without a capital letter, as no element does"),
+        ("CuSO4·.5H2O", ".", "`.` cannot stand in a formula"),
+        ("CuSO4·0.0H2O", "0.0", "a multiplier of 0"),
+        ("NaCl·2", "2", "`2` has nothing to multiply"),
+        ("3", "3", "`3` has nothing to multiply"),
+        ("1.5H2O", "1.5", "`1.5` multiplies the whole formula"),
+        ("2(", "2", "`2` multiplies the whole formula"),
+        ("C12.5H2", ".", "`.` cannot stand in a formula"),
+        ("C00", "00", "a count of 0"),
+        ("H2O+", "H2O+", "`H2O+` has a charge without `^`"),
+        ("Cr2O7--", "Cr2O7--", "`Cr2O7--` has a charge without `^`"),
+        ("Fe^100+", "100+", "`100+` is no charge"),
+        ("Fe^x", "x", "`x` is no charge"),
+        ("Fe^++", "++", "`++` has more than one sign"),
     ],
 )
 def test_fault_says_what_is_wrong_and_where(text: str, marked: str, message: str) -> None:
@@ -72,6 +89,7 @@ def test_fault_says_what_is_wrong_and_where(text: str, marked: str, message: str
     assert isinstance(fault, FormulaFault)
     assert fault.message == message
     assert text[fault.start : fault.end] == marked
+    assert fault.end - fault.start == len(marked)
 
 
 @pytest.mark.parametrize(
@@ -97,6 +115,9 @@ def test_fault_says_what_is_wrong_and_where(text: str, marked: str, message: str
         ("Fe^+3", "Fe^3+"),
         ("Fe^(3+)", "Fe^3+"),
         ("Fe^+++", "Fe^3+"),
+        ("Ca^++", "Ca^2+"),
+        ("SO4^--", "SO4^2-"),
+        ("Na^(+)", "Na^+"),
         ("Hg22+", "Hg2^2+"),
         (" H2O", "H2O"),
         ("NaCl(aq)", "NaCl"),
@@ -139,6 +160,31 @@ def test_number_before_a_formula_is_shown_how_to_stand_in_an_equation() -> None:
 
     assert isinstance(fault, FormulaFault)
     assert fault.help == "put a space after the number in an equation: `2 NaOH`"
+
+
+@pytest.mark.parametrize(
+    ("text", "molar_mass"),
+    [
+        ("C" * 400, 400 * 12.011),
+        ("((((((((H))))))))", 1.008),
+        ("H9999", 9999 * 1.008),
+        ("NaCl·9999H2O", 58.44 + 9999 * 18.015),
+        ("NaCl·0.25H2O", 58.44 + 0.25 * 18.015),
+        ("NaCl·99.75H2O", 58.44 + 99.75 * 18.015),
+    ],
+    ids=["signs", "brackets", "count", "multiplier", "quarter", "decimals"],
+)
+def test_formula_at_the_limit_is_read(text: str, molar_mass: float) -> None:
+    # IUPAC's abridged atomic weights of H, C, O, Na and Cl: 1.008, 12.011, 15.999, 22.990, 35.45.
+    assert formula(text).molar_mass == pytest.approx(molar_mass, rel=1e-5)
+
+
+@pytest.mark.parametrize(
+    ("text", "charge"),
+    [("Na^+", 1), ("Cl^-", -1), ("Fe^3+", 3), ("P3O10^5-", -5), ("Na^99-", -99)],
+)
+def test_charge_is_read_with_its_sign(text: str, charge: int) -> None:
+    assert formula(text).charge == charge
 
 
 def test_formula_too_long_is_refused_beyond_the_limit() -> None:

@@ -121,7 +121,7 @@ ROUGHLY = Heat(-100e3, "mole", "none", order_only=True)
         (lambda: solid_to_weigh(amount=2.0, molar_mass=0.1, purity=1.0), 0.2),
         # heat
         (lambda: released([(0.0, ROUGHLY), (0.5, ROUGHLY)]).heat, 50e3),
-        (lambda: heat_capacity(), 0.0),
+        (heat_capacity, 0.0),
         (lambda: temperature_rise(heat=1.0, capacity=0.5), 2.0),
         (lambda: mixed_temperature([Body(0.0, 4180.0, 0.5), Body(0.5, 0.5, 0.5)]), 0.5),
         (lambda: ice_to_take_up(0.0), 0.0),

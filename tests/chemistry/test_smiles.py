@@ -32,6 +32,24 @@ from watchglass.chemistry.smiles import Atoms, SmilesFault, count_atoms
         ("C1CC%11CC1CC%11", "C7H12"),
         ("[CH3:1][CH3:2]", "C2H6"),
         ("C$C", "C2"),
+        ("C[2H]", "CH3D"),
+        ("C1CC1C2CC2", "C6H10"),  # a number closed may begin another ring
+        ("C1CC1C1CC1", "C6H10"),
+        ("C%01CC1", "C3H6"),
+        ("C0CC0", "C3H6"),
+        ("C1CC=1", "C3H4"),
+        ("C=1CC1", "C3H4"),
+        ("C(C)(C)(C)C", "C5H12"),
+        ("[NH4+].[Cl-]", "H4ClN"),
+        ("[Fe+2]", "Fe^2+"),
+        ("[Fe++]", "Fe^2+"),
+        ("[PH]", "HP"),
+        ("[CH0]", "C"),
+        ("CS(C)=O", "C2H6OS"),
+        ("CN=[N+]=[N-]", "CH3N3"),
+        ("OB(O)O", "H3BO3"),
+        ("FC(Cl)(Br)I", "CBrClFI"),
+        ("C\\C=C/C", "C4H8"),
     ],
 )
 def test_open_structure_is_counted(structure: str, expected: str) -> None:
@@ -105,9 +123,38 @@ def test_aromatic_structure_is_counted(structure: str, expected: str) -> None:
         ("[D]", "D", "`D` is no element"),
         ("[13C]", "13C", "isotopes are counted for hydrogen only"),
         ("[HH]", "H", "a hydrogen has no hydrogens"),
+        ("C[2HH]", "H", "a hydrogen has no hydrogens"),
+        ("C[3HH2]", "H2", "a hydrogen has no hydrogens"),
+        ("[4H]", "4H", "isotopes are counted for hydrogen only"),
+        ("C[2D]", "D", "`D` is no element"),
+        ("[T]", "T", "`T` is no element"),
+        ("c1ccccc1:C", ":", "`:` joins aromatic atoms only"),
+        ("C:c1ccccc1", ":", "`:` joins aromatic atoms only"),
+        ("C()C", "()", "nothing stands in the brackets"),
+        ("C11C", "1", "ring `1` joins atoms that are joined"),
+        ("C1C1C", "1", "ring `1` joins atoms that are joined"),
+        ("C=1CC-1C", "1", "ring `1` has two kinds of bond"),
+        ("C1CCC", "1", "ring `1` is not closed"),
+        ("CC%12CC", "%12", "ring `12` is not closed"),
+        ("C1CC2CCC2", "1", "ring `1` is not closed"),
+        ("CC[C(C)]C", "[C(C)]", "`[C(C)]` is no atom"),
+        ("C[CCCCCCCCCCCCCCCCCC]", "[CCCCCCCCCCCCCCCCCC]", "`[CCCCCCCCCCCCCCCCCC]` is no atom"),
+        ("C[CCCCCCCCCCCCCCCCCCC]", "[CCCCCCCCCCCCCCCCCCC]", "`[…]` is no atom"),
+        ("N(C)(C)(C)(C)(C)C", "N", "`N` has 6 bonds, more than it can without brackets"),
+        ("CC(.", ".", "a dot stands inside a branch"),
+        ("C..C", ".", "no atom stands before `.`"),
+        ("CC)C", ")", "`)` closes nothing"),
+        ("CC(CC(C", "(", "`(` is not closed"),
         ("C(C)(C)(C)(C)C", "C", "`C` has 5 bonds, more than it can without brackets"),
         ("OCl(=O)(=O)=O", "Cl", "`Cl` has 7 bonds, more than it can without brackets"),
         ("c1cccc1", "c", "the double bonds of the aromatic ring do not come out"),
+        ("C%11%11C", "%11", "ring `11` joins atoms that are joined"),
+        ("C=%11CC-%11", "%11", "ring `11` has two kinds of bond"),
+        (
+            "O.[cH]1[cH][cH][cH][cH]1",
+            "[cH]",
+            "the double bonds of the aromatic ring do not come out",
+        ),
         ("n1cccc1", "n", "the double bonds of the aromatic ring do not come out"),
         ("c1ccc2c(c1)c1ccccc1c2", "c", "the double bonds of the aromatic ring do not come out"),
     ],
@@ -120,6 +167,44 @@ def test_structure_that_cannot_be_counted_is_refused(
     assert isinstance(fault, SmilesFault)
     assert fault.message == message
     assert structure[fault.start : fault.end] == marked
+    assert fault.end - fault.start == len(marked)
+
+
+@pytest.mark.parametrize(
+    ("structure", "help_"),
+    [
+        ("[D]", "write `[2H]`"),
+        ("[T]", "write `[3H]`"),
+        ("[Xx]", None),
+        ("[nh4]", "write an atom in brackets as `[NH4+]` or `[Fe+3]`"),
+        ("C C", None),
+        (
+            "C(C)(C)(C)(C)C",
+            "look for a bond too many, or write the atom in brackets with its hydrogens",
+        ),
+        (
+            "n1cccc1",
+            "write the hydrogen of a nitrogen in the ring, as `[nH]`, or the ring with `=`",
+        ),
+    ],
+)
+def test_refused_structure_is_shown_how_to_be_written(structure: str, help_: str | None) -> None:
+    fault = count_atoms(structure)
+
+    assert isinstance(fault, SmilesFault)
+    assert fault.help == help_
+
+
+@pytest.mark.parametrize(
+    ("structure", "carbons"),
+    [("C" * 600, 600), ("C" + "(C" * 100 + ")" * 100, 101)],
+    ids=["signs", "branches"],
+)
+def test_structure_at_the_limit_is_counted(structure: str, carbons: int) -> None:
+    counted = count_atoms(structure)
+
+    assert isinstance(counted, Atoms)
+    assert dict(counted.composition)["C"] == carbons
 
 
 def test_structure_too_long_is_refused_beyond_the_limit() -> None:

@@ -202,6 +202,10 @@ def test_nothing_is_ahead_of_the_wrong_titrant() -> None:
     assert equivalence_points(PhaseSystem((), -1e-3, 10e-6), ACID) == ()
 
 
+def test_water_has_no_equivalence_point() -> None:
+    assert equivalence_points(PhaseSystem((), 0.0, 1e-3), ALKALI) == ()
+
+
 def test_weak_titrant_has_no_equivalence_points_told() -> None:
     assert equivalence_points(SODA, SAMPLE._replace(strong=1e-3)) is None
 

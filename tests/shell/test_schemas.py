@@ -142,7 +142,7 @@ def test_empty_file_holds_to_its_schema(name: str) -> None:
         ("procedure", "{title: A, code: A-1, materials: {leaves: {composition: unknown}}}"),
         ("procedure", "{title: A, code: A-1, materials: {x: {is: water, provided: 3 tablets}}}"),
         ("laboratory", "{measures: {drop: 0.05 mL, scoop: , tip: {plural: tips}}}"),
-        ("laboratory", "{thresholds: {indicator-step: 1, funnel-fill: 60 %}}"),
+        ("laboratory", "{thresholds: {indicator-error: 1 %, funnel-fill: 60 %}}"),
         ("substances", "{nitric-oxide: {names: NO, acid: 4.20, density: 1.17 g/mL at 20 °C}}"),
         ("schedule", "[{week: 2, procedure: [A-1, 12]}]"),
     ],

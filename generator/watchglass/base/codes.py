@@ -61,7 +61,10 @@ FUNCTION_UNFIT = Code("N167", "function-unfit", _ERROR, "a function is given wha
 PLACES_DIFFER = Code("N168", "places-differ", _ERROR, "a sentence names two places for one charge")
 MATERIAL_UNUSED = Code("N180", "material-unused", _WARNING, "a material is declared and never used")
 VESSEL_UNUSED = Code("N181", "vessel-unused", _WARNING, "a vessel is declared and never used")
-NOT_YET_RUN = Code("N190", "not-yet-run", _NOTE, "acts are read and checked, not yet run")
+NOT_YET_RUN = Code("N190", "not-yet-run", _NOTE, "acts are read and checked, not run")
+PRODUCT_VESSEL_UNKNOWN = Code(
+    "N200", "product-vessel-unknown", _ERROR, "another procedure has no such vessel"
+)
 CODE_TWICE = Code("N191", "code-twice", _ERROR, "two procedures have one code")
 ACCEPT_WITHOUT_REASON = Code(
     "N192", "accept-without-reason", _ERROR, "a finding is accepted without a reason"

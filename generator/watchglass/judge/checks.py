@@ -9,7 +9,7 @@ from watchglass.judge.expected import expectations_at_desk
 from watchglass.judge.formed import more_than_forms, no_product
 from watchglass.judge.limiting import not_limiting
 from watchglass.judge.measuring import measuring
-from watchglass.judge.not_yet import not_yet_run, too_many_passes
+from watchglass.judge.passes import too_many_passes
 from watchglass.judge.period import time_over_period
 from watchglass.judge.provided import provided, volume_without_density
 from watchglass.judge.react_place import reactant_not_in_vessel
@@ -35,7 +35,6 @@ CHECKS: tuple[Callable[[Case], Iterable[Finding]], ...] = (
     expectations_at_desk,
     time_over_period,
     too_many_passes,
-    not_yet_run,
 )
 
 

@@ -89,6 +89,7 @@ class BenchStep:
     Attributes:
         number: Its number as printed.
         turn: 1 the first time, 2 the next.
+        branch: Words of the `:::if` it stands in, whose outcome is dropped; else empty.
         acts: What was done.
         after: What the vessels hold that the step touched.
     """
@@ -97,6 +98,7 @@ class BenchStep:
     turn: int
     acts: tuple[Act, ...]
     after: tuple[Holding, ...]
+    branch: str = ""
 
 
 def bench_steps(ledger: Ledger, known: Knowledge) -> tuple[BenchStep, ...]:
@@ -104,16 +106,17 @@ def bench_steps(ledger: Ledger, known: Knowledge) -> tuple[BenchStep, ...]:
     steps: list[BenchStep] = []
     group: list[Entry] = []
     for entry in ledger.entries:
-        if group and (group[0].happening.step, group[0].happening.turn) != (
-            entry.happening.step,
-            entry.happening.turn,
-        ):
+        if group and _pass_of(group[0]) != _pass_of(entry):
             steps.append(_step(group, ledger, known))
             group = []
         group.append(entry)
     if group:
         steps.append(_step(group, ledger, known))
     return tuple(steps)
+
+
+def _pass_of(entry: Entry) -> tuple[int, int, str]:
+    return entry.happening.step, entry.happening.turn, entry.branch
 
 
 def _step(group: list[Entry], ledger: Ledger, known: Knowledge) -> BenchStep:
@@ -129,7 +132,8 @@ def _step(group: list[Entry], ledger: Ledger, known: Knowledge) -> BenchStep:
     after = tuple(
         holding for name in touched for holding in holdings(bench.vessel(name), ledger, known)
     )
-    return BenchStep(group[0].happening.step, group[0].happening.turn, acts, after)
+    first = group[0]
+    return BenchStep(first.happening.step, first.happening.turn, acts, after, first.branch)
 
 
 def _touched(entry: Entry, bench: Bench) -> Iterator[str]:

@@ -44,7 +44,8 @@ def ledger_data(
     """Give a procedure's ledgers as plain data.
 
     Args:
-        ledgers: By end of the open amounts: `low`, and `high` where it differs.
+        ledgers: By end of the open amounts: `low`, and `high` where it differs; with a secret
+            sample by candidate, too: `sample is caffeine, low`.
         known: Names of the components.
         code: The procedure's code.
         title: Its title.
@@ -82,6 +83,7 @@ def _run(ledger: Ledger, known: Knowledge) -> Data:
     entries = []
     before = ledger.start
     for entry in ledger.entries:
+        before = before if entry.since is None else entry.since
         changed = {
             name: _vessel(vessel)
             for name, vessel in entry.bench.vessels.items()
@@ -94,6 +96,7 @@ def _run(ledger: Ledger, known: Knowledge) -> Data:
                 "turn": entry.happening.turn,
                 "act": place.text,
                 "start": place.start,
+                "branch": entry.branch or None,
                 "results": [_result(result, known) for result in entry.results],
                 "vessels": changed,
             }

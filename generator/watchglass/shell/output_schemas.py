@@ -85,6 +85,7 @@ def ledger_schema() -> Schema:
         turn=_WHOLE,
         act={"type": "string"},
         start=_WHOLE,
+        branch={"anyOf": [{"type": "null"}, {"type": "string"}]},
         results={"type": "array", "items": result},
         vessels=vessels,
     )

@@ -5,6 +5,7 @@ from __future__ import annotations
 import gc
 from contextlib import contextmanager
 from pathlib import Path
+from types import MappingProxyType
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.spans import Source
@@ -16,16 +17,20 @@ from watchglass.catalogue.ware import decode_stock
 from watchglass.judge.accept import can_be_accepted, settle
 from watchglass.judge.bench.checks import judge_bench
 from watchglass.judge.bench.run import Run
+from watchglass.judge.bench.samples import Sample, judge_samples
 from watchglass.judge.case import Case, faulty_body
 from watchglass.judge.checks import judge
+from watchglass.judge.continued import Product, carried, codes_continued, faults_of_continued
 from watchglass.judge.sets import Appointment, judge_set
 from watchglass.judge.stocks import judge_stocks
 from watchglass.read.procedure import read_page, read_procedure
 from watchglass.resolve.laboratory import Laboratory, read_laboratory
+from watchglass.resolve.model import Secret
 from watchglass.resolve.page import resolve_page
 from watchglass.resolve.procedure import resolve
 from watchglass.resolve.scaling import rescale
 from watchglass.resolve.schedule import Slot, read_schedule
+from watchglass.resolve.secrets import Opened, opened
 from watchglass.run.bench.bench import has_open_amounts, run_bench
 from watchglass.run.bench.knowledge import Knowledge
 from watchglass.run.cards import page_card, procedure_card
@@ -43,6 +48,7 @@ if TYPE_CHECKING:
     from watchglass.catalogue.substances import Substance
     from watchglass.read.syntax import ProcedureSyntax
     from watchglass.resolve.model import Acceptance, Procedure
+    from watchglass.run.bench.state import Vessel
     from watchglass.run.cards import Card
 
 
@@ -70,7 +76,9 @@ class Judged(NamedTuple):
     Attributes:
         path: Of its source within the set.
         case: The procedure with its course and usage.
-        run: How it went at the bench; None where an error stands before that.
+        run: How it went at the bench; None where an error stands before that. What a secret sample
+            brings is not known in it.
+        samples: How it went with each candidate, where there are secret samples.
         findings: What is open.
         accepted: What was found and accepted.
         card: Its digest.
@@ -82,6 +90,7 @@ class Judged(NamedTuple):
     findings: tuple[Finding, ...]
     accepted: tuple[tuple[Finding, Acceptance], ...]
     card: Card
+    samples: tuple[Sample, ...] = ()
 
     @property
     def procedure(self) -> Procedure:
@@ -150,10 +159,13 @@ def analyse(files: SetFiles, root: Path, *, scale: float | None = None) -> Analy
 def _analyse(files: SetFiles, root: Path, scale: float | None) -> Analysis:
     around, found = surroundings(files.sources)
     around = around._replace(scale=scale)
-    procedures = tuple(
-        analyse_procedure(path, source, around)
-        for path, source in files.sources.items()
-        if path.startswith("procedures/") and path.endswith(".md")
+    procedures = analyse_procedures(
+        {
+            path: source
+            for path, source in files.sources.items()
+            if path.startswith("procedures/") and path.endswith(".md")
+        },
+        around,
     )
     pages = tuple(
         analyse_page(path, source, around)
@@ -245,7 +257,7 @@ def _check_files(
             if inside.startswith("pages/"):
                 findings += analyse_page(name, source, around).findings
             else:
-                judged = analyse_procedure(name, source, around)
+                judged = _single(name, source, around, root)
                 findings += judged.findings
                 accepted += [(finding, a.reason) for finding, a in judged.accepted]
     return findings
@@ -257,7 +269,22 @@ def judge_file(path: Path, *, scale: float | None = None) -> Judged:
     around, _ = surroundings(read_surroundings(root).sources if root is not None else {})
     files = from_bytes({path.as_posix(): path.read_bytes()})
     source = next(iter(files.sources.values()), Source.of(path.as_posix(), ""))
-    return analyse_procedure(path.as_posix(), source, around._replace(scale=scale))
+    return _single(path.as_posix(), source, around._replace(scale=scale), root)
+
+
+def _single(name: str, source: Source, around: Surroundings, root: Path | None) -> Judged:
+    """Take a single file through the stages, and before it those of its set that it goes on with."""
+    judged = analyse_procedure(name, source, around)
+    if root is None or not codes_continued(judged.procedure):
+        return judged
+    others = {
+        path: other
+        for path, other in read_set(root).sources.items()
+        if path.startswith("procedures/") and path.endswith(".md")
+    }
+    others = {path: other for path, other in others.items() if other.text != source.text}
+    products = {p.procedure.head.code: product_of(p) for p in analyse_procedures(others, around)}
+    return analyse_procedure(name, source, around, products)
 
 
 def read_surroundings(root: Path) -> SetFiles:
@@ -335,8 +362,38 @@ def _stocks(node: YamlNode | None) -> tuple[dict[str, Stock], tuple[Finding, ...
     return stocks, tuple(findings)
 
 
-def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged:
-    """Take one procedure through the stages."""
+def analyse_procedures(sources: Mapping[str, Source], around: Surroundings) -> tuple[Judged, ...]:
+    """Take procedures through the stages; those that go on with the product of another come after it."""
+    done = {path: analyse_procedure(path, source, around) for path, source in sources.items()}
+    waiting = [path for path, judged in done.items() if codes_continued(judged.procedure)]
+    while waiting:
+        held = {done[path].procedure.head.code for path in waiting}
+        ready = [p for p in waiting if not held.intersection(codes_continued(done[p].procedure))]
+        if not ready:
+            break  # they go round in a circle: the check of the set says so
+        products = {
+            judged.procedure.head.code: product_of(judged)
+            for path, judged in done.items()
+            if path not in waiting
+        }
+        for path in ready:
+            done[path] = analyse_procedure(path, sources[path], around, products)
+        waiting = [path for path in waiting if path not in ready]
+    return tuple(done.values())
+
+
+def product_of(judged: Judged) -> Product:
+    """Give what others may go on with."""
+    return Product(judged.procedure, judged.run.ledger.end if judged.run is not None else None)
+
+
+def analyse_procedure(
+    path: str,
+    source: Source,
+    around: Surroundings,
+    products: Mapping[str, Product] = MappingProxyType({}),
+) -> Judged:
+    """Take one procedure through the stages; `products` are those of others, by code."""
     syntax, found = read_procedure(source, around.catalogue.measures)
     procedure, more = resolve(syntax, around.catalogue, around.laboratory)
     earlier = (*found, *more)
@@ -347,11 +404,20 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
         scaled, more = rescale(procedure, factor, around.catalogue, around.laboratory)
         earlier = (*earlier, *more)
         case = _run(scaled, around, faulty=faulty)
-    found = (*earlier, *judge(case, draft))
-    run = None
+    found = (*earlier, *judge(case, draft), *faults_of_continued(case.procedure, products))
+    run: Run | None = None
+    samples: tuple[Sample, ...] = ()
     if all(can_be_accepted(f) for f in found):  # else there is no knowing what was meant
-        run = _at_the_bench(case, around)
-        found = (*found, *judge_bench(run))
+        brought = carried(case.procedure, products)
+        run = _at_the_bench(case, around, brought)
+        samples = tuple(
+            Sample(
+                _letters(way, case),
+                _at_the_bench(case._replace(procedure=way.procedure), around, brought),
+            )
+            for way in opened(case.procedure, around.catalogue)
+        )
+        found = (*found, *(judge_samples(samples) if samples else judge_bench(run)))
     settled = settle(found, procedure.acceptances)
     return Judged(
         path=path,
@@ -360,7 +426,18 @@ def analyse_procedure(path: str, source: Source, around: Surroundings) -> Judged
         findings=settled.open,
         accepted=settled.accepted,
         card=procedure_card(path, case.procedure),
+        samples=samples,
     )
+
+
+def _letters(way: Opened, case: Case) -> str:
+    """Name the candidates of a way: `sample` is caffeine."""
+    said = []
+    for name, letter in way.letters.items():
+        composition = case.procedure.materials[name].composition
+        if isinstance(composition, Secret):
+            said.append(f"`{name}` is {composition.candidates[letter].name}")
+    return " and ".join(said)
 
 
 def _run(procedure: Procedure, around: Surroundings, *, faulty: bool) -> Case:
@@ -369,12 +446,12 @@ def _run(procedure: Procedure, around: Surroundings, *, faulty: bool) -> Case:
     return Case(procedure, course, usage(procedure, course), around.catalogue, faulty)
 
 
-def _at_the_bench(case: Case, around: Surroundings) -> Run:
+def _at_the_bench(case: Case, around: Surroundings, brought: Mapping[str, Vessel]) -> Run:
     """Run a procedure at the bench, at both ends of its open amounts where it has any."""
-    ledger = run_bench(case.procedure, case.course, around.known, around.laboratory)
-    high = ledger
+    going = case.procedure, case.course, around.known, around.laboratory
+    ledger = high = run_bench(*going, carried=brought)
     if has_open_amounts(case.procedure):
-        high = run_bench(case.procedure, case.course, around.known, around.laboratory, high=True)
+        high = run_bench(*going, carried=brought, high=True)
     return Run(case, ledger, high, around.known, around.laboratory)
 
 

@@ -73,7 +73,7 @@ def moments(ledger: Ledger) -> Iterator[Moment]:
     """Go through a ledger with the bench before each entry."""
     before = ledger.start
     for place, entry in enumerate(ledger.entries):
-        yield Moment(place, entry, before)
+        yield Moment(place, entry, before if entry.since is None else entry.since)
         before = entry.bench
 
 

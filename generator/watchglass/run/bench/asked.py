@@ -46,8 +46,11 @@ class Asked(NamedTuple):
         """Give the bench after the last event of a step's latest pass; its end for step 0."""
         if step:
             for entry in reversed(self.ledger.entries):
-                if entry.happening.step == step:
+                if entry.happening.step == step and not entry.branch:
                     return entry.bench
+            for entry in reversed(self.ledger.entries):
+                if entry.happening.step == step:
+                    return entry.bench  # the step stands in a branch as a whole
         return self.ledger.end
 
     def share(self, what: str, vessel: str, bench: Bench) -> Answer:

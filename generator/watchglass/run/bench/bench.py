@@ -9,16 +9,18 @@ from watchglass.base import dimensions as dim
 from watchglass.read import syntax
 from watchglass.resolve import model
 from watchglass.run.bench import acts, heat
-from watchglass.run.bench.bringing import bring
+from watchglass.run.bench.branches import Branch, Branches, Kept, branches_at, dropped_branches
+from watchglass.run.bench.bringing import bring, carried_portion
 from watchglass.run.bench.layers import layers
 from watchglass.run.bench.ledger import Entry, Ledger, Moved, NotAssessed, Result, Taken, Warmed
+from watchglass.run.bench.liquids import mass_held, mass_of
 from watchglass.run.bench.mixing import Mixed, mix
 from watchglass.run.bench.pouring import Drawn, draw, drawn_from, pour
 from watchglass.run.bench.separating import run_through
 from watchglass.run.bench.state import NOTHING, Bench, Phase, Vessel, added
 
 if TYPE_CHECKING:
-    from collections.abc import Iterable
+    from collections.abc import Iterable, Mapping
 
     from watchglass.base.dimensions import Dimension
     from watchglass.base.quantities import Quantity
@@ -38,6 +40,7 @@ def run_bench(
     laboratory: Laboratory,
     *,
     high: bool = False,
+    carried: Mapping[str, Vessel] | None = None,
 ) -> Ledger:
     """Run a procedure.
 
@@ -47,10 +50,12 @@ def run_bench(
         known: What is known of components.
         laboratory: Room temperature.
         high: Run open amounts (`2–6 mL … until`) at their high end, not at their low one.
+        carried: What each material that another procedure made consists of, by local name.
     """
-    runner = Runner(procedure, known, laboratory.temperature, high=high)
+    runner = Runner(procedure, known, laboratory.temperature, high=high, carried=carried or {})
     for happening in course.happenings:
         runner.happen(happening)
+    runner.leave_branches()
     return runner.ledger()
 
 
@@ -77,6 +82,7 @@ class Runner:
     known: Knowledge
     room: float
     high: bool
+    carried: Mapping[str, Vessel]
     bench: Bench = field(init=False)
     start: Bench = field(init=False)
     entries: list[Entry] = field(default_factory=list)
@@ -88,6 +94,10 @@ class Runner:
     taken: dict[tuple[str, Dimension], float] = field(default_factory=dict)
     results: list[Result] = field(default_factory=list)
     happening: Happening = field(init=False)
+    benches: dict[str, Bench] = field(default_factory=dict)
+    branches: Branches = field(init=False)
+    _kept: list[tuple[Branch, Kept]] = field(default_factory=list)
+    _since: Bench | None = None
     _fresh: int = 0
 
     def __post_init__(self) -> None:
@@ -97,6 +107,7 @@ class Runner:
             for name, vessel in self.procedure.vessels.items()
         }
         self.bench = self.start = Bench(vessels=vessels)
+        self.branches = dropped_branches(self.procedure.body)
 
     def ledger(self) -> Ledger:
         """Give all that happened."""
@@ -107,6 +118,8 @@ class Runner:
             self.charged,
             self.formed,
             tuple(self.titres),
+            self.benches,
+            self.bench,
         )
 
     # ------------------------------------------------------------------ events
@@ -116,11 +129,13 @@ class Runner:
         self.happening = happening
         self.results = []
         event = happening.event
+        self._enter(branches_at(self.branches, event.span.start))
         if happening.fresh:
             self._clean(happening)
         match event:
             case model.Labelled(name, _):
                 self.labels[name] = len(self.entries)
+                self.benches[name] = self.bench
                 return
             case model.Charge(portions, target, _, _, _):
                 self.charge(portions, target.name.text, _at(event))
@@ -132,7 +147,32 @@ class Runner:
                 acts.act(self, event)
             case _:
                 return
-        self.entries.append(Entry(happening, tuple(self.results), self.bench))
+        branch = self._kept[-1][0].words if self._kept else ""
+        entry = Entry(happening, tuple(self.results), self.bench, branch, self._since)
+        self.entries.append(entry)
+        self._since = None
+
+    # ------------------------------------------------------------------ branches
+
+    def _enter(self, path: Branches) -> None:
+        """Go from the branches that are open to those that an event stands in."""
+        common = 0
+        while common < min(len(path), len(self._kept)) and self._kept[common][0] == path[common]:
+            common += 1
+        while len(self._kept) > common:
+            _, kept = self._kept.pop()
+            self.bench, self.charged, self.formed = kept.bench, kept.charged, kept.formed
+            self.runs_into, self.taken = dict(kept.runs_into), dict(kept.taken)
+            self._since = self.bench
+        for branch in path[common:]:
+            kept = Kept(
+                self.bench, self.charged, dict(self.formed), dict(self.runs_into), dict(self.taken)
+            )
+            self._kept.append((branch, kept))
+
+    def leave_branches(self) -> None:
+        """Drop the branches that are still open: the procedure is at its end."""
+        self._enter(())
 
     def _clean(self, happening: Happening) -> None:
         """Set what earlier passes left in their vessels aside; the pass begins with clean ones."""
@@ -253,7 +293,11 @@ class Runner:
         vessel = self.bench.vessel(target)
         if dimension == dim.VOLUME and vessel.capacity and target in self.kept_full():
             value = min(value, max(vessel.capacity - vessel.volume, 0.0))  # it is filled up
-        brought = bring(material, dimension, value, self.known)
+        carried = self.carried.get(material.name)
+        if carried is not None:
+            brought = carried_portion(material, carried, dimension, value, self.known)
+        else:
+            brought = bring(material, dimension, value, self.known)
         self.charged = added(self.charged, brought.liquid.amounts)
         for key, moles in brought.solids.items():
             parts = {part: count * moles for part, count in self.known.parts(key).items()}
@@ -294,10 +338,15 @@ class Runner:
 
     def _of_all(self, name: str, word: str) -> tuple[Dimension, float] | None:
         material = self.procedure.materials.get(name)
-        if material is None or material.provided is None:
+        if material is None:
             return None
-        whole = self.value(material.provided)
-        dimension = material.provided.dimension
+        if material.provided is not None:
+            whole = self.value(material.provided)
+            dimension = material.provided.dimension
+        elif (carried := self.carried.get(name)) is not None:
+            whole, dimension = mass_held(carried, self.known), dim.MASS
+        else:
+            return None
         taken = self.taken.get((name, dimension), 0.0)
         share = {"all": whole, "half": whole / 2, "rest": max(whole - taken, 0.0)}
         return dimension, share[word]
@@ -369,16 +418,12 @@ class Runner:
 
     def _measure(self, vessel: Vessel, part: str, dimension: Dimension) -> float:
         """Give how much there is of what is measured out: volume of liquid, or mass."""
-        from watchglass.run.bench.liquids import mass_of  # noqa: PLC0415 - only for aliquots
-
         if dimension == dim.VOLUME:
             chosen = {"aqueous": vessel.aqueous.volume, "organic": vessel.organic.volume}
             return chosen.get(part, vessel.volume)
         if vessel.solid and part in ("", "solid"):
             return mass_of(vessel.solid, self.known)
-        return mass_of(vessel.aqueous.amounts, self.known) + mass_of(
-            vessel.organic.amounts, self.known
-        )
+        return mass_held(vessel, self.known)
 
 
 def _at(event: model.Charge | model.Operation) -> float | None:

@@ -10,6 +10,7 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
 from watchglass.resolve import model
+from watchglass.run.bench.liquids import mass_held
 from watchglass.run.bench.state import NOTHING, Phase, added
 from watchglass.run.content import Missing, contents
 
@@ -19,6 +20,7 @@ if TYPE_CHECKING:
     from watchglass.base.dimensions import Dimension
     from watchglass.catalogue.substances import Substance
     from watchglass.run.bench.knowledge import Knowledge
+    from watchglass.run.bench.state import Vessel
     from watchglass.run.content import Content
 
 _WATER_DENSITY = 998.2  # kg/m3, 20 °C, CRC Handbook
@@ -63,6 +65,31 @@ def bring(
             return _dissolved(found, solvent, dimension, value, known, material.solution)
         case _:
             return Brought(unknown=frozenset((material.name,)), why="its composition is not known")
+
+
+def carried_portion(
+    material: model.Material,
+    vessel: Vessel,
+    dimension: Dimension,
+    value: float,
+    known: Knowledge,
+) -> Brought:
+    """Work out what so much of another procedure's product brings: a share of what its vessel held."""
+    whole = {dim.MASS: mass_held(vessel, known), dim.VOLUME: vessel.volume}.get(dimension, 0.0)
+    if not whole:
+        return Brought(
+            unknown=frozenset((material.name,)), why="how much of it there is is not known"
+        )
+    share = value / whole
+    liquid = Phase(
+        added(
+            {key: amount * share for key, amount in vessel.aqueous.amounts.items()},
+            {key: amount * share for key, amount in vessel.organic.amounts.items()},
+        ),
+        vessel.volume * share,
+    )
+    solids = {key: amount * share for key, amount in vessel.solid.items()}
+    return Brought(liquid, solids, unknown=vessel.unknown)
 
 
 def _not_known(material: model.Material, missing: Missing) -> Brought:

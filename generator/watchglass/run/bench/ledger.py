@@ -136,11 +136,16 @@ class Entry(NamedTuple):
         happening: The event at its turn.
         results: What it did, in order.
         bench: How the bench stands after it.
+        branch: Words of the `:::if` it stands in, which is run and then dropped; else empty.
+        since: The bench before it where that is not the one after the entry before: at the end of
+            a branch that was dropped. Else None.
     """
 
     happening: Happening
     results: tuple[Result, ...]
     bench: Bench
+    branch: str = ""
+    since: Bench | None = None
 
 
 class Ledger(NamedTuple):
@@ -155,6 +160,8 @@ class Ledger(NamedTuple):
         formed: Theoretical yield of each product, mol: what its reaction would give if it ran to
             the end on what was there.
         titres: Volume that each titration took, m3, with the number of entries before its end.
+        benches: The bench at each label.
+        final: The bench at the end, branches that are dropped left aside; None: after the last entry.
     """
 
     start: Bench
@@ -163,15 +170,16 @@ class Ledger(NamedTuple):
     charged: Mapping[str, float] = NOTHING
     formed: Mapping[str, float] = NOTHING
     titres: tuple[tuple[int, str, float | None], ...] = ()
+    benches: Mapping[str, Bench] = {}
+    final: Bench | None = None
 
     @property
     def end(self) -> Bench:
-        """The bench after the last event."""
+        """The bench at the end."""
+        if self.final is not None:
+            return self.final
         return self.entries[-1].bench if self.entries else self.start
 
     def at(self, label: str) -> Bench | None:
         """Give the bench at a label; None where it was never reached."""
-        count = self.labels.get(label)
-        if count is None:
-            return None
-        return self.entries[count - 1].bench if count else self.start
+        return self.benches.get(label)

@@ -16,6 +16,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping
 
     from watchglass.run.bench.knowledge import Knowledge, Thing
+    from watchglass.run.bench.state import Vessel
 
 #: Water that liquids of another layer, and liquids that mix with water, hold before it parts [kg/kg].
 #: Judgement: a few per cent in the solvents of the trade, about its own mass in alcohols and acids.
@@ -32,6 +33,12 @@ def mass_of(amounts: Mapping[str, float], known: Knowledge) -> float:
         if molar_mass is not None:
             total += amount * molar_mass
     return total
+
+
+def mass_held(vessel: Vessel, known: Knowledge) -> float:
+    """Give the mass of all that a vessel holds, kg; what has no known molar mass is left out."""
+    phases = (vessel.aqueous.amounts, vessel.organic.amounts, vessel.solid)
+    return sum(mass_of(amounts, known) for amounts in phases)
 
 
 def liquid_volume(amounts: Mapping[str, float], known: Knowledge) -> float:

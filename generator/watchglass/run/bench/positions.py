@@ -9,7 +9,7 @@ from watchglass.run.bench.layers import Layers
 from watchglass.run.bench.ledger import Moved
 
 if TYPE_CHECKING:
-    from collections.abc import Mapping
+    from collections.abc import Iterable, Mapping
 
     from watchglass.read import syntax
     from watchglass.run.bench.ledger import Entry, Ledger
@@ -32,6 +32,14 @@ def layer_positions(ledger: Ledger) -> Mapping[int, tuple[str, str, bool]]:
             said = None
         found[at] = said
     return {at: said for at, said in found.items() if said is not None}
+
+
+def agreed_positions(ledgers: Iterable[Ledger]) -> Mapping[int, tuple[str, str, bool]]:
+    """Give the positions in which several runs agree: what is printed must be true for each of them."""
+    first, *others = (layer_positions(ledger) for ledger in ledgers)
+    return {
+        at: said for at, said in first.items() if all(other.get(at) == said for other in others)
+    }
 
 
 def _place(entry: Entry) -> syntax.Place | None:

@@ -16,6 +16,7 @@ from watchglass.shell.streams import put, style_of
 
 if TYPE_CHECKING:
     from watchglass.judge.bench.run import Run
+    from watchglass.run.bench.ledger import Ledger
     from watchglass.shell.pipeline import Judged
 
 
@@ -52,31 +53,44 @@ def command(path: Path, form: str, scale: float | None) -> int:
 
         put(render(judged.findings, style=style_of(sys.stdout, os.environ)))
         return FOUND
-    put(_json(judged, judged.run) if form == "json" else _text(judged, judged.run))
+    runs = _runs(judged, judged.run)
+    put(_json(judged, judged.run, runs) if form == "json" else _text(judged, judged.run, runs))
     return CLEAN
 
 
-def _text(judged: Judged, run: Run) -> str:
+def _runs(judged: Judged, run: Run) -> list[tuple[str, str, Ledger]]:
+    """Give what was run: its key in JSON, what is said of it, and its ledger."""
+    each = [(sample.words.replace("`", ""), sample.run) for sample in judged.samples] or [("", run)]
+    found: list[tuple[str, str, Ledger]] = []
+    for words, one in each:
+        beside = f"{words}, " if words else ""
+        said = [f"With a secret sample: {words}."] if words else []
+        found.append((f"{beside}low", " ".join(said), one.ledger))
+        if one.high is not one.ledger:
+            said.append("Open amounts at their high end; what stands above is at their low end.")
+            found.append((f"{beside}high", " ".join(said), one.high))
+    return found
+
+
+def _text(judged: Judged, run: Run, runs: list[tuple[str, str, Ledger]]) -> str:
     from watchglass.publish.bench import MODEL, bench_steps
     from watchglass.shell.rendering.ledger_text import render
 
     head = judged.procedure.head
     title = f"{head.code}  {head.title}"
-    texts = [render(title, bench_steps(run.ledger, run.known), [MODEL])]
-    if run.high is not run.ledger:
-        note = "Open amounts at their high end; what stands above is at their low end."
-        texts.append(render(f"{title}, high end", bench_steps(run.high, run.known), [note]))
+    texts = []
+    for place, (_, said, ledger) in enumerate(runs):
+        notes = [*([] if place else [MODEL]), *([said] if said else [])]
+        texts.append(render(title, bench_steps(ledger, run.known), notes))
     return "\n".join(texts)
 
 
-def _json(judged: Judged, run: Run) -> str:
+def _json(judged: Judged, run: Run, runs: list[tuple[str, str, Ledger]]) -> str:
     import json
 
     from watchglass.publish.ledger_data import ledger_data
 
-    ledgers = {"low": run.ledger}
-    if run.high is not run.ledger:
-        ledgers["high"] = run.high
+    ledgers = {key: ledger for key, _, ledger in runs}
     head = judged.procedure.head
     data = ledger_data(ledgers, run.known, head.code, head.title, judged.path)
     return json.dumps(data, indent=1) + "\n"

@@ -20,7 +20,8 @@ def render(title: str, steps: Iterable[BenchStep], notes: Iterable[str], width: 
         lines += [*wrap(note, width), ""]
     for step in steps:
         turn = f", pass {step.turn}" if step.turn > 1 else ""
-        lines.append(f"Step {step.number}{turn}")
+        branch = f", only if {step.branch}: the bench is put back after it" if step.branch else ""
+        lines += wrap(f"Step {step.number}{turn}{branch}", width, subsequent_indent="  ")
         for act in step.acts:
             lines += wrap(act.written, width, initial_indent="  ", subsequent_indent="    ")
             for said in act.did:
