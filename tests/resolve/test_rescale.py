@@ -239,3 +239,18 @@ def test_figures_of_the_draft_are_judged_as_written() -> None:
     entry = step("[Add 10 mL]{15 mL acid -> A}.", front=f"{NAMES}scale: 2\n")
 
     assert "`15 mL`" in only(entry).message
+
+
+@pytest.mark.parametrize(("factor", "said"), [("2", "20 min"), ("3", "30 min"), ("0.5", "10 min")])
+def test_addition_keeps_its_rate_in_a_larger_batch(factor: str, said: str) -> None:
+    entry = step("Add {15 mL acid over 10 min -> A}.", front=f"{NAMES}scale: {factor}\n")
+
+    assert said in str(student(entry).body).replace("\\xa0", " ")
+
+
+@pytest.mark.parametrize(("factor", "codes"), [("1", []), ("3", ["N195"])])
+def test_longer_addition_may_no_longer_fit_the_period(factor: str, codes: list[str]) -> None:
+    front = f"{NAMES}time: 60 min\nscale: {factor}\n"
+    entry = step("Add {15 mL acid over 25 min -> A}. {take 20 min}", front=front)
+
+    assert [p.code for p in places(faults(entry))] == codes

@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding, Related
+from watchglass.read import syntax
 from watchglass.resolve import model
 
 if TYPE_CHECKING:
@@ -24,18 +25,16 @@ def time_over_period(case: Case) -> Iterator[Finding]:
     if not periods:
         return
     spent = [0.0]
-    longest: list[model.Operation | None] = [None]
+    longest: list[model.Event | None] = [None]
     for happening in case.course.happenings:
         event = happening.event
-        if not isinstance(event, model.Operation):
-            continue
-        if event.verb == "next period":
+        if isinstance(event, model.Operation) and event.verb == "next period":
             spent.append(0.0)
             longest.append(None)
-        elif event.time:
-            spent[-1] += event.time
+        elif time := _time(event):
+            spent[-1] += time
             before = longest[-1]
-            if before is None or (before.time or 0.0) < event.time:
+            if before is None or _time(before) < time:
                 longest[-1] = event
     if len(periods) == 1:
         periods *= len(spent)  # one figure is the time of each period
@@ -55,3 +54,16 @@ def time_over_period(case: Case) -> Iterator[Finding]:
                 related=(Related(most.span, "the longest of them"),) if most else (),
                 help="shorten a step, divide the work with `{next period}`, or give the period more time",
             )
+
+
+def _time(event: model.Event) -> float:
+    """Give the time that an act states, s; 0 where it states none."""
+    if isinstance(event, model.Operation):
+        return event.time or 0.0
+    if not isinstance(event, model.Charge | model.Transfer):
+        return 0.0
+    return sum(
+        clause.value.quantity.si
+        for clause in event.clauses
+        if clause.word in ("for", "over") and isinstance(clause.value, syntax.Measured)
+    )

@@ -231,13 +231,16 @@ class _Scaler:
         match event:
             case model.Charge():
                 portions = tuple(self._portion(p, event.ware) for p in event.portions)
-                return event._replace(portions=portions)
+                clauses = tuple(self.node(c) for c in event.clauses)
+                return event._replace(portions=portions, clauses=clauses)
             case model.Aliquot():
                 return event._replace(quantity=self.quantity(event.quantity, event.span))
             case model.Operation():
+                clauses = tuple(self.node(c) for c in event.clauses)
                 return event._replace(
                     portions=tuple(self._portion(p) for p in event.portions),
-                    clauses=tuple(self.node(c) for c in event.clauses),
+                    clauses=clauses,
+                    time=next((t for c in clauses if (t := _over(c)) is not None), event.time),
                 )
             case model.Transfer():
                 return event._replace(clauses=tuple(self.node(c) for c in event.clauses))
@@ -291,6 +294,9 @@ class _Scaler:
             case syntax.Clause(word, syntax.Measured() as value, _):
                 if word in _EXTENSIVE_CLAUSES:
                     result = node._replace(value=self._measured(value))
+                elif word == "over" and self.factor > 1:  # added at the same rate
+                    longer = scaled(value.quantity, self.factor).quantity
+                    result = node._replace(value=value._replace(quantity=longer))
             case syntax.QuantityAct(value, span) if span.start in self.beside:
                 result = node._replace(value=self._measured(value))
             case syntax.QuantityAct() | syntax.ValueAct() | syntax.RecordAct() | syntax.Measured():
@@ -427,3 +433,10 @@ def _held(node: object) -> Iterator[Quantity]:
 def _same(one: Quantity, other: Quantity) -> bool:
     margin = 1e-9 * max(abs(one.si_high), abs(other.si_high), 1e-30)
     return abs(one.si - other.si) <= margin and abs(one.si_high - other.si_high) <= margin
+
+
+def _over(clause: syntax.Clause) -> float | None:
+    """Give the time over which something is added, s; None for other clauses."""
+    if clause.word != "over" or not isinstance(clause.value, syntax.Measured):
+        return None
+    return clause.value.quantity.si
