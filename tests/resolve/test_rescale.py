@@ -254,3 +254,13 @@ def test_longer_addition_may_no_longer_fit_the_period(factor: str, codes: list[s
     entry = step("Add {15 mL acid over 25 min -> A}. {take 20 min}", front=front)
 
     assert [p.code for p in places(faults(entry))] == codes
+
+
+def test_procedure_tells_which_vessels_it_takes_in_another_size() -> None:
+    entry = step(
+        "Put {30 mL water -> funnel}.", front=f"{FUNNEL}scale: 2\n", files={"laboratory.yml": OWNED}
+    )
+
+    assert entry.procedure.resized == {
+        "funnel": ("separatory funnel 125 mL", "separatory funnel 250 mL")
+    }

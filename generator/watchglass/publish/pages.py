@@ -165,6 +165,10 @@ def _assumptions(case: Case, run: BenchRun | None) -> tuple[str, ...]:
     found = [*ASSUMPTIONS]
     if run is not None:
         found.append(MODEL)
+    found += [
+        f"scaled: {name} is a {now} in place of a {was}."
+        for name, (was, now) in case.procedure.resized.items()
+    ]
     for name, material in case.procedure.materials.items():
         held = material_contents(material, case.usage.get(name))
         for content in held if isinstance(held, tuple) else ():

@@ -423,7 +423,8 @@ class Procedure:
 
     `syntax` is the file as its author wrote it, `body` what is printed of it: the same blocks, with
     other figures where the procedure is scaled. `positions` tells, by offset of a place that draws a
-    layer, where the bench found that layer to lie, which it is, and whether a drop test is due. `names` tells for every local name what it is: `material`, `vessel`, `equipment`, `reaction`,
+    layer, where the bench found that layer to lie, which it is, and whether a drop test is due.
+    `resized` tells of vessels that scaling took in another size: as they were, as they are. `names` tells for every local name what it is: `material`, `vessel`, `equipment`, `reaction`,
     `label` or `record`.
     """
 
@@ -443,3 +444,4 @@ class Procedure:
     names: Mapping[str, str] = field(default_factory=dict)
     used: frozenset[str] = frozenset()
     positions: Mapping[int, tuple[str, str, bool]] = field(default_factory=dict)
+    resized: Mapping[str, tuple[str, str]] = field(default_factory=dict)

@@ -73,6 +73,11 @@ def rescale(
         head=procedure.head._replace(scale=factor),
         materials={name: scaler.material(m) for name, m in procedure.materials.items()},
         vessels=vessels,
+        resized={
+            name: (vessel.written, vessels[name].written)
+            for name, vessel in procedure.vessels.items()
+            if vessel.written != vessels[name].written and name in procedure.used
+        },
         steps=tuple(
             step._replace(events=tuple(scaler.event(e) for e in step.events))
             for step in procedure.steps

@@ -79,8 +79,13 @@ def _text(judged: Judged, run: Run, runs: list[tuple[str, str, Ledger]]) -> str:
     head = judged.procedure.head
     title = f"{head.code}  {head.title}"
     texts = []
+    resized = judged.procedure.resized
+    sizes = [f"`{name}` is a {now}, not a {was}" for name, (was, now) in resized.items()]
+    scaled = f"Scaled by {head.scale:.4g}" + (f": {'; '.join(sizes)}." if sizes else ".")
     for place, (_, said, ledger) in enumerate(runs):
         notes = [*([] if place else [MODEL]), *([said] if said else [])]
+        if not place and head.scale != 1:
+            notes.insert(0, scaled)
         texts.append(render(title, bench_steps(ledger, run.known), notes))
     return "\n".join(texts)
 
