@@ -34,7 +34,7 @@ ASSUMPTIONS = (
     "Amounts are plain stoichiometry, by the IUPAC 2021 standard atomic weights (conventional values).",
     "Volumes become masses by the catalogue's densities, at the temperature given there.",
     "Volumes of solutions are taken as measured; a strength is that of the label.",
-    "Computed figures are estimates. pH, layers, gas, heat and recoveries are not assessed yet.",
+    "Computed figures are estimates. Hazards and what must not meet are not assessed.",
 )
 
 

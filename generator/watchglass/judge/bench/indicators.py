@@ -67,10 +67,10 @@ def _elsewhere(
         return None
     curve = _Curve(*systems)
     allowed = run.limit("indicator-error")
-    point = curve.steepest([share * titre for share in _NEAR])
-    if point is None or abs(titre / point - 1) > allowed:
+    point: float | None = titre
+    if not curve.is_steepest_at(titre, allowed):
         far = [titre * _FAR**place for place in range(-_BEFORE, _BEYOND)]
-        point = curve.steepest(far, _EXACTLY)
+        point = curve.steepest(far)
     names = f"{indicator.names[0]} (pH {indicator.range.text})"
     ph = curve.ph(point) if point is not None else None
     off = titre / point - 1 if point is not None else 0.0
@@ -107,11 +107,19 @@ class _Curve(NamedTuple):
         ends = [volume_to_ph(self.held, self.coming, ph) for ph in (over.si, over.si_high)]
         return abs(ends[1] - ends[0]) if ends[0] is not None and ends[1] is not None else 0.0
 
-    def steepest(self, volumes: list[float], close: float = 0.002) -> float | None:
+    def is_steepest_at(self, volume: float, share: float) -> bool:
+        """Tell whether pH changes as at an equivalence point within a share of a volume, and less beside."""
+        beside = [volume * (1 + times * share) for times in (-3, -1, 1, 3)]
+        first, low, high, last = (self.ph(v) or 0.0 for v in beside)
+        rise = abs(high - low)
+        sharp = rise / log(beside[2] / beside[1]) >= _SHARP
+        return sharp and rise >= max(abs(low - first), abs(last - high))
+
+    def steepest(self, volumes: list[float]) -> float | None:
         """Find the volume at which pH changes most steeply with its logarithm, between given ones.
 
         Returns:
-            m3, to the share `close`; None where it changes nowhere as steeply as at an
+            m3; None where it changes nowhere as steeply as at an
             equivalence point, or most steeply at the end of what is looked at.
         """
         phs = [self.ph(volume) for volume in volumes]
@@ -123,7 +131,7 @@ class _Curve(NamedTuple):
         if slopes[place] < _SHARP or place in (0, len(slopes) - 1):
             return None
         low, high = volumes[place], volumes[place + 1]
-        while high / low - 1 > close:
+        while high / low - 1 > _EXACTLY:
             middle = sqrt(low * high)
             first, second, third = (self.ph(v) or 0.0 for v in (low, middle, high))
             if abs(second - first) >= abs(third - second):
@@ -133,9 +141,7 @@ class _Curve(NamedTuple):
         return sqrt(low * high)
 
 
-#: Volumes near a titre at which the slope is looked at, over the titre [-].
-_NEAR = (0.80, 0.90, 0.95, 0.97, 0.98, 0.99, 0.995, 1.005, 1.01, 1.02, 1.03, 1.05, 1.10, 1.25)
-#: Further off: from a sixteenth to sixty-four times the titre in steps of a tenth.
+#: Volumes at which the slope is looked at: from a sixteenth to sixty-four times the titre in steps of a tenth.
 _FAR, _BEFORE, _BEYOND = 1.1, 29, 44
 #: Change of pH with the natural logarithm of the volume from which it is an equivalence point [-].
 #: Judgement: 0.1 mol/L acetic acid with base has 2000, carbonate to hydrogencarbonate, which is still

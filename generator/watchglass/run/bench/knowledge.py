@@ -29,6 +29,11 @@ class Solubility(NamedTuple):
     temperature: float
 
 
+#: Digits of an ion's formula as they are printed, and digits and signs of its charge.
+_LOWERED = str.maketrans("0123456789", "₀₁₂₃₄₅₆₇₈₉")
+_RAISED = str.maketrans("0123456789+-", "⁰¹²³⁴⁵⁶⁷⁸⁹⁺⁻")
+
+
 class Thing(NamedTuple):
     """One component.
 
@@ -71,7 +76,10 @@ class Thing(NamedTuple):
     @property
     def name(self) -> str:
         """What it is called."""
-        return self.substance.name if self.substance else self.key.replace("^", "")
+        if self.substance:
+            return self.substance.name
+        formula, _, charge = self.key.partition("^")
+        return formula.translate(_LOWERED) + charge.translate(_RAISED)
 
     @property
     def ion(self) -> bool:
