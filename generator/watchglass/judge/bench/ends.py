@@ -80,7 +80,7 @@ def asked_for(run: Run) -> frozenset[str]:
         for event in step.events:
             if (
                 isinstance(event, model.Operation)
-                and event.verb in ("weigh", "test")
+                and event.verb in ("weigh", "test", "collect")
                 and event.object
             ):
                 names.add(event.object.name.text)

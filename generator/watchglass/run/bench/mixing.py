@@ -141,7 +141,34 @@ def _room(
         ),
         default=0.0,
     )
-    return max(limit * vessel.aqueous.volume - there, 0.0)
+    in_water = max(limit * vessel.aqueous.volume - there, 0.0)
+    return in_water + _by_acid(components, vessel.aqueous, known)
+
+
+#: pKa above which an anion takes a proton from the acids of the bench in passing [-]: carbonates,
+#: hydroxides and phosphates dissolve in acid, sulfates and chlorides do not. Judgement.
+_TAKES_PROTON = 6.0
+
+
+def _by_acid(components: Mapping[str, int], aqueous: Phase, known: Knowledge) -> float:
+    """Give how much of a basic salt the acid in a layer dissolves, mol: chalk in vinegar.
+
+    Each proton that the anion takes needs one from an acid that is there: a strong one, or one
+    with a pKa below 6. Carbon dioxide that forms counts as gone.
+    """
+    takes = -components.get(PROTON, 0)
+    for key, count in components.items():
+        takes -= count * sum(1 for pka in known.thing(key).pkas if pka <= _TAKES_PROTON)
+    if takes <= 0:
+        return 0.0
+    there = aqueous.amounts.get(PROTON, 0.0)
+    for key, amount in aqueous.amounts.items():
+        thing = known.thing(key)
+        if thing.top == 0:
+            there += amount * sum(1 for pka in thing.pkas if pka <= _TAKES_PROTON)
+        else:
+            there -= amount * sum(1 for pka in thing.pkas[: thing.top] if pka > _TAKES_PROTON)
+    return max(there, 0.0) / takes
 
 
 def _weight(amounts: Mapping[str, float], known: Knowledge) -> float:

@@ -87,9 +87,35 @@ def react(vessel: Vessel, reaction: model.Reaction, conversion: float, known: Kn
     for key, coefficient, parts in left:
         vessel = _taken(vessel, key, coefficient * extent, parts, known)
     gained: dict[str, float] = {}
-    for _, coefficient, parts in right:
-        gained = added(gained, parts, coefficient * extent)
-    return Run(_given(vessel, gained, known), extent, whole, limiting, made)
+    fallen: dict[str, float] = {}
+    for key, coefficient, parts in right:
+        falls = min(_falls(key, parts, coefficient * extent, vessel, known), coefficient * extent)
+        if falls > TRACE:
+            fallen = added(fallen, {key: falls})
+        gained = added(gained, parts, coefficient * extent - falls)
+    after = _given(vessel, gained, known)
+    return Run(after._replace(solid=added(after.solid, fallen)), extent, whole, limiting, made)
+
+
+def _falls(
+    key: str, parts: Mapping[str, int], amount: float, vessel: Vessel, known: Knowledge
+) -> float:
+    """Give how much of a salt that forms separates, mol: what is beyond its solubility in water.
+
+    What is not salt, and what dissolves in an acid that is there, comes out (or not) when the vessel
+    is brought to equilibrium.
+    """
+    thing = known.thing(key)
+    if len(parts) < _SALT or thing.substance is None or thing.substance.state != "solid":
+        return 0.0
+    limit = thing.solubility(vessel.temperature)
+    if limit is None:
+        return 0.0
+    return max(amount - limit * vessel.aqueous.volume, 0.0)
+
+
+#: Components from which a substance is a salt: its ions.
+_SALT = 2
 
 
 def available(there: Mapping[str, float], parts: Mapping[str, float]) -> float:
