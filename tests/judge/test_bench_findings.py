@@ -297,3 +297,47 @@ def test_lost_product_points_to_where_it_formed() -> None:
 
     assert "isopentyl acetate" in finding.message
     assert "react ester" in finding.related[0].span.text
+
+
+# ---------------------------------------------------------------- too weak, and what would do
+
+WASHING = """\
+materials:
+  mixture: {{contains: {{benzocaine: 1 g, biphenyl: 1 g}}, provided: 1.00 g}}
+  ether: tert-butyl methyl ether
+  acid: {acid} hydrochloric acid
+vessels:
+  funnel: separatory funnel 125 mL
+  A: conical flask 100 mL
+expect:
+  - benzocaine in A after label(out) >= {share} %
+"""
+WASH = (
+    "Dissolve {1.00 g mixture -> funnel} in {30 mL ether -> funnel}; {swirl funnel, open}.",
+    "Add {15 mL acid -> funnel}, {shake funnel, stoppered; settle funnel}, draw {funnel.aqueous -> A}.{label out}",
+)
+
+
+@pytest.mark.parametrize(
+    ("acid", "share", "advice", "mended_acid", "more"),
+    [
+        ("0.50 M", 60, "1.0 M would move", "1.0 M", ()),
+        ("3.0 M", 95, "one portion more would move", "3.0 M", ("{again 2, 1 more time}",)),
+        ("0.50 M", 95, "2.0 M, and one portion more, would", "2.0 M", ("{again 2, 1 more time}",)),
+    ],
+)
+def test_strength_or_portions_that_would_do_are_told_and_do(
+    acid: str, share: int, advice: str, mended_acid: str, more: tuple[str, ...]
+) -> None:
+    (said,) = found("X102", WASHING.format(acid=acid, share=share), *WASH)
+    assert advice in said
+
+    mended = judged(steps(*WASH, *more), WASHING.format(acid=mended_acid, share=share))
+    assert [f.code.number for f in mended.findings if f.code.number[0] == "X"] == []
+
+
+def test_what_no_acid_and_no_four_portions_mend_is_only_missed() -> None:
+    front = WASHING.format(acid="0.50 M", share=95).replace("benzocaine in A", "biphenyl in A")
+
+    assert found("X102", front, *WASH) == []
+    assert len(found("X101", front, *WASH)) + len(found("B127", front, *WASH)) == 1

@@ -15,7 +15,8 @@ from watchglass.base import codes
 from watchglass.base import dimensions as dim
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding, Related
-from watchglass.judge.bench.mending import mended_by_strength
+from watchglass.catalogue.components import WATER
+from watchglass.judge.bench.mending import Washing, mended
 from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.judge.expected import at_desk
 from watchglass.read.syntax import Name, Words
@@ -30,6 +31,7 @@ from watchglass.run.evaluate import Value
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
+    from watchglass.catalogue.substances import Substance
     from watchglass.read.terms import Expression
     from watchglass.run.bench.ledger import Ledger
 
@@ -210,7 +212,11 @@ def _too_weak(run: Run, miss: Missed, draws: list[Moment], component: str) -> Fi
         return None
     reagents = _reagents(run, draws)
     for moment, material in reagents:
-        mend = mended_by_strength(run, miss.line, material)
+        after = [draw for draw in draws if draw.place > moment.place]
+        if not after:
+            continue
+        washing = Washing(material, moment.entry.happening, after[0].entry.happening)
+        mend = mended(run, miss.line, washing)
         if mend is None:
             continue
         thing = run.known.thing(component)
@@ -220,8 +226,8 @@ def _too_weak(run: Run, miss: Missed, draws: list[Moment], component: str) -> Fi
             code=codes.REAGENT_TOO_WEAK,
             span=moment.span,
             message=f"`{written}` moves {share_words(miss.reached.si)} of the {thing.name}"
-            f"{portions}; {mend.strength} would move {share_words(mend.reached)}",
-            help=f"declare `{material}: {mend.written}`",
+            f"{portions}; {mend.words}",
+            help=mend.help.replace("STEP", str(moment.entry.happening.step)),
         )
     return None
 
@@ -240,5 +246,22 @@ def _reagents(run: Run, draws: list[Moment]) -> list[tuple[Moment, str]]:
         event = moment.entry.happening.event
         if isinstance(event, model.Charge) and event.target.name.text in origins:
             for portion in event.portions:
-                found.setdefault(portion.material, moment)
+                if _in_layer(run, portion.material, draws[0]):
+                    found.setdefault(portion.material, moment)
     return [(moment, name) for name, moment in found.items()]
+
+
+def _in_layer(run: Run, name: str, draw: Moment) -> bool:
+    """Tell whether a material goes into the layer that is drawn."""
+    material = run.case.procedure.materials.get(name)
+    part = next((r.outcome.part for r in draw.entry.results if isinstance(r.outcome, Moved)), "")
+    solvent: Substance | None = None
+    if material is not None:
+        match material.composition:
+            case model.Solution(_, _, other) | model.Saturated(_, other):
+                solvent = other
+            case model.Pure(substance):
+                solvent = substance
+            case _:
+                pass
+    return solvent is not None and (solvent.key == WATER) == (part == "aqueous")
