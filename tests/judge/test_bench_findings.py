@@ -341,3 +341,40 @@ def test_what_no_acid_and_no_four_portions_mend_is_only_missed() -> None:
 
     assert found("X102", front, *WASH) == []
     assert len(found("X101", front, *WASH)) + len(found("B127", front, *WASH)) == 1
+
+
+# ---------------------------------------------------------------- where it was decided
+
+MIXED = """\
+materials:
+  acid: 1.0 M hydrochloric acid
+  base: 1.0 M sodium hydroxide
+vessels:
+  A: beaker 100 mL
+  burette: burette 50 mL
+expect:
+  - {0}
+"""
+
+
+@pytest.mark.parametrize(
+    ("expectation", "act"),
+    [
+        ("ph of A after label(end) <= 1", "5 mL base -> A"),
+        ("ph of A after label(first) >= 7", "20 mL acid -> A"),
+        ("titre(end) >= 40 mL", "titrate A with base from burette to ph 7"),
+    ],
+)
+def test_missed_expectation_points_to_the_act_that_decided(expectation: str, act: str) -> None:
+    entry = judged(
+        steps(
+            "Put {20 mL acid -> A} in.{label first}",
+            "Fill {burette} with {50 mL base -> burette}; {titrate A with base from burette to ph 7}.",
+            "Add {5 mL base -> A}. {label end} Look at {A}.",
+        ),
+        MIXED.format(expectation),
+    )
+    (missed,) = (f for f in entry.findings if f.code.number == "X101")
+
+    assert [r.span.text for r in missed.related] == [act]
+    assert "decides it" in missed.related[0].message

@@ -29,6 +29,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from watchglass.base.quantities import Quantity
+    from watchglass.catalogue.catalogue import Catalogue
     from watchglass.catalogue.substances import Substance
     from watchglass.chemistry.densities import DensityTable
     from watchglass.judge.case import Case
@@ -61,23 +62,32 @@ class _Most(NamedTuple):
 
 
 def too_strong(case: Case) -> Iterator[Finding]:
-    """Report strengths beyond the pure liquid, or beyond what dissolves at room temperature."""
+    """Report strengths beyond the pure liquid, or beyond what dissolves at room temperature.
+
+    Those of stocks are reported where the stock stands.
+    """
     for material in case.procedure.materials.values():
-        composition = material.composition
-        if not isinstance(composition, model.Solution):
-            continue
-        most = _most(case, composition.solute, composition.solvent)
-        quantity = composition.strength.quantity
-        limit = _limit(quantity, composition.solute, most) if most is not None else None
-        if most is None or limit is None or quantity.si <= limit * (1 + most.more):
-            continue
-        figure = f"{shown(limit / quantity.unit.factor, 2)} {quantity.unit.symbol}"
-        yield Finding(
-            code=codes.STRENGTH_IMPOSSIBLE,
-            span=material.value_span if material.stock else composition.strength.span,
-            message=f"`{quantity.text}` is more than {most.why}: about {figure}",
-            help=_help(quantity, material.written, composition.solute, most),
-        )
+        if not material.stock:
+            yield from beyond(material, case.catalogue)
+
+
+def beyond(material: model.Material, catalogue: Catalogue) -> Iterator[Finding]:
+    """Report one material that is stronger than its solute can make it."""
+    composition = material.composition
+    if not isinstance(composition, model.Solution):
+        return
+    most = _most(catalogue, composition.solute, composition.solvent)
+    quantity = composition.strength.quantity
+    limit = _limit(quantity, composition.solute, most) if most is not None else None
+    if most is None or limit is None or quantity.si <= limit * (1 + most.more):
+        return
+    figure = f"{shown(limit / quantity.unit.factor, 2)} {quantity.unit.symbol}"
+    yield Finding(
+        code=codes.STRENGTH_IMPOSSIBLE,
+        span=composition.strength.span,
+        message=f"`{quantity.text}` is more than {most.why}: about {figure}",
+        help=_help(quantity, material.written, composition.solute, most),
+    )
 
 
 def _limit(quantity: Quantity, solute: Substance, most: _Most) -> float | None:
@@ -104,21 +114,21 @@ def _help(quantity: Quantity, written: str, solute: Substance, most: _Most) -> s
     return "see where the point stands, and which unit the label has"
 
 
-def _most(case: Case, solute: Substance, solvent: Substance) -> _Most | None:
+def _most(catalogue: Catalogue, solute: Substance, solvent: Substance) -> _Most | None:
     if solute.state == "liquid" and solute.density is not None:
         why = f"pure {solute.name} holds"
         return _Most(solute.density.value.si, None, _LIQUID, why, label=True)
     if solvent.key != "water":
         return None
     if solute.state == "gas":
-        return _of_gas(case, solute)
+        return _of_gas(catalogue, solute)
     if solute.key in _AS_ANOTHER or (_molecular(solute) and (solute.acid or solute.base)):
         return None
-    return _of_solid(case, solute)
+    return _of_solid(catalogue, solute)
 
 
-def _of_gas(case: Case, solute: Substance) -> _Most | None:
-    table = case.catalogue.density_table(solute.key)
+def _of_gas(catalogue: Catalogue, solute: Substance) -> _Most | None:
+    table = catalogue.density_table(solute.key)
     if table is None:
         return None
     fraction, density = table.points[-1]
@@ -131,15 +141,15 @@ def _molecular(solute: Substance) -> bool:
     return "+" not in solute.smiles.replace("[N+](=O)[O-]", "")
 
 
-def _of_solid(case: Case, solute: Substance) -> _Most | None:
+def _of_solid(catalogue: Catalogue, solute: Substance) -> _Most | None:
     """Give the greatest solubility that is known of a salt or of its anhydrous form."""
     known, share = solute, 1.0
-    anhydrous = case.catalogue.by_key(solute.hydrate_of) if solute.hydrate_of else None
+    anhydrous = catalogue.by_key(solute.hydrate_of) if solute.hydrate_of else None
     if not solute.soluble.get("water") and anhydrous is not None:
         if not anhydrous.molar_mass or not solute.molar_mass:
             return None
         known, share = anhydrous, solute.molar_mass / anhydrous.molar_mass
-    table = case.catalogue.density_table(known.key)
+    table = catalogue.density_table(known.key)
     volumes, fractions = [], []
     for text in known.soluble.get("water", ()):
         read = scan_quantity(text.partition(" at ")[0], 0)

@@ -72,10 +72,10 @@ def asked_for(run: Run) -> frozenset[str]:
     """Give the vessels that a record, an expectation or a plain mark speaks of at their end."""
     names: set[str] = set()
     for line in run.case.procedure.expectations:
-        names |= _names(line.expression)
+        names |= names_in(line.expression)
     for record in run.case.procedure.records:
         if record.expression is not None:
-            names |= _names(record.expression)
+            names |= names_in(record.expression)
     for step in run.case.procedure.steps:
         for event in step.events:
             if (
@@ -87,11 +87,12 @@ def asked_for(run: Run) -> frozenset[str]:
     return frozenset(names)
 
 
-def _names(node: object) -> set[str]:
+def names_in(node: object) -> set[str]:
+    """Give all names that an expression mentions."""
     if isinstance(node, syntax.Name):
         return {node.text}
     if isinstance(node, tuple) and hasattr(node, "_fields"):
-        return {name for child in node for name in _names(child)}
+        return {name for child in node for name in names_in(child)}
     if isinstance(node, tuple):
-        return {name for child in node for name in _names(child)}
+        return {name for child in node for name in names_in(child)}
     return set()

@@ -16,12 +16,14 @@ from watchglass.base import dimensions as dim
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding, Related
 from watchglass.catalogue.components import WATER
+from watchglass.judge.bench.ends import names_in
 from watchglass.judge.bench.mending import Washing, mended
 from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.judge.expected import at_desk
 from watchglass.read.syntax import Name, Words
 from watchglass.read.terms import After, Call, Compare, Held, Within
 from watchglass.resolve import model
+from watchglass.run.bench.asked import amount_in
 from watchglass.run.bench.evaluator import BenchEvaluator
 from watchglass.run.bench.figures import share_words
 from watchglass.run.bench.layers import layers
@@ -34,6 +36,7 @@ if TYPE_CHECKING:
     from watchglass.catalogue.substances import Substance
     from watchglass.read.terms import Expression
     from watchglass.run.bench.ledger import Ledger
+    from watchglass.run.bench.state import Vessel
 
 
 #: Share of a substance in the other layer from which that layer was meant [-].
@@ -83,7 +86,7 @@ def expectations(run: Run) -> Iterator[Finding]:
     for miss in missed(run):
         culprit = _culprit(run, miss)
         if culprit is None:
-            yield _plain(miss)
+            yield _plain(run, miss)
             continue
         before = decided.get(culprit.span.start)
         related = Related(miss.line.span, f"so {_says(miss)}")
@@ -112,13 +115,49 @@ def _figure(value: Value) -> str:
     return shown(value.si, value.figures)
 
 
-def _plain(miss: Missed) -> Finding:
+def _plain(run: Run, miss: Missed) -> Finding:
+    decided = _decided_at(run, miss)
     return Finding(
         code=codes.EXPECTATION_MISSED,
         span=miss.line.span,
         message=f"`{miss.line.written}`: the bench gives {_figure(miss.reached)}",
+        related=(Related(decided.span, f"step {decided.entry.happening.step} decides it"),)
+        if decided is not None
+        else (),
         help="see what decides it with `watchglass ledger`, or mend the expectation",
     )
+
+
+def _decided_at(run: Run, miss: Missed) -> Moment | None:
+    """Give the last event, before the label where one is named, that changed what is asked for."""
+    names = names_in(miss.line.expression)
+    counts = [miss.ledger.labels[name] for name in names if name in miss.ledger.labels]
+    until = max(counts, default=len(miss.ledger.entries))
+    vessels = names & run.case.procedure.vessels.keys()
+    held = _held(miss.line.expression)
+    component = run.asked(miss.ledger).component(held[0]) if held is not None else None
+    last = None
+    for moment in moments(miss.ledger):
+        if moment.place >= until:
+            break
+        if not vessels and isinstance(event := moment.entry.happening.event, model.Operation):
+            last = moment if event.verb == "titrate" else last
+        for was, after in moment.vessels():
+            if after.name in vessels and _changed(run, was, after, component):
+                last = moment
+    return last
+
+
+def _changed(run: Run, was: Vessel, after: Vessel, component: str | None) -> bool:
+    """Tell whether an event changed what a vessel holds of a component; of anything, without one."""
+    if component is None:
+        return (was.aqueous, was.organic, was.solid) != (after.aqueous, after.organic, after.solid)
+    before, now = (amount_in(component, vessel, run.known) for vessel in (was, after))
+    return abs(now - before) > _SAME * max(before, now)
+
+
+#: Amounts that differ by less are the same [-].
+_SAME = 1e-9
 
 
 # ---------------------------------------------------------------- where it was decided
