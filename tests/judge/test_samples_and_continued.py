@@ -64,7 +64,8 @@ def test_two_secrets_meet_each_of_their_candidates() -> None:
     )
     entry = judged(WASH, front)
 
-    assert [sample.words for sample in entry.samples] == [
+    assert entry.run is not None
+    assert [sample.words for sample in entry.run.samples] == [
         "`sample` is naphthalene and `other` is biphenyl",
         "`sample` is benzoic acid and `other` is naphthalene",
         "`sample` is biphenyl and `other` is biphenyl",

@@ -96,9 +96,10 @@ def test_finding_says_the_greatest_strength_and_what_may_be_meant(
     assert (finding.message, finding.help) == (message, help_)
 
 
-def test_stock_of_such_a_strength_is_found_where_a_procedure_takes_it() -> None:
+def test_stock_of_such_a_strength_is_found_where_the_stock_stands() -> None:
     files = {"stocks.yml": "strong-acid:\n  material: 37 M hydrochloric acid\n"}
     front = "materials: {x: strong-acid}\nvessels: {A: beaker 100 mL}\n"
-    found = faults(judged("1. Put {5 mL x -> A} into {A}.", front, files))
+    finding = only(judged("1. Put {5 mL x -> A} into {A}.", front, files))
 
-    assert [tuple(p) for p in places(found)] == [("S134", "strong-acid")]
+    assert (finding.code.number, finding.span.text) == ("S134", "37 M")
+    assert finding.span.source.name == "stocks.yml"

@@ -64,11 +64,12 @@ class _Most(NamedTuple):
 def too_strong(case: Case) -> Iterator[Finding]:
     """Report strengths beyond the pure liquid, or beyond what dissolves at room temperature.
 
-    Those of stocks are reported where the stock stands.
+    That of a stock is reported where the stock stands, however many procedures take it.
     """
     for material in case.procedure.materials.values():
-        if not material.stock:
-            yield from beyond(material, case.catalogue)
+        stock = case.catalogue.stocks.get(material.stock.casefold()) if material.stock else None
+        described = material._replace(written=stock.material.text) if stock else material
+        yield from beyond(described, case.catalogue)
 
 
 def beyond(material: model.Material, catalogue: Catalogue) -> Iterator[Finding]:

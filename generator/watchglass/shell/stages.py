@@ -12,8 +12,8 @@ from watchglass.catalogue.plausible import differing
 from watchglass.catalogue.ware import decode_stock
 from watchglass.judge.accept import can_be_accepted, settle
 from watchglass.judge.bench.checks import judge_bench
-from watchglass.judge.bench.run import Run
-from watchglass.judge.bench.samples import Sample, judge_samples
+from watchglass.judge.bench.run import Run, Sample
+from watchglass.judge.bench.samples import judge_samples
 from watchglass.judge.case import Case, faulty_body
 from watchglass.judge.checks import judge
 from watchglass.judge.continued import Product, carried, codes_continued, faults_of_continued
@@ -70,9 +70,7 @@ class Judged(NamedTuple):
     Attributes:
         path: Of its source within the set.
         case: The procedure with its course and usage.
-        run: How it went at the bench; None where an error stands before that. What a secret sample
-            brings is not known in it.
-        samples: How it went with each candidate, where there are secret samples.
+        run: How it went at the bench; None where an error stands before that.
         findings: What is open.
         accepted: What was found and accepted.
         card: Its digest.
@@ -84,7 +82,6 @@ class Judged(NamedTuple):
     findings: tuple[Finding, ...]
     accepted: tuple[tuple[Finding, Acceptance], ...]
     card: Card
-    samples: tuple[Sample, ...] = ()
 
     @property
     def procedure(self) -> Procedure:
@@ -208,7 +205,6 @@ def analyse_procedure(
         case = _run(scaled, around, faulty=faulty)
     found = (*earlier, *judge(case, draft), *faults_of_continued(case.procedure, products))
     run: Run | None = None
-    samples: tuple[Sample, ...] = ()
     if all(can_be_accepted(f) for f in found):  # else there is no knowing what was meant
         brought = carried(case.procedure, products)
         run = _at_the_bench(case, around, brought)
@@ -219,6 +215,7 @@ def analyse_procedure(
             )
             for way in opened(case.procedure, around.catalogue)
         )
+        run = run._replace(samples=samples)
         found = (*found, *(judge_samples(samples) if samples else judge_bench(run)))
     settled = settle(found, procedure.acceptances)
     return Judged(
@@ -228,7 +225,6 @@ def analyse_procedure(
         findings=settled.open,
         accepted=settled.accepted,
         card=procedure_card(path, case.procedure),
-        samples=samples,
     )
 
 

@@ -18,6 +18,13 @@ if TYPE_CHECKING:
     from watchglass.run.bench.state import Bench, Vessel
 
 
+class Sample(NamedTuple):
+    """A run with one candidate for each secret material; `words` name them: `sample` is caffeine."""
+
+    words: str
+    run: Run
+
+
 class Run(NamedTuple):
     """One procedure as it went at the bench.
 
@@ -27,6 +34,8 @@ class Run(NamedTuple):
         high: The same at their high end; `ledger` itself where there is none.
         known: What is known of the components.
         laboratory: Its limits and glassware.
+        samples: How it went with each candidate, where there are secret samples: what they bring is
+            then not known in `ledger`, from which students' pages are made.
     """
 
     case: Case
@@ -34,6 +43,12 @@ class Run(NamedTuple):
     high: Ledger
     known: Knowledge
     laboratory: Laboratory
+    samples: tuple[Sample, ...] = ()
+
+    @property
+    def opened(self) -> Run:
+        """What instructors are shown: the run with the first candidates, or itself."""
+        return self.samples[0].run if self.samples else self
 
     @property
     def ledgers(self) -> tuple[Ledger, ...]:

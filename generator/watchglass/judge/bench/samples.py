@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import replace
-from typing import TYPE_CHECKING, NamedTuple
+from typing import TYPE_CHECKING
 
 from watchglass.judge.bench.checks import judge_bench
 
@@ -11,14 +11,7 @@ if TYPE_CHECKING:
     from collections.abc import Sequence
 
     from watchglass.base.findings import Finding
-    from watchglass.judge.bench.run import Run
-
-
-class Sample(NamedTuple):
-    """A run with one candidate for each secret material; `words` name them: `sample is caffeine`."""
-
-    words: str
-    run: Run
+    from watchglass.judge.bench.run import Sample
 
 
 def judge_samples(samples: Sequence[Sample]) -> tuple[Finding, ...]:

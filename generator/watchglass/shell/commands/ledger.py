@@ -53,14 +53,14 @@ def command(path: Path, form: str, scale: float | None) -> int:
 
         put(render(judged.findings, style=style_of(sys.stdout, os.environ)))
         return FOUND
-    runs = _runs(judged, judged.run)
+    runs = _runs(judged.run)
     put(_json(judged, judged.run, runs) if form == "json" else _text(judged, judged.run, runs))
     return CLEAN
 
 
-def _runs(judged: Judged, run: Run) -> list[tuple[str, str, Ledger]]:
+def _runs(run: Run) -> list[tuple[str, str, Ledger]]:
     """Give what was run: its key in JSON, what is said of it, and its ledger."""
-    each = [(sample.words.replace("`", ""), sample.run) for sample in judged.samples] or [("", run)]
+    each = [(sample.words.replace("`", ""), sample.run) for sample in run.samples] or [("", run)]
     found: list[tuple[str, str, Ledger]] = []
     for words, one in each:
         beside = f"{words}, " if words else ""

@@ -18,9 +18,11 @@ if TYPE_CHECKING:
 
     from watchglass.publish.handbook import HandbookPages
 
+_IN_MAIN = ("courses", "weeks")
+
 
 def make_frame(pages: HandbookPages, own: Iterable[NavEntry], config: MkDocsConfig) -> Frame:
-    """Make the frame: Start, the lists, pages of the set, pages of the site's own.
+    """Make the frame: Start, the lists (of a long one its first part), pages of the set, pages of the site's own.
 
     Args:
         pages: The edition.
@@ -28,8 +30,10 @@ def make_frame(pages: HandbookPages, own: Iterable[NavEntry], config: MkDocsConf
         config: MkDocs' configuration, for the owner's style sheets and scripts.
     """
     main = [NavEntry("Start", START)]
-    main += [NavEntry(page.title, page.address) for page in pages.lists]
-    named = {entry.address for entry in main}
+    first = [page for page in pages.lists if page.part == 1]
+    main += [NavEntry(page.title, page.address) for page in first if page.kind in _IN_MAIN]
+    lookup = [NavEntry(page.title, page.address) for page in first if page.kind not in _IN_MAIN]
+    named = {entry.address for entry in (*main, *lookup)}
     others: list[NavEntry] = []
     for entry in (*(NavEntry(page.title, page.address) for page in pages.pages), *own):
         if entry.address not in named:
@@ -40,6 +44,7 @@ def make_frame(pages: HandbookPages, own: Iterable[NavEntry], config: MkDocsConf
         institution=pages.institution,
         edition=pages.edition,
         main=tuple(main),
+        lookup=tuple(lookup),
         pages=tuple(others),
         styles=tuple(config.extra_css),
         scripts=tuple(str(script) for script in config.extra_javascript),

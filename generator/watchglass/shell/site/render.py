@@ -14,7 +14,7 @@ from jinja2 import Environment, FileSystemLoader, StrictUndefined
 from markupsafe import Markup
 
 from watchglass.publish import model as m
-from watchglass.shell.site.html import Writer
+from watchglass.shell.site.html import NotForStudents, Writer
 from watchglass.shell.site.urls import leads_outside, root_of
 
 if TYPE_CHECKING:
@@ -46,7 +46,8 @@ class Frame:
         laboratory: Its name.
         institution: The college.
         edition: `student` or `instructor`.
-        main: Start and the lists.
+        main: Start, courses and weeks.
+        lookup: What can be looked up: substances, stocks, accepted findings.
         pages: Ordinary pages of the set and of the site.
         styles: Style sheets of the site's owner, addresses from the root.
         scripts: Scripts of the site's owner, likewise.
@@ -56,6 +57,7 @@ class Frame:
     institution: str
     edition: str
     main: tuple[NavEntry, ...]
+    lookup: tuple[NavEntry, ...] = ()
     pages: tuple[NavEntry, ...] = ()
     styles: tuple[str, ...] = ()
     scripts: tuple[str, ...] = field(default=())
@@ -111,6 +113,8 @@ class Renderer:
             NotForStudents: A student edition's page holds what only instructors may see.
         """
         address = address_of(page)
+        if not self._frame.instructor and _for_instructors(page):
+            raise NotForStudents(f"{address} is for instructors")
         writer = Writer(root_of(address), instructor=self._frame.instructor)
 
         def words(models: Iterable[m.Words]) -> Markup:
@@ -151,6 +155,17 @@ def title_of(page: HandbookPage) -> str:
             return page.facts.title
         case m.OrdinaryPage() | m.ListPage() | m.StartPage() | m.ReferencePage():
             return page.title
+
+
+def _for_instructors(page: HandbookPage) -> bool:
+    """Tell whether a page as a whole is for instructors: accepted findings, a stock's recipe."""
+    match page:
+        case m.ListPage():
+            return page.kind == "accepted"
+        case m.ReferencePage():
+            return bool(page.lines)
+        case _:
+            return False
 
 
 def _template(page: HandbookPage) -> str:
