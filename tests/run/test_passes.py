@@ -40,6 +40,14 @@ def test_steps_happen_in_their_order() -> None:
     ]
 
 
+def test_any_number_of_repetitions_may_follow_one_another() -> None:
+    # Only repetitions within repetitions are cut, never those that stand beside one another.
+    entry = step("{stir A}", *["{again 1}"] * 20)
+
+    assert entry.case.course.cut is None
+    assert told(entry)[-1] == "1.21 stir A"
+
+
 @pytest.mark.parametrize(
     ("mark", "after"),
     [

@@ -25,7 +25,9 @@ FRAME = Frame(
     pages=(NavEntry("Safety", "pages/safety.html"),),
 )
 ENVIRONMENT = make_environment([str(find_themes() / "handbook")])
-PAGES = (m.StudentPage, m.InstructorPage, m.OrdinaryPage, m.ListPage, m.StartPage)
+PAGES = (
+    m.StudentPage, m.InstructorPage, m.OrdinaryPage, m.ListPage, m.StartPage, m.ReferencePage,
+)  # fmt: skip
 _SMALL: tuple[object, ...] = (m.Para((m.Run(HOSTILE),)),)
 
 
@@ -56,7 +58,9 @@ def hostile(kind: typing.Any) -> typing.Any:
 
 
 def render(page: typing.Any, frame: Frame = FRAME) -> str:
-    edition = "instructor" if isinstance(page, m.InstructorPage) else frame.edition
+    made_up = isinstance(page, m.ReferencePage) and page.title == HOSTILE  # it has a recipe, too
+    instructor = isinstance(page, m.InstructorPage) or made_up
+    edition = "instructor" if instructor else frame.edition
     return Renderer(ENVIRONMENT, dataclasses.replace(frame, edition=edition)).render(page)
 
 
@@ -211,3 +215,74 @@ def test_many_pages_fold_away_in_the_navigation() -> None:
 
     assert "<summary>Pages</summary>" in html
     assert html.count('href="p') == 9
+
+
+def test_what_can_be_looked_up_folds_away_under_one_word() -> None:
+    frame = dataclasses.replace(FRAME, lookup=(NavEntry("Substances", "substances.html"),))
+    html = render(m.OrdinaryPage(title="T", address="substances.html", body=()), frame)
+
+    assert "<summary>Look up</summary>" in html
+    assert '<a href="substances.html" aria-current="page">Substances</a>' in html
+
+
+SUBSTANCE = m.ReferencePage(
+    kind="substance",
+    title="sulfuric acid",
+    address="substances/sulfuric-acid.html",
+    names=(),
+    rows=(m.ReferenceRow("Boils at 1 atm", (m.Run("337 °C"),), "from memory"),),
+    used_in=(m.ListEntry(m.PageLink("A wash", "AA-01", "procedures/aa-01.html"), "week 3"),),
+    more=None,
+    stocks=(),
+    lines=(),
+    remarks=(),
+)
+
+
+def test_source_of_a_value_stands_beside_it() -> None:
+    html = render(SUBSTANCE)
+
+    assert re.search(r"337 °C</td>\s*<td[^>]*>from memory</td>", html)
+
+
+def test_page_of_a_substance_leads_to_procedures_and_back_to_the_list() -> None:
+    links = Reading(render(SUBSTANCE)).values("href")
+
+    assert "../procedures/aa-01.html" in links
+    assert "../substances.html" in links
+
+
+@pytest.mark.parametrize(("edition", "said"), [("student", False), ("instructor", True)])
+def test_only_instructors_are_told_that_there_is_no_recipe(edition: str, said: bool) -> None:
+    stock = dataclasses.replace(SUBSTANCE, kind="stock", address="stocks/a.html")
+    html = render(stock, dataclasses.replace(FRAME, edition=edition))
+
+    assert ("No recipe can be worked out" in html) is said
+
+
+def test_part_of_a_long_list_leads_to_the_others() -> None:
+    page = m.ListPage(
+        kind="uses",
+        title="water: used in 900 procedures, part 3",
+        address="substances/water.3.html",
+        groups=(),
+        previous=m.PageLink("part 2", "", "substances/water.2.html"),
+        following=m.PageLink("part 4", "", "substances/water.4.html"),
+        part=3,
+    )
+    html = render(page)
+
+    assert '<a class="previous" rel="prev" href="../substances/water.2.html">' in html
+    assert '<a class="following" rel="next" href="../substances/water.4.html">' in html
+
+
+@pytest.mark.parametrize(
+    "page",
+    [
+        m.ListPage(kind="accepted", title="T", address="accepted.html", groups=()),
+        dataclasses.replace(SUBSTANCE, kind="stock", lines=("Weigh it.",)),
+    ],
+)
+def test_no_student_page_is_made_of_findings_or_recipes(page: m.ListPage | m.ReferencePage) -> None:
+    with pytest.raises(NotForStudents):
+        render(page)

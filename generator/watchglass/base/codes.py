@@ -265,6 +265,9 @@ STOCK_NOT_FROM_SOURCE = Code(
 STOCK_OFF_STRENGTH = Code(
     "P103", "stock-off-strength", _WARNING, "what can be weighed misses the strength of a stock"
 )
+STOCK_STRONGER_THAN_REAGENT = Code(
+    "P104", "stock-stronger-than-reagent", _WARNING, "a stock is stronger than what it is made from"
+)
 
 
 def _collect() -> tuple[Code, ...]:

@@ -9,7 +9,7 @@ from watchglass.base import codes
 from watchglass.base import dimensions as dim
 from watchglass.base.fields import Field, Record, Shape, read_fields
 from watchglass.base.findings import Finding, Related, did_you_mean
-from watchglass.base.scan import Fault, Found, scan_quantity
+from watchglass.base.scan import Fault, Found, read_quantity, scan_quantity
 from watchglass.base.yaml import YamlMapping, YamlNode, YamlText
 from watchglass.catalogue import texts
 from watchglass.catalogue.glassware import GlasswareType, VesselType
@@ -51,7 +51,11 @@ STOCK_FIELDS: dict[str, Field] = {
         Shape.TEXT, "density of the solution, as `1.18 g/mL`", quantity=(dim.MASS_CONCENTRATION,)
     ),
     "also": Field(Shape.TEXT, "the strength again, as its label has it in other units: `12 M`"),
-    "makes": Field(Shape.TEXT, "how much is made at a time, as `1 L`", quantity=(dim.VOLUME,)),
+    "makes": Field(
+        Shape.TEXT,
+        "how much is made at a time, as `1 L` or `400 g`",
+        quantity=(dim.VOLUME, dim.MASS),
+    ),
     "from": Field(Shape.TEXT, "key of the stock that it is diluted from"),
     "shelf-life": Field(Shape.TEXT, "how long it keeps"),
     "container": Field(Shape.TEXT, "what it is kept in"),
@@ -135,7 +139,7 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
         notes=notes,
         span=entry.key.span,
         density=record.text("density"),
-        makes=texts.quantity(makes, dim.VOLUME, findings) if makes is not None else None,
+        makes=_size_made(makes, findings) if makes is not None else None,
         made_from=_text(record, "from"),
         made_from_span=record.keys.get("from"),
         shelf_life=_text(record, "shelf-life"),
@@ -145,6 +149,24 @@ def decode_stock(entry: YamlEntry) -> tuple[Stock | None, tuple[Finding, ...]]:
         also=record.text("also"),
     )
     return stock, tuple(findings)
+
+
+def _size_made(node: YamlText, findings: list[Finding]) -> Quantity | None:
+    """Read how much is made at a time: a volume, or a mass; nought of it is a finding."""
+    read = read_quantity(node.text)
+    by_mass = not isinstance(read, Fault) and read.dimension == dim.MASS
+    size = texts.quantity(node, dim.MASS if by_mass else dim.VOLUME, findings)
+    if size is not None and size.middle <= 0:
+        findings.append(
+            Finding(
+                code=codes.FIELD_UNFIT,
+                span=node.span,
+                message=f"`{node.text}` makes nothing",
+                help="say how much is made at a time, as `1 L`",
+            )
+        )
+        return None
+    return size
 
 
 def _unsaid(entry: YamlEntry) -> Finding:

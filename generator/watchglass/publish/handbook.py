@@ -2,33 +2,28 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
-from typing import TYPE_CHECKING, Protocol
+from dataclasses import dataclass, replace
+from typing import TYPE_CHECKING, Any, cast
 
 from watchglass.judge.sets import leaves_the_set, resolve_link
 from watchglass.publish import model as m
+from watchglass.publish.accepted import Accepted, accepted_lists
 from watchglass.publish.pages import (
     Neighbours,
     instructor_page,
     ordinary_page,
     student_page,
 )
-from watchglass.publish.reference import Use, reference_lists, references
+from watchglass.publish.reference import linked, make_reference
 from watchglass.publish.text import quantity_words
+from watchglass.publish.uses import Use
 from watchglass.resolve.outline import slug
 
 if TYPE_CHECKING:
-    from collections.abc import Mapping, Sequence
+    from collections.abc import Iterable, Iterator, Mapping, Sequence
 
-    from watchglass.base.findings import Finding
-    from watchglass.catalogue.catalogue import Catalogue
-    from watchglass.judge.bench.run import Run as BenchRun
-    from watchglass.judge.case import Case
-    from watchglass.read.syntax import ProcedureSyntax
-    from watchglass.resolve.laboratory import Laboratory
-    from watchglass.resolve.model import Acceptance
-    from watchglass.resolve.schedule import Slot
-    from watchglass.run.cards import Card
+    from watchglass.publish.analysed import AnalysedPage, AnalysedProcedure, AnalysedSet
+    from watchglass.publish.reference import Reference
 
 NOTICE = (
     "Computed figures are estimates from stated models; they replace no measurement.",
@@ -37,91 +32,6 @@ NOTICE = (
 )
 WELCOME = "pages/welcome.md"
 EDITIONS = ("student", "instructor")
-
-
-class _Surroundings(Protocol):
-    @property
-    def catalogue(self) -> Catalogue:
-        """The catalogue."""
-        ...
-
-    @property
-    def laboratory(self) -> Laboratory:
-        """The laboratory."""
-        ...
-
-    @property
-    def schedule(self) -> tuple[Slot, ...]:
-        """The schedule."""
-        ...
-
-
-class _Procedure(Protocol):
-    @property
-    def path(self) -> str:
-        """Path within the set."""
-        ...
-
-    @property
-    def case(self) -> Case:
-        """The procedure with its course and usage."""
-        ...
-
-    @property
-    def run(self) -> BenchRun | None:
-        """How it went at the bench."""
-        ...
-
-    @property
-    def card(self) -> Card:
-        """Its digest."""
-        ...
-
-    @property
-    def findings(self) -> tuple[Finding, ...]:
-        """What is open."""
-        ...
-
-    @property
-    def accepted(self) -> tuple[tuple[Finding, Acceptance], ...]:
-        """What is accepted."""
-        ...
-
-
-class _Page(Protocol):
-    @property
-    def path(self) -> str:
-        """Path within the set."""
-        ...
-
-    @property
-    def syntax(self) -> ProcedureSyntax:
-        """The page as read."""
-        ...
-
-    @property
-    def card(self) -> Card:
-        """Its digest."""
-        ...
-
-
-class AnalysedSet(Protocol):
-    """What a handbook is made from; the shell's analysis is one."""
-
-    @property
-    def surroundings(self) -> _Surroundings:
-        """Catalogue, laboratory and schedule."""
-        ...
-
-    @property
-    def procedures(self) -> Sequence[_Procedure]:
-        """The procedures."""
-        ...
-
-    @property
-    def pages(self) -> Sequence[_Page]:
-        """The ordinary pages."""
-        ...
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -133,7 +43,8 @@ class HandbookPages:
         laboratory: Name of the laboratory.
         institution: The college.
         start: The first page.
-        lists: Procedures by course and by week.
+        lists: Procedures by course and by week, substances, stocks; for instructors, what is
+            accepted. Long lists come in parts.
         procedures: One page each; all of the edition's own type.
         pages: Ordinary pages, the welcome page excepted.
         references: Substances and stocks.
@@ -168,6 +79,16 @@ def make_handbook(analysis: AnalysedSet, edition: str) -> HandbookPages:
     return _Maker(analysis, edition).make()
 
 
+def _linked(
+    pages: tuple[m.StudentPage, ...] | tuple[m.InstructorPage, ...], found: Reference
+) -> tuple[m.StudentPage, ...] | tuple[m.InstructorPage, ...]:
+    """Make the materials of each page lead to the pages of substances and stocks."""
+    every = cast("Iterable[Any]", pages)  # all of the one kind they were
+    return tuple(
+        replace(page, reagents=tuple(linked(row, found) for row in page.reagents)) for page in every
+    )
+
+
 class _Maker:
     def __init__(self, analysis: AnalysedSet, edition: str) -> None:
         self.around = analysis.surroundings
@@ -192,6 +113,14 @@ class _Maker:
         welcome = ordinary.pop(WELCOME, None)
         courses, weeks = self._courses(), self._weeks()
         pages = tuple(ordinary.values())
+        procedures = self._procedure_pages()
+        found = make_reference(
+            self._uses(procedures),
+            self.around.catalogue,
+            laboratory,
+            instructor=self.edition == "instructor",
+        )
+        lookup = (*found.lists, *self._accepted())
         start = m.StartPage(
             title=laboratory.name or "Laboratory handbook",
             institution=laboratory.institution,
@@ -200,6 +129,9 @@ class _Maker:
             weeks=weeks,
             pages=tuple(m.PageLink(p.title, "", p.address) for p in pages),
             notice=NOTICE,
+            lists=tuple(
+                m.PageLink(page.title, "", page.address) for page in lookup if page.part == 1
+            ),
         )
         lists = [
             m.ListPage(kind="courses", title="Courses", address="courses.html", groups=courses)
@@ -208,25 +140,17 @@ class _Maker:
             lists.append(
                 m.ListPage(kind="weeks", title="Weeks", address="weeks.html", groups=weeks)
             )
-        found = references(
-            (Use(self.links[p.card.code.casefold()], p.case.procedure) for p in self.procedures),
-            self.around.catalogue,
-            laboratory,
-            instructor=self.edition == "instructor",
-        )
-        lists += reference_lists(found)
-        if self.edition == "instructor" and (accepted := self._accepted()) is not None:
-            lists.append(accepted)
+        lists += lookup
         return HandbookPages(
             edition=self.edition,
             laboratory=laboratory.name or "Laboratory handbook",
             institution=laboratory.institution,
             start=start,
             lists=tuple(lists),
-            procedures=self._procedure_pages(),
+            procedures=_linked(procedures, found),
             pages=pages,
             assets=self._assets(),
-            references=found,
+            references=found.pages,
         )
 
     def _procedure_pages(self) -> tuple[m.StudentPage, ...] | tuple[m.InstructorPage, ...]:
@@ -269,7 +193,7 @@ class _Maker:
             addresses=self.addresses,
         )
 
-    def _page(self, page: _Page) -> m.OrdinaryPage:
+    def _page(self, page: AnalysedPage) -> m.OrdinaryPage:
         return ordinary_page(
             page.path,
             page.card.title,
@@ -282,36 +206,29 @@ class _Maker:
 
     # ------------------------------------------------------------------ lists
 
-    def _accepted(self) -> m.ListPage | None:
-        """List what was found and accepted, by kind of finding, and what is intended."""
-        groups: dict[str, list[m.ListEntry]] = {}
-        titles: dict[str, str] = {}
-        for entry in self.procedures:
-            link = self.links[entry.card.code.casefold()]
-            for finding, acceptance in entry.accepted:
-                code = finding.code
-                titles[code.number] = f"{code.number} {code.name}"
-                groups.setdefault(code.number, []).append(
-                    m.ListEntry(link, f"{finding.message}. Accepted because: {acceptance.reason}")
-                )
-            for intended in entry.case.procedure.intended:
-                titles["~"] = "Intended reactions"
-                groups.setdefault("~", []).append(
-                    m.ListEntry(link, f"{intended.word}: {intended.reason}")
-                )
-        if not groups:
-            return None
-        return m.ListPage(
-            kind="accepted",
-            title="Accepted",
-            address="accepted.html",
-            groups=tuple(
-                m.ListGroup(titles[key], f"accepted-{slug(titles[key])}", tuple(entries))
-                for key, entries in sorted(groups.items())
-            ),
+    def _accepted(self) -> tuple[m.ListPage, ...]:
+        """List what was found and accepted; the student edition has no such list."""
+        if self.edition != "instructor":
+            return ()
+        return accepted_lists(
+            Accepted(
+                self.links[entry.card.code.casefold()], entry.case.procedure, tuple(entry.accepted)
+            )
+            for entry in self.procedures
         )
 
-    def _entry(self, entry: _Procedure, more: str = "") -> m.ListEntry:
+    def _uses(self, pages: Sequence[m.StudentPage | m.InstructorPage]) -> Iterator[Use]:
+        """Give the procedures with what their pages show of materials."""
+        weeks: dict[str, dict[int, None]] = {}
+        for slot in sorted(self.around.schedule, key=lambda slot: slot.week):
+            for code, _ in slot.procedures:
+                weeks.setdefault(code.casefold(), {})[slot.week] = None
+        for entry, page in zip(self.procedures, pages, strict=True):
+            code = entry.card.code.casefold()
+            run = tuple(weeks.get(code, ()))
+            yield Use(self.links[code], entry.case.procedure, page.reagents, run)
+
+    def _entry(self, entry: AnalysedProcedure, more: str = "") -> m.ListEntry:
         head = entry.case.procedure.head
         times = [
             "".join(w.text for w in quantity_words(q) if isinstance(w, m.Run))

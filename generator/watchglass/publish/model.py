@@ -242,6 +242,9 @@ class ReagentRow:
         strength: Strength, density or composition.
         provided: What a station is handed.
         rests_on: What the amount rests on beside what is written, each a clause.
+        material: Local name of the material that the line belongs to.
+        key: Catalogue key of what the line names; empty for mixtures, and for what is kept secret.
+        stock: Key of the stock that the material is, or empty.
     """
 
     name: tuple[Words, ...]
@@ -255,6 +258,9 @@ class ReagentRow:
     strength: tuple[Words, ...]
     provided: tuple[Words, ...]
     rests_on: tuple[str, ...] = ()
+    material: str = ""
+    key: str = ""
+    stock: str = ""
 
     @property
     def limiting(self) -> bool:
@@ -378,6 +384,23 @@ class ReferenceRow:
     source: str
 
 
+@dataclass(frozen=True, slots=True)
+class ListEntry:
+    """One line of a list.
+
+    Attributes:
+        link: Where it leads: a page, or a place on one.
+        remarks: A few words: time, group, sections.
+        words: What is set beside it: a formula, or how much is used.
+        reason: Why a finding was accepted; instructors' lists only.
+    """
+
+    link: PageLink
+    remarks: str
+    words: tuple[Words, ...] = ()
+    reason: str = ""
+
+
 @dataclass(frozen=True, slots=True, kw_only=True)
 class ReferencePage:
     """A page of a substance or of a stock.
@@ -386,34 +409,38 @@ class ReferencePage:
         kind: `substance` or `stock`.
         title: Its name.
         address: From the edition's root.
+        names: What else it is looked for by: other names, numbers, formula, key.
         rows: What is known of it.
-        used_in: Procedures that use it.
+        used_in: Procedures that use it, with how much a station uses; the first of them.
+        more: Where the others are listed, or None.
+        stocks: Stocks that contain it.
         lines: How it is made, in sentences; empty for substances, and in the student edition.
         remarks: What the recipe rests on.
         made: How much the recipe makes; empty where there is none.
+        figure: Molar mass, for lists; empty where unknown.
+        formula: Its formula, for lists.
+        count: How many procedures use it.
     """
 
     kind: str
     title: str
     address: str
+    names: tuple[str, ...]
     rows: tuple[ReferenceRow, ...]
-    used_in: tuple[PageLink, ...]
+    used_in: tuple[ListEntry, ...]
+    more: PageLink | None
+    stocks: tuple[PageLink, ...]
     lines: tuple[str, ...]
     remarks: tuple[str, ...]
     made: str = ""
-
-
-@dataclass(frozen=True, slots=True)
-class ListEntry:
-    """One procedure in a list: its link and a few words (time, group, sections)."""
-
-    link: PageLink
-    remarks: str
+    figure: str = ""
+    formula: tuple[Words, ...] = ()
+    count: int = 0
 
 
 @dataclass(frozen=True, slots=True)
 class ListGroup:
-    """A titled group in a list page: a course, or a week."""
+    """A titled group in a list page: a course, a week, an initial, a kind of finding."""
 
     title: str
     id: str
@@ -422,19 +449,36 @@ class ListGroup:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class ListPage:
-    """A list: `kind` is `courses`, `weeks`, `substances`, `stocks` or `accepted` (instructors')."""
+    """A list, or a part of a long one.
+
+    Attributes:
+        kind: `courses`, `weeks`, `substances`, `stocks`, `uses` (of one substance or stock) or
+            `accepted` (instructors').
+        title: Its title.
+        address: From the edition's root.
+        groups: What it lists.
+        places: Links to the groups, of whatever part they stand in.
+        previous: The part before it, or None.
+        following: The part after it, or None.
+        part: Which part it is, from 1.
+    """
 
     kind: str
     title: str
     address: str
     groups: tuple[ListGroup, ...]
+    places: tuple[PageLink, ...] = ()
+    previous: PageLink | None = None
+    following: PageLink | None = None
+    part: int = 1
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class StartPage:
     """The first page: the laboratory, the courses, the pages, the notice.
 
-    `body` is the set's own welcome page where it has one (`pages/welcome.md`).
+    `body` is the set's own welcome page where it has one (`pages/welcome.md`), `lists` what can be
+    looked up: substances, stocks, accepted findings.
     """
 
     title: str
@@ -444,3 +488,4 @@ class StartPage:
     weeks: tuple[ListGroup, ...]
     pages: tuple[PageLink, ...]
     notice: tuple[str, ...] = field(default=())
+    lists: tuple[PageLink, ...] = ()

@@ -10,13 +10,14 @@ from watchglass.base.spans import Lines
 from watchglass.publish import model as m
 from watchglass.publish.bench import MODEL, bench_steps
 from watchglass.publish.body import BodyBuilder
+from watchglass.publish.flow import flow_figures
 from watchglass.publish.lists import equipment_rows, reaction_lines
 from watchglass.publish.reagents import reagent_rows
 from watchglass.publish.text import quantity_words
 from watchglass.read.terms import Compare, Within
 from watchglass.resolve import model
 from watchglass.run.bench.evaluator import BenchEvaluator, reached_words
-from watchglass.run.bench.positions import layer_positions
+from watchglass.run.bench.positions import agreed_positions
 from watchglass.run.evaluate import Evaluator, NotKnown
 from watchglass.run.roles import material_contents, roles
 
@@ -85,9 +86,12 @@ def _builder(
     procedure = case.procedure
     evaluator = Evaluator(procedure, case.usage, catalogue, {})
     if run is not None:
-        procedure = replace(procedure, positions=layer_positions(run.ledger))
+        ledgers = [s.run.ledger for s in run.samples] or [run.ledger]
+        procedure = replace(procedure, positions=agreed_positions(ledgers))
         if instructor:
-            evaluator = BenchEvaluator(procedure, case.usage, catalogue, {}, asked=run.asked())
+            evaluator = BenchEvaluator(
+                procedure, case.usage, catalogue, {}, asked=run.opened.asked()
+            )
     return BodyBuilder(procedure, evaluator, place.addresses, path, instructor, case.course.turns)
 
 
@@ -105,6 +109,7 @@ def student_page(
         equipment=equipment_rows(case.procedure),
         reactions=reaction_lines(case.procedure),
         body=body,
+        flow=flow_figures(builder.procedure, run, instructor=False),
     )
 
 
@@ -137,7 +142,8 @@ def instructor_page(
             _expectation(e, case, catalogue, run) for e in case.procedure.expectations
         ),
         assumptions=_assumptions(case, run),
-        bench=bench_steps(run.ledger, run.known) if run is not None else (),
+        bench=bench_steps(run.opened.ledger, run.known) if run is not None else (),
+        flow=flow_figures(builder.procedure, run, instructor=True),
     )
 
 
@@ -148,9 +154,11 @@ def _expectation(
     if run is None or not isinstance(line.expression, Compare | Within):
         return m.ExpectationLine(line.written, "not assessed")
     said: list[str] = []
-    for ledger in run.ledgers:
+    runs = [sample.run for sample in run.samples] or [run]
+    pairs = [(one, ledger) for one in runs for ledger in one.ledgers]
+    for one, ledger in pairs:
         evaluator = BenchEvaluator(
-            case.procedure, case.usage, catalogue, {}, asked=run.asked(ledger)
+            one.case.procedure, case.usage, catalogue, {}, asked=one.asked(ledger)
         )
         holds, reached = evaluator.holds(line.expression)
         if holds is None or isinstance(reached, NotKnown):
@@ -165,6 +173,7 @@ def _assumptions(case: Case, run: BenchRun | None) -> tuple[str, ...]:
     found = [*ASSUMPTIONS]
     if run is not None:
         found.append(MODEL)
+        found += [_which_sample(run)] if run.samples else []
     found += [
         f"scaled: {name} is a {now} in place of a {was}."
         for name, (was, now) in case.procedure.resized.items()
@@ -174,6 +183,12 @@ def _assumptions(case: Case, run: BenchRun | None) -> tuple[str, ...]:
         for content in held if isinstance(held, tuple) else ():
             found += [f"{name}: {words}." for words in content.assumptions]
     return tuple(dict.fromkeys(found))
+
+
+def _which_sample(run: BenchRun) -> str:
+    first, *others = (sample.words.replace("`", "") for sample in run.samples)
+    also = f" Run and judged as well: {'; '.join(others)}." if others else ""
+    return f"What the vessels hold is worked out where {first}.{also}"
 
 
 def _finding(finding: Finding, lines: Lines, reason: str) -> m.FindingLine:

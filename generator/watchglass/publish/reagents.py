@@ -63,17 +63,27 @@ def _material(
             strength=_strength(material),
             provided=_provided(material),
             rests_on=contents[0].assumptions if isinstance(contents, tuple) and amount else (),
+            material=material.name,
+            key=substance.key if substance is not None else "",
+            stock=material.stock,
         )
     ]
     if mixture and isinstance(contents, tuple):
         rows += [
-            _component(c, [r for r in found if r.substance == c.substance.key], several)
+            _component(
+                c, [r for r in found if r.substance == c.substance.key], several, material.name
+            )
             for c in contents
         ]
     return rows
 
 
-def _component(content: Content, found: list[Role], several: bool) -> m.ReagentRow:  # noqa: FBT001
+def _component(
+    content: Content,
+    found: list[Role],
+    several: bool,  # noqa: FBT001
+    material: str,
+) -> m.ReagentRow:
     milligrams = content.mass < 1e-3
     return m.ReagentRow(
         name=(m.Run(f"of which {content.substance.name}"),),
@@ -90,6 +100,8 @@ def _component(content: Content, found: list[Role], several: bool) -> m.ReagentR
         strength=(),
         provided=(),
         rests_on=content.assumptions,
+        material=material,
+        key=content.substance.key,
     )
 
 

@@ -1,301 +1,188 @@
-"""Pages of substances and stocks: what is known of each, with its source, and where it is used.
+"""What the handbook can be looked up in: substances, stocks, and the lists of both.
 
-The student edition shows what its own procedures show: a candidate of a secret sample has no page,
-no entry and no link there. Recipes of stocks are the prep room's and stand in the instructor edition.
+Everything is made from what the pages of the edition show (`uses.py`): what is not in them has no
+page, no entry and no link.
 """
 
 from __future__ import annotations
 
+from dataclasses import replace
 from typing import TYPE_CHECKING, NamedTuple
 
-from watchglass.base.figures import shown
 from watchglass.publish import model as m
-from watchglass.publish.recipes import recipe_lines
-from watchglass.publish.text import NBSP, formula_words, quantity_words
-from watchglass.resolve import model
+from watchglass.publish.paging import MOST, address_of_part, in_parts
+from watchglass.publish.stock_pages import stock_page, title_of
+from watchglass.publish.substance_pages import filed, initial, substance_page
+from watchglass.publish.uses import Use, gather
 from watchglass.resolve.outline import slug
-from watchglass.resolve.reactions import substances_of
-from watchglass.run.recipes import recipe
+from watchglass.run.recipes import PrepRoom
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping
 
     from watchglass.catalogue.catalogue import Catalogue
-    from watchglass.catalogue.stocks import Stock
-    from watchglass.catalogue.substances import Substance
     from watchglass.resolve.laboratory import Laboratory
 
-NOT_CLASSIFIED = (
-    "Not assessed here. Read the supplier's safety data sheet before the bottle is opened."
-)
-UNKNOWN = "unknown"
+#: Procedures named on the page of a substance itself; the others stand on pages of their own.
+FIRST = 100
 
 
-class Use(NamedTuple):
-    """A procedure that a page of a substance or stock points to."""
+class Reference(NamedTuple):
+    """Pages of substances and stocks.
 
-    link: m.PageLink
-    procedure: model.Procedure
+    Attributes:
+        pages: One a substance or stock, in the order of their lists.
+        lists: The two lists; then, of what is used in very many procedures, the further ones.
+        substances: Address of each substance's page, by key.
+        stocks: Address of each stock's page, by key.
+    """
+
+    pages: tuple[m.ReferencePage, ...]
+    lists: tuple[m.ListPage, ...]
+    substances: Mapping[str, str]
+    stocks: Mapping[str, str]
 
 
-def references(
-    uses: Iterable[Use],
-    catalogue: Catalogue,
-    laboratory: Laboratory,
-    *,
-    instructor: bool,
-) -> tuple[m.ReferencePage, ...]:
+def make_reference(
+    uses: Iterable[Use], catalogue: Catalogue, laboratory: Laboratory, *, instructor: bool
+) -> Reference:
     """Make the pages of all substances and stocks that an edition's procedures use.
 
     Args:
-        uses: The procedures with their links, in the order of the handbook.
+        uses: The procedures, in the order of the handbook.
         catalogue: What they were looked up in.
         laboratory: What the store owns, for recipes.
         instructor: Whether the instructor edition is made.
     """
-    uses = tuple(uses)
+    found = gather(uses, catalogue, instructor=instructor)
     stocks = {stock.key: stock for stock in catalogue.stocks.values()}
-    by_substance: dict[str, dict[str, m.PageLink]] = {}
-    by_stock: dict[str, dict[str, m.PageLink]] = {key: {} for key in stocks}
-    for use in uses:
-        for key in _substances(use.procedure, instructor=instructor):
-            by_substance.setdefault(key, {})[use.link.code] = use.link
-        for material in use.procedure.materials.values():
-            if material.stock in by_stock:
-                by_stock[material.stock][use.link.code] = use.link
-    for own in catalogue.own:
-        if instructor:
-            by_substance.setdefault(own, {})
-    pages = [
-        _substance(substance, tuple(links.values()), catalogue)
-        for key, links in sorted(by_substance.items())
+    substances = {
+        key: substance
+        for key in found.substances
         if (substance := catalogue.by_key(key)) is not None
-    ]
-    pages.sort(key=lambda page: page.title.casefold())
-    made = [
-        _stock(stock, tuple(by_stock[key].values()), catalogue, laboratory, instructor=instructor)
-        for key, stock in sorted(stocks.items())
-    ]
-    return (*pages, *made)
-
-
-def _substances(procedure: model.Procedure, *, instructor: bool) -> tuple[str, ...]:
-    """Give the keys of what a procedure names openly: its materials and its equations."""
-    keys: dict[str, None] = {}
-    for material in procedure.materials.values():
-        if isinstance(material.composition, model.Secret) and not instructor:
-            continue
-        for substance in substances_of(material):
-            keys[substance.key] = None
-        solvent = getattr(material.composition, "solvent", None)
-        if solvent is not None:
-            keys[solvent.key] = None
-    for reaction in procedure.reactions.values():
-        for species in (*reaction.left, *reaction.right):
-            if species.substance is not None:
-                keys[species.substance.key] = None
-    return tuple(keys)
-
-
-def address_of_substance(key: str) -> str:
-    """Give the address of a substance's page from the edition's root."""
-    return f"substances/{slug(key)}.html"
-
-
-def address_of_stock(key: str) -> str:
-    """Give the address of a stock's page from the edition's root."""
-    return f"stocks/{slug(key)}.html"
-
-
-# ---------------------------------------------------------------- substances
-
-
-def _substance(
-    substance: Substance, links: tuple[m.PageLink, ...], catalogue: Catalogue
-) -> m.ReferencePage:
-    rows = [
-        _row("Also called", (m.Run(", ".join(substance.names[1:])),), "")
-        if len(substance.names) > 1
-        else None,
-        _row("CAS number", _text(substance.cas), substance.source("cas")),
-        _row(
-            "Formula",
-            formula_words(substance.formula) if substance.formula else None,
-            substance.source("formula"),
-        ),
-        _row(
-            "Molar mass",
-            (m.Run(f"{substance.molar_mass:.2f}{NBSP}g/mol"),) if substance.molar_mass else None,
-            "IUPAC standard atomic weights, 2021" if substance.molar_mass else "",
-        ),
-        _row("At 20 °C", _text(substance.state), ""),
-        _row("Melts", _quantity(substance.melts), substance.source("melts")),
-        _row("Boils at 1 atm", _quantity(substance.boils), substance.source("boils")),
-        _row("Flash point", _quantity(substance.flash), substance.source("flash")),
-        _density(substance),
-        _numbers("pKa, acidic", substance.acid, substance.source("acid")),
-        _numbers("pKa, of conjugate acid", substance.base, substance.source("base")),
-        _numbers(
-            "log P, octanol–water",
-            (substance.log_p,) if substance.log_p is not None else (),
-            substance.source("log-p"),
-        ),
-        *_solubilities(substance),
-        *_indicator(substance, catalogue),
-        _hazards(substance),
-    ]
-    return m.ReferencePage(
-        kind="substance",
-        title=substance.name,
-        address=address_of_substance(substance.key),
-        rows=tuple(row for row in rows if row is not None),
-        used_in=links,
-        lines=(),
-        remarks=(),
-    )
-
-
-def _row(label: str, value: tuple[m.Words, ...] | None, source: str) -> m.ReferenceRow:
-    return m.ReferenceRow(label, value or (m.Run(UNKNOWN),), source if value else "")
-
-
-def _text(text: str) -> tuple[m.Words, ...] | None:
-    return (m.Run(text),) if text else None
-
-
-def _quantity(quantity: object) -> tuple[m.Words, ...] | None:
-    return quantity_words(quantity) if quantity is not None else None  # type: ignore[arg-type]
-
-
-def _density(substance: Substance) -> m.ReferenceRow | None:
-    if substance.state != "liquid" and substance.density is None:
-        return None
-    at = substance.density
-    if at is None:
-        return _row("Density", None, "")
-    words = quantity_words(at.value)
-    if at.temperature is not None:
-        words = (*words, m.Run(" at "), *quantity_words(at.temperature))
-    return _row("Density", words, substance.source("density"))
-
-
-def _numbers(label: str, values: tuple[float, ...], source: str) -> m.ReferenceRow | None:
-    if not values:
-        return None
-    said = ", ".join(shown(value, 4).rstrip("0").rstrip(".") for value in values)
-    return _row(label, (m.Run(said),), source)
-
-
-def _solubilities(substance: Substance) -> list[m.ReferenceRow]:
-    source = substance.source("soluble")
-    return [
-        _row(
-            f"Soluble in {solvent}", (m.Run("; ".join(texts).replace(" % ", f"{NBSP}% ")),), source
+    }
+    of_substances = _addresses(substances, "substances")
+    of_stocks = _addresses(found.stocks, "stocks")
+    stock_links = {
+        key: m.PageLink(title_of(stocks[key]), "", address) for key, address in of_stocks.items()
+    }
+    pages = [
+        substance_page(
+            substance,
+            catalogue,
+            of_substances,
+            found.substances[key],
+            tuple(stock_links[stock] for stock in found.containing.get(key, ())),
         )
-        for solvent, texts in substance.soluble.items()
+        for key, substance in substances.items()
     ]
-
-
-def _indicator(substance: Substance, catalogue: Catalogue) -> list[m.ReferenceRow]:
-    indicator = catalogue.indicators.get(substance.key)
-    if indicator is None:
-        return []
-    return [
-        _row("Turns at pH", quantity_words(indicator.range), indicator.source),
-        _row(
-            "Colours",
-            (m.Run(f"{indicator.acid_colour} below, {indicator.base_colour} above"),),
-            indicator.source,
-        ),
+    pages.sort(key=lambda page: (filed(page.title), page.address))
+    room = PrepRoom(catalogue, laboratory) if instructor else None
+    made = [
+        stock_page(
+            stocks[key],
+            catalogue,
+            room,
+            of_stocks[key],
+            found.stocks[key],
+            {k: of_substances[k] for k in found.contents[key] if k in of_substances},
+            stock_links,
+        )
+        for key in found.stocks
     ]
+    made.sort(key=lambda page: (page.title.casefold(), page.address))
+    whole = (*pages, *made)
+    lists = (*_substance_list(pages), *_stock_list(made), *_further_uses(whole))
+    return Reference(tuple(map(_shortened, whole)), lists, of_substances, of_stocks)
 
 
-def _hazards(substance: Substance) -> m.ReferenceRow:
-    declared = substance.ghs
-    if not declared:
-        return m.ReferenceRow("Hazards", (m.Run(NOT_CLASSIFIED),), "")
-    classes = ", ".join((*declared.get("classes", ()), *declared.get("statements", ())))
-    source = "; ".join(declared.get("source", ()))
-    return m.ReferenceRow("Hazards as declared", (m.Run(classes),), source)
+def linked(page: m.ReagentRow, found: Reference) -> m.ReagentRow:
+    """Make a material's name lead to its substance, and its strength to the stock it is."""
+    name, strength = page.name, page.strength
+    address = found.substances.get(page.key)
+    if address is not None:
+        first = name[0]
+        before: tuple[m.Words, ...] = ()
+        if isinstance(first, m.Run) and first.text.startswith("of which "):
+            before = (m.Run("of which "),)
+            name = (m.Run(first.text.removeprefix("of which ")), *name[1:])
+        name = (*before, m.LinkTo(address, local=True, children=name))
+    stock = found.stocks.get(page.stock)
+    if stock is not None and strength:
+        strength = (m.LinkTo(stock, local=True, children=strength),)
+    return replace(page, name=name, strength=strength)
 
 
-# ---------------------------------------------------------------- stocks
+def _addresses(keys: Iterable[str], folder: str) -> dict[str, str]:
+    """Give each key an address of its own; two that are spelt alike are numbered."""
+    taken: dict[str, int] = {}
+    found: dict[str, str] = {}
+    for key in sorted(keys):
+        stem = slug(key)
+        taken[stem] = taken.get(stem, 0) + 1
+        number = "" if taken[stem] == 1 else f".{taken[stem]}th"
+        found[key] = f"{folder}/{stem}{number}.html"
+    return found
 
 
-def _stock(
-    stock: Stock,
-    links: tuple[m.PageLink, ...],
-    catalogue: Catalogue,
-    laboratory: Laboratory,
-    *,
-    instructor: bool,
-) -> m.ReferencePage:
-    rows = [
-        m.ReferenceRow("What it is", (m.Run(stock.material.text),), ""),
-        _maybe("Also called", ", ".join(stock.names)),
-        _maybe("Keeps for", stock.shelf_life),
-        _maybe("Container", stock.container),
-        _maybe("Remark", stock.notes) if instructor else None,
-    ]
-    made = recipe(stock, catalogue, laboratory) if instructor else None
-    return m.ReferencePage(
-        kind="stock",
-        title=_title(stock),
-        address=address_of_stock(stock.key),
-        rows=tuple(row for row in rows if row is not None),
-        used_in=links,
-        lines=recipe_lines(made) if made is not None else (),
-        remarks=made.assumptions if made is not None else (),
-        made=made.size if made is not None else "",
-    )
+# ---------------------------------------------------------------- what is used in very many
 
 
-def _maybe(label: str, text: str) -> m.ReferenceRow | None:
-    return m.ReferenceRow(label, (m.Run(text),), "") if text else None
+def _shortened(page: m.ReferencePage) -> m.ReferencePage:
+    if len(page.used_in) <= FIRST:
+        return page
+    title = f"{page.title}: used in {page.count} procedures, part 2"
+    more = m.PageLink(title, "", address_of_part(page.address, 2))
+    return replace(page, used_in=page.used_in[:FIRST], more=more)
 
 
-def _title(stock: Stock) -> str:
-    name = stock.names[0] if stock.names else stock.key.replace("-", " ")
-    return name[:1].upper() + name[1:]
+def _further_uses(pages: Iterable[m.ReferencePage]) -> Iterable[m.ListPage]:
+    for page in pages:
+        if len(page.used_in) > FIRST:
+            rest = m.ListGroup("Used in", "used", page.used_in[FIRST:])
+            title = f"{page.title}: used in {page.count} procedures"
+            whole = m.ListPage(kind="uses", title=title, address=page.address, groups=(rest,))
+            yield from in_parts(whole, MOST, first=2)
 
 
 # ---------------------------------------------------------------- their lists
 
 
-def reference_lists(pages: Iterable[m.ReferencePage]) -> tuple[m.ListPage, ...]:
-    """Make the lists of substances, by initial, and of stocks."""
+def _substance_list(pages: Iterable[m.ReferencePage]) -> tuple[m.ListPage, ...]:
+    """List the substances by their initials."""
     groups: dict[str, list[m.ListEntry]] = {}
-    stocks: list[m.ListEntry] = []
     for page in pages:
-        used = len(page.used_in)
-        remark = "" if not used else "in 1 procedure" if used == 1 else f"in {used} procedures"
-        entry = m.ListEntry(m.PageLink(page.title, "", page.address), remark)
-        if page.kind == "stock":
-            stocks.append(entry)
-        else:
-            initial = next((c for c in page.title if c.isalpha()), "#").upper()
-            groups.setdefault(initial, []).append(entry)
-    lists = []
-    if groups:
-        lists.append(
-            m.ListPage(
-                kind="substances",
-                title="Substances",
-                address="substances.html",
-                groups=tuple(
-                    m.ListGroup(initial, f"initial-{slug(initial) or 'other'}", tuple(entries))
-                    for initial, entries in sorted(groups.items())
-                ),
-            )
-        )
-    if stocks:
-        group = m.ListGroup("Solutions the prep room keeps", "solutions", tuple(stocks))
-        lists.append(
-            m.ListPage(kind="stocks", title="Stocks", address="stocks.html", groups=(group,))
-        )
-    return tuple(lists)
+        groups.setdefault(initial(page.title), []).append(_entry(page))
+    made = tuple(
+        m.ListGroup(letter, f"initial-{slug(letter)}", tuple(entries))
+        for letter, entries in sorted(groups.items())
+    )
+    if not made:
+        return ()
+    places = tuple(m.PageLink(group.title, "", group.id) for group in made)
+    whole = m.ListPage(
+        kind="substances",
+        title="Substances",
+        address="substances.html",
+        groups=made,
+        places=places,
+    )
+    return in_parts(whole)
 
 
-def by_key(pages: Iterable[m.ReferencePage]) -> Mapping[str, m.ReferencePage]:
-    """Give pages by their address."""
-    return {page.address: page for page in pages}
+def _stock_list(pages: Iterable[m.ReferencePage]) -> tuple[m.ListPage, ...]:
+    entries = tuple(map(_entry, pages))
+    if not entries:
+        return ()
+    group = m.ListGroup("Solutions the prep room keeps", "solutions", entries)
+    whole = m.ListPage(kind="stocks", title="Stocks", address="stocks.html", groups=(group,))
+    return in_parts(whole)
+
+
+def _entry(page: m.ReferencePage) -> m.ListEntry:
+    used = "" if not page.count else f"in {page.count} procedure{'s' if page.count > 1 else ''}"
+    words = page.formula
+    if page.kind == "stock":
+        words = page.rows[0].value
+    remarks = " · ".join(filter(None, (page.figure, used)))
+    return m.ListEntry(m.PageLink(page.title, "", page.address), remarks, words)

@@ -1,11 +1,14 @@
-"""The index of an edition for its offline search: a core, and shards of words by their beginnings.
+"""The index of an edition for its offline search: a core, words, and texts.
 
-The core holds a line for each page (title, address, what stands beside it, headings) and is loaded
-when the search box is first used. Words of the pages lie in shards, each a range of beginnings and
-of bounded size, of which a query loads one for each of its words: however many pages a set has, a
-query loads no more. Everything is made from the models of the edition alone, so what is not in its
-pages cannot be found in its index. Files are plain scripts, since a page opened from disk may load
-no other.
+The core holds a line for each page (title, address, what stands beside it, folded names, headings)
+and is loaded when the search box is first used: titles, codes, materials, names, numbers and
+headings are found with it alone. All other words lie in shards, each a range of the alphabet; a
+query loads those that its words lie in. Texts lie in shards of their own, by pages, and are loaded
+for the results that are shown, to show them in their context.
+
+A shard ends at the first word past `SHARD` characters, and one word takes no more characters than
+a quarter of the number of sections, so a shard stays small however large the set is. Files are plain
+scripts: a page opened from disk may load no other.
 """
 
 from __future__ import annotations
@@ -13,46 +16,32 @@ from __future__ import annotations
 import json
 import re
 import unicodedata
-from typing import TYPE_CHECKING, NamedTuple
+from array import array
+from base64 import b64encode
+from typing import TYPE_CHECKING
 
-from watchglass.publish import model as m
-from watchglass.publish.body import text_of
+from watchglass.publish.search_entries import search_entries
 
 if TYPE_CHECKING:
-    from collections.abc import Iterable, Iterator
+    from collections.abc import Iterable, Iterator, Mapping, Sequence
 
     from watchglass.publish.handbook import HandbookPages
+    from watchglass.publish.search_entries import Entry
 
-#: Characters of a shard, about; a single beginning of two letters is never divided.
-SHARD = 60_000
+#: Characters of a shard of words or texts, about.
+SHARD = 48_000
 _WORD = re.compile(r"[^\W_]+(?:[.,][0-9]+)*")
 _MARKS = re.compile(r"[\u0300-\u036f]")
 
 
-class Entry(NamedTuple):
-    """One page in the index.
-
-    Attributes:
-        title: Its title.
-        address: From the edition's root.
-        beside: What stands beside the title in a list of results.
-        headings: Text and address within the page.
-        words: Folded words of its text, without repeats.
-    """
-
-    title: str
-    address: str
-    beside: str
-    headings: tuple[tuple[str, str], ...]
-    words: frozenset[str]
-
-
 def fold(text: str) -> str:
-    """Fold text for comparing: case, accents, sub- and superscripts.
+    """Fold text for comparing: case, accents, sub- and superscripts. `search.js` does the same.
 
     >>> fold("H₂SO₄ µL Crème")
     'h2so4 μl creme'
     """
+    if text.isascii():
+        return text.lower()
     plain = unicodedata.normalize("NFKD", text).casefold()
     return _MARKS.sub("", plain)
 
@@ -66,122 +55,125 @@ def words_of(text: str) -> frozenset[str]:
     return frozenset(_WORD.findall(fold(text)))
 
 
-def search_files(pages: HandbookPages) -> tuple[tuple[str, str], ...]:
-    """Make the files of the index.
+def search_files(pages: HandbookPages) -> Iterator[tuple[str, str]]:
+    """Make the files of the index, one after the other: address from the root, and content."""
+    return index_files(search_entries(pages))
 
-    Returns:
-        Address from the root and content of each: the core, then the shards.
+
+def index_files(entries: Iterable[Entry]) -> Iterator[tuple[str, str]]:
+    """Make the files of the index of some pages: shards of texts, shards of words, the core.
+
+    Pages are taken one by one and not kept: a large set is indexed in little more than its words.
     """
-    entries = tuple(_entries(pages))
-    shards = tuple(_shards(entries))
-    core = {
-        "pages": [
-            [e.title, e.address, e.beside, [list(heading) for heading in e.headings]]
-            for e in entries
-        ],
-        "shards": [first for first, _ in shards],
-    }
-    files = [("search/core.js", f"handbookSearch.core({_json(core)});\n")]
-    for number, (_, words) in enumerate(shards):
-        files.append(
-            (f"search/words-{number:03}.js", f"handbookSearch.words({number},{_json(words)});\n")
+    index: dict[str, array[int]] = {}
+    lines: list[list[object]] = []
+    texts: list[int] = []
+    words: list[str] = []
+    for first, held in _text_shards(_noted(entries, index, lines)):
+        yield (
+            f"search/texts-{len(texts)}.js",
+            f"handbookSearch.texts({len(texts)},{_json(held)});\n",
         )
-    return tuple(files)
+        texts.append(first)
+    for shard in _word_shards(index):
+        yield (
+            f"search/words-{len(words)}.js",
+            f"handbookSearch.words({len(words)},{_json(shard)});\n",
+        )
+        words.append(next(iter(shard)))
+    core = {"pages": lines, "words": words, "texts": texts}
+    yield "search/core.js", f"handbookSearch.core({_json(core)});\n"
+
+
+def _noted(
+    entries: Iterable[Entry], index: dict[str, array[int]], lines: list[list[object]]
+) -> Iterator[Entry]:
+    """Pass pages on, each with its words noted by number of section, and its line for the core."""
+    number = 0
+    for entry in entries:
+        for section in entry.sections:
+            text = " ".join((section.heading, *(piece.text for piece in section.pieces)))
+            for word in words_of(text):
+                where = index.get(word)
+                if where is None:
+                    where = index[word] = array("L")
+                where.append(number)
+            number += 1
+        lines.append(_line(entry))
+        yield entry
 
 
 def _json(value: object) -> str:
     return json.dumps(value, ensure_ascii=True, separators=(",", ":")).replace("</", "<\\/")
 
 
-def _shards(entries: tuple[Entry, ...]) -> Iterator[tuple[str, dict[str, list[int]]]]:
-    """Give each shard with the beginning (two characters) that its first word has."""
-    index: dict[str, list[int]] = {}
-    for number, entry in enumerate(entries):
-        for word in entry.words:
-            index.setdefault(word, []).append(number)
-    shard: dict[str, list[int]] = {}
-    first, size = "", 0
-    for word in sorted(index):
-        begins = word[:2]
-        if shard and size > SHARD and begins != _last(shard)[:2]:
-            yield first, shard
+def _line(entry: Entry) -> list[object]:
+    """Give a page in the core; its names are folded here, so that a browser need not."""
+    names = sorted(words_of(" ".join((entry.title, entry.beside, *entry.names))))
+    headings = [text for s in entry.sections[1:] for text in (s.heading, s.place)]
+    return [entry.title, entry.address, entry.beside, " ".join(names), headings]
+
+
+# ---------------------------------------------------------------- words
+
+
+def _word_shards(index: Mapping[str, Sequence[int]]) -> Iterator[dict[str, list[int] | str]]:
+    """Divide the alphabet into shards: for each word, where it stands."""
+    shard: dict[str, list[int] | str] = {}
+    size = 0
+    for word in sorted(index, key=_as_browsers_sort):
+        shard[word] = where = posted(index[word])
+        size += len(word) + 6 + (len(where) if isinstance(where, str) else len(_json(where)))
+        if size > SHARD:
+            yield shard
             shard, size = {}, 0
-        if not shard:
-            first = begins if first or size else ""
-        shard[word] = index[word]
-        size += len(word) + 6 * len(index[word]) + 6
+    if shard:
+        yield shard
+
+
+def _as_browsers_sort(word: str) -> bytes:
+    """Give what a browser compares texts by: units of UTF-16, not code points."""
+    return word.encode("utf-16-be")
+
+
+def posted(sections: Sequence[int]) -> list[int] | str:
+    """Give numbers of sections, rising, in few characters.
+
+    Returns:
+        The first number and then the steps from each to the next; or, where that is shorter, a bit
+        a section (lowest first in each byte), in base 64.
+
+    >>> posted([3, 4, 9])
+    [3, 1, 5]
+    >>> posted(range(16))
+    '//8='
+    """
+    steps = [b - a for a, b in zip((0, *sections), sections, strict=False)]
+    if len(steps) * 12 <= sections[-1]:  # rare: bits would hardly be shorter
+        return steps
+    bits = bytearray(sections[-1] // 8 + 1)
+    for number in sections:
+        bits[number // 8] |= 1 << number % 8
+    coded = b64encode(bytes(bits)).decode()
+    return coded if len(coded) + 2 < len(_json(steps)) else steps
+
+
+# ---------------------------------------------------------------- texts
+
+
+def _text_shards(entries: Iterable[Entry]) -> Iterator[tuple[int, list[object]]]:
+    """Divide the pages into shards: number of the first page, and each page's sections of pieces."""
+    first, size = 0, 0
+    shard: list[object] = []
+    for number, entry in enumerate(entries):
+        pieces = [
+            [text for piece in section.pieces for text in (piece.place, piece.text)]
+            for section in entry.sections
+        ]
+        shard.append(pieces)
+        size += sum(len(text) + 3 for section in pieces for text in section)
+        if size > SHARD:
+            yield first, shard
+            first, size, shard = number + 1, 0, []
     if shard:
         yield first, shard
-
-
-def _last(shard: dict[str, list[int]]) -> str:
-    return next(reversed(shard))
-
-
-# ---------------------------------------------------------------- what pages hold
-
-
-def _entries(pages: HandbookPages) -> Iterator[Entry]:
-    for page in pages.procedures:
-        yield _procedure(page)
-    for ordinary in pages.pages:
-        text = " ".join((ordinary.title, *_texts(ordinary.body)))
-        headings = tuple((said, place) for _, place, said in ordinary.outline)
-        yield Entry(ordinary.title, ordinary.address, "page", headings, words_of(text))
-    for reference in pages.references:
-        rows = (f"{row.label} {text_of(row.value)}" for row in reference.rows)
-        text = " ".join((reference.title, *rows, *reference.lines))
-        beside = "stock" if reference.kind == "stock" else "substance"
-        yield Entry(reference.title, reference.address, beside, (), words_of(text))
-    for page_list in pages.lists:
-        groups = " ".join(group.title for group in page_list.groups)
-        yield Entry(
-            page_list.title, page_list.address, "list", (), words_of(f"{page_list.title} {groups}")
-        )
-
-
-def _procedure(page: m.StudentPage | m.InstructorPage) -> Entry:
-    facts = page.facts
-    materials = " ".join(
-        f"{text_of(row.name)} {row.local} {text_of(row.formula)}" for row in page.reagents
-    )
-    equipment = " ".join(row.what for row in page.equipment)
-    text = " ".join(
-        (
-            facts.title,
-            facts.code,
-            facts.course,
-            materials,
-            equipment,
-            *(text_of(line.equation) for line in page.reactions),
-            *_texts(page.before),
-            *_texts(page.body),
-        )
-    )
-    headings = tuple((said, place) for _, place, said in facts.outline)
-    beside = " · ".join(filter(None, (facts.code, facts.course)))
-    return Entry(facts.title, facts.address, beside, headings, words_of(text))
-
-
-def _texts(blocks: Iterable[m.Blocks]) -> Iterator[str]:
-    """Give the plain text of blocks."""
-    for block in blocks:
-        match block:
-            case m.Para(children) | m.Title(_, _, children):
-                yield text_of(children)
-            case m.StepList(items):
-                for item in items:
-                    yield from _texts(item.children)
-            case m.ItemList(_, lists):
-                for inside in lists:
-                    yield from _texts(inside)
-            case m.Quoted(inner) | m.Panel(_, inner) | m.InstructorPanel(_, inner):
-                yield from _texts(inner)
-            case m.Listing(text):
-                yield text
-            case m.Grid():
-                for row in (block.head, *block.rows):
-                    for cell in row:
-                        yield text_of(cell)
-            case m.Divider():
-                pass

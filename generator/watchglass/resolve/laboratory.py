@@ -43,7 +43,10 @@ FIELDS: dict[str, Field] = {
         "what is owned: `conical flask 100 mL: 60`",
         each=Field(Shape.TEXT, "how many there are", pattern=_COUNT.pattern),
     ),
-    "reagents": Field(Shape.TEXT_OR_LIST, "what the store holds: `37 % w/w hydrochloric acid`"),
+    "reagents": Field(
+        Shape.TEXT_OR_LIST,
+        "what the store holds: `37 % w/w hydrochloric acid, 1.18 g/mL`, `sodium hydroxide, 97 % w/w`",
+    ),
     "measures": Field(
         Shape.MAPPING,
         "countable measures with their size, as `drop: 0.05 mL`",
@@ -80,7 +83,8 @@ class Laboratory:
         temperature: Of the room, K; 25 °C where not said.
         balance: Finest step of the balances, kg; 0.01 g where not said.
         glassware: What is owned, with how many.
-        reagents: What the store holds of reagents, in the notation of a material.
+        reagents: What the store holds of reagents: a material with its density or purity behind a
+            comma.
         measures: Countable measures of its own, m3 or None.
         baths: Names of baths.
         streams: Names of waste streams, the common ones included.

@@ -3,7 +3,9 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, field
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, Any
+
+import pytest
 
 from bench_runner import knowledge
 from watchglass.run.bench.knowledge import Knowledge, Solubility, Thing
@@ -61,6 +63,13 @@ class Shelf(Knowledge):
 
 
 SHELF = Shelf()
+
+
+def near(expected: Any, rel: float | None = None, abs: float | None = None) -> Any:  # noqa: A002
+    """Give what stands for a float in a record that is compared, `pytest.approx`."""
+    return pytest.approx(expected, rel=rel, abs=abs)
+
+
 #: 998.2 g of water in a litre, 55.41 mol.
 LITRE = Phase({"water": 998.2 / 18.015}, 1e-3)
 

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import pytest
 
-from run.bench.shelf import ANY, LITRE, SHELF, THINGS, Shelf, liquid, litres
+from run.bench.shelf import ANY, LITRE, SHELF, THINGS, Shelf, liquid, litres, near
 from watchglass.run.bench.knowledge import Thing
 from watchglass.run.bench.pouring import Drawn
 from watchglass.run.bench.separating import distil, evaporate, run_through
@@ -37,8 +37,8 @@ def test_what_boils_at_125_celsius_goes_off_and_what_boils_higher_stays() -> Non
     parted = evaporate(pot(early=1.0, late=2.0, oil=3.0), None, STILL)
 
     assert parted.over.organic.amounts == {"early": 1.0, "late": 2.0}
-    assert parted.over.volume == pytest.approx(375e-6)
-    assert parted.vessel.organic == Phase({"oil": 3.0}, pytest.approx(375e-6))
+    assert parted.over.volume == near(375e-6)
+    assert parted.vessel.organic == Phase({"oil": 3.0}, near(375e-6))
     assert parted.why == ()
 
 
@@ -79,7 +79,7 @@ def test_ions_of_a_solution_that_went_dry_are_kept_without_volume() -> None:
     parted = evaporate(brine, None, hot)
 
     assert parted.vessel.aqueous == Phase({"Na^+": 2.0, "Cl^-": 2.0}, 0.0)
-    assert parted.over.aqueous.volume == pytest.approx(1e-3, rel=1e-4)
+    assert parted.over.aqueous.volume == near(1e-3, rel=1e-4)
 
 
 def test_liquid_of_unknown_boiling_point_is_said_to_stay() -> None:
@@ -101,22 +101,22 @@ def test_what_is_to_be_left_stays_in_the_pot_in_the_proportions_of_the_vapour() 
     # 2 mol and 2 mol are 500 mL; 100 mL of them are a fifth of each.
     parted = evaporate(pot(early=2.0, late=2.0), 100e-6, STILL)
 
-    assert parted.vessel.organic.amounts == pytest.approx({"early": 0.4, "late": 0.4})
-    assert parted.vessel.organic.volume == pytest.approx(100e-6)
-    assert parted.over.organic.amounts == pytest.approx({"early": 1.6, "late": 1.6})
+    assert parted.vessel.organic.amounts == near({"early": 0.4, "late": 0.4})
+    assert parted.vessel.organic.volume == near(100e-6)
+    assert parted.over.organic.amounts == near({"early": 1.6, "late": 1.6})
 
 
 def test_what_stays_anyway_counts_towards_what_is_left() -> None:
     # 100 mL of oil stay; of 150 mL to be left, 50 mL come out of 250.
     parted = evaporate(pot(early=2.0, oil=0.8), 150e-6, STILL)
 
-    assert parted.vessel.organic.amounts == pytest.approx({"early": 0.4, "oil": 0.8})
+    assert parted.vessel.organic.amounts == near({"early": 0.4, "oil": 0.8})
 
 
 def test_more_to_be_left_than_there_is_leaves_all() -> None:
     parted = evaporate(pot(early=2.0), 900e-6, STILL)
 
-    assert parted.vessel.organic.amounts == pytest.approx({"early": 2.0})
+    assert parted.vessel.organic.amounts == near({"early": 2.0})
     assert parted.over == Drawn(temperature=300.0)
 
 
@@ -163,7 +163,7 @@ def test_water_in_the_pot_stays_an_aqueous_layer() -> None:
 
     assert parted.vessel.aqueous.amounts == LITRE.amounts
     assert parted.vessel.organic == EMPTY
-    assert parted.over.organic.amounts == {"spirit": pytest.approx(0.8)}
+    assert parted.over.organic.amounts == {"spirit": near(0.8)}
 
 
 # ---------------------------------------------------------------- filters

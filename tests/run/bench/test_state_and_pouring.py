@@ -8,6 +8,7 @@ from __future__ import annotations
 import pytest
 
 from bench_runner import knowledge
+from run.bench.shelf import near
 from watchglass.run.bench.bringing import Brought
 from watchglass.run.bench.pouring import Drawn, draw, drawn_from, pour
 from watchglass.run.bench.state import EMPTY, Bench, Phase, Sink, Vessel, added
@@ -57,8 +58,8 @@ def test_sums_leave_what_they_are_made_of_alone() -> None:
 def test_quarter_of_a_layer_is_a_quarter_of_everything() -> None:
     part = WATER.share(0.25)
 
-    assert part.amounts == pytest.approx({"water": 0.25, "Na^+": 0.05, "Cl^-": 0.05})
-    assert part.volume == pytest.approx(5e-6)
+    assert part.amounts == near({"water": 0.25, "Na^+": 0.05, "Cl^-": 0.05})
+    assert part.volume == near(5e-6)
 
 
 @pytest.mark.parametrize("more", [1.0, 1.5])
@@ -75,7 +76,7 @@ def test_layers_poured_together_add_amounts_and_volumes() -> None:
     both = WATER.plus(Phase({"water": 2.0}, 30e-6))
 
     assert both.amounts == {"water": 3.0, "Na^+": 0.2, "Cl^-": 0.2}
-    assert both.volume == pytest.approx(50e-6)
+    assert both.volume == near(50e-6)
 
 
 def test_empty_layer_adds_nothing_on_either_side() -> None:
@@ -95,7 +96,7 @@ def test_vessel_of_a_material_of_unknown_amount_is_not_empty() -> None:
 
 
 def test_volume_of_a_vessel_is_that_of_both_layers() -> None:
-    assert FULL.volume == pytest.approx(70e-6)
+    assert FULL.volume == near(70e-6)
 
 
 def test_emptied_vessel_keeps_its_place_and_forgets_its_contents() -> None:
@@ -134,7 +135,7 @@ def test_sink_gathers_what_is_let_go_into_it() -> None:
     assert bench.sinks["waste"] == Sink(
         {"water": 2.0, "Na^+": 0.4, "Cl^-": 0.4, "diethyl-ether": 0.5},
         {"silica": 3.0},
-        pytest.approx(90e-6),
+        near(90e-6),
         frozenset({"a", "b"}),
     )
 
@@ -152,11 +153,11 @@ def test_sinks_are_kept_apart() -> None:
 def test_half_of_everything_leaves_the_other_half() -> None:
     left, taken = draw(FULL, "", 0.5)
 
-    assert taken.aqueous.volume == pytest.approx(10e-6)
+    assert taken.aqueous.volume == near(10e-6)
     assert taken.organic.amounts == {"diethyl-ether": 0.25}
     assert taken.solid == {"sodium-chloride": 0.2}
-    assert left.aqueous.amounts == pytest.approx({"water": 0.5, "Na^+": 0.1, "Cl^-": 0.1})
-    assert left.organic.volume == pytest.approx(25e-6)
+    assert left.aqueous.amounts == near({"water": 0.5, "Na^+": 0.1, "Cl^-": 0.1})
+    assert left.organic.volume == near(25e-6)
     assert left.solid == {"sodium-chloride": 0.2}
 
 
@@ -176,10 +177,10 @@ def test_all_that_is_drawn_leaves_an_empty_vessel() -> None:
 def test_part_is_drawn_and_the_others_stay(part: str, volume: float, solid: float) -> None:
     left, taken = draw(FULL, part)
 
-    assert taken.volume == pytest.approx(volume)
-    assert sum(taken.solid.values()) == pytest.approx(solid)
-    assert left.volume == pytest.approx(70e-6 - volume)
-    assert sum(left.solid.values()) == pytest.approx(0.4 - solid)
+    assert taken.volume == near(volume)
+    assert sum(taken.solid.values()) == near(solid)
+    assert left.volume == near(70e-6 - volume)
+    assert sum(left.solid.values()) == near(0.4 - solid)
 
 
 def test_ph_goes_with_the_water_and_is_kept_where_water_is_left() -> None:
@@ -245,7 +246,7 @@ def test_temperatures_mix_by_volume() -> None:
     held = Vessel("B", aqueous=WATER, temperature=290.0)
     coming = Drawn(Phase({"water": 3.0}, 60e-6), temperature=330.0)
 
-    assert pour(held, coming, KNOWN).temperature == pytest.approx(320.0)
+    assert pour(held, coming, KNOWN).temperature == near(320.0)
 
 
 def test_bath_holds_the_temperature_of_what_is_in_it() -> None:

@@ -98,6 +98,7 @@ class Runner:
     branches: Branches = field(init=False)
     _kept: list[tuple[Branch, Kept]] = field(default_factory=list)
     _since: Bench | None = None
+    _mixed: dict[str, tuple[Vessel, Mixed]] = field(default_factory=dict)
     _fresh: int = 0
 
     def __post_init__(self) -> None:
@@ -225,13 +226,25 @@ class Runner:
 
     def mix(self, vessel: Vessel) -> Vessel:
         """Bring a vessel to equilibrium, let its gas go, and enter what happened."""
+        last = self._mixed.get(vessel.name)
+        if last is not None and _untouched(vessel, last[0]):
+            return self._mixed_again(vessel, *last)
         vessel, mixed = mix(vessel, self.known)
         if mixed.dissolved and vessel.aqueous:
             vessel = self._warm(vessel, heat.on_dissolving(vessel, mixed.dissolved, self.known))
         if mixed.gas:
             self.bench = self.bench.to_sink(AIR, liquids=(Phase(mixed.gas, 0.0),))
         self.put(vessel)
+        self._mixed[vessel.name] = vessel, mixed
         self.results.append(Result(vessel.name, mixed))
+        return vessel
+
+    def _mixed_again(self, vessel: Vessel, before: Vessel, mixed: Mixed) -> Vessel:
+        """Mix what is at equilibrium already: it stays as it is, and nothing new happens."""
+        vessel = vessel._replace(ph=before.ph, doubt=before.doubt, mixed=True, settled=False)
+        self.put(vessel)
+        same = mixed._replace(gas=NOTHING, precipitated=NOTHING, dissolved=NOTHING)
+        self.results.append(Result(vessel.name, same))
         return vessel
 
     def pour(self, name: str, coming: Drawn) -> None:
@@ -424,6 +437,17 @@ class Runner:
         if vessel.solid and part in ("", "solid"):
             return mass_of(vessel.solid, self.known)
         return mass_held(vessel, self.known)
+
+
+def _untouched(vessel: Vessel, before: Vessel) -> bool:
+    """Tell whether a vessel still holds just what it held, the very same layers at one temperature."""
+    return (
+        vessel.aqueous is before.aqueous
+        and vessel.organic is before.organic
+        and vessel.solid is before.solid
+        and vessel.temperature == before.temperature
+        and vessel.unknown == before.unknown
+    )
 
 
 def _at(event: model.Charge | model.Operation) -> float | None:
