@@ -28,6 +28,7 @@ if TYPE_CHECKING:
     from watchglass.catalogue.catalogue import Catalogue
     from watchglass.judge.bench.run import Run as BenchRun
     from watchglass.judge.case import Case
+    from watchglass.publish.shapes import Figure
     from watchglass.read.syntax import ProcedureSyntax
     from watchglass.resolve.model import Acceptance, Expectation
 
@@ -144,7 +145,17 @@ def instructor_page(
         assumptions=_assumptions(case, run),
         bench=bench_steps(run.opened.ledger, run.known) if run is not None else (),
         flow=flow_figures(builder.procedure, run, instructor=True),
+        plots=_plots(run),
     )
+
+
+def _plots(run: BenchRun | None) -> tuple[Figure, ...]:
+    if run is None:
+        return ()
+    from watchglass.publish.plots import plot_figures  # noqa: PLC0415 - of instructors' pages alone
+
+    shown_run = run.opened
+    return plot_figures(shown_run.case.procedure, shown_run.ledger, run.known)
 
 
 def _expectation(

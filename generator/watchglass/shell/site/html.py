@@ -29,6 +29,17 @@ _BLANK_LINE = '<span class="blank-line"></span>'
 _TO_FILL = '<td class="to-fill"><span class="unseen">to fill in</span></td>'
 
 
+def _role(drawn: Shape) -> str:
+    """Give the role of a drawing: a picture has nothing in it to press; one with links is a group."""
+    return "group" if _links(drawn) else "img"
+
+
+def _links(drawn: Shape) -> bool:
+    return drawn.element == "a" or any(
+        _links(child) for child in drawn.children if not isinstance(child, str)
+    )
+
+
 class NotForStudents(Exception):  # noqa: N818 - names what was met; a fault of ours, never an author's
     """A student page holds what only instructors may see."""
 
@@ -137,7 +148,7 @@ class Writer:
         )
         inner = "".join([self._shape(child) for child in svg.children])
         return (
-            f'<svg role="img" aria-labelledby="{name}.title {name}.desc"'
+            f'<svg role="{_role(svg)}" aria-labelledby="{name}.title {name}.desc"'
             f"{self._attributes(svg)}>{told}{inner}</svg>"
         )
 
