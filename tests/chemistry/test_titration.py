@@ -190,6 +190,15 @@ def test_protons_of_one_pka_leave_together() -> None:
     assert [point.volume for point in points] == pytest.approx([50e-6])
 
 
+def test_protons_of_one_pka_leave_together_before_those_of_another() -> None:
+    # 1 and 2 mmol at pKa 4, then 1 mmol at 9: 30 and 40 mL of 0.100 M.
+    families = tuple(Family((pka,), 0, n) for pka, n in ((4.0, 1e-3), (9.0, 1e-3), (4.0, 2e-3)))
+    points = equivalence_points(PhaseSystem(families, 0.0, 1e-3), PhaseSystem((), 0.1, 1e-3))
+    assert points is not None
+
+    assert [point.volume for point in points] == pytest.approx([30e-6, 40e-6])
+
+
 def test_strong_acid_alone_has_one_equivalence_point_at_seven() -> None:
     points = equivalence_points(PhaseSystem((), -1e-3, 10e-6), ALKALI)
     assert points is not None

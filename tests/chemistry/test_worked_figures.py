@@ -12,7 +12,7 @@ from watchglass.chemistry.equilibrium import Family, Part, PhaseSystem, solve
 from watchglass.chemistry.formulas import Formula, parse_formula
 from watchglass.chemistry.gases import gas_amount, gas_volume
 from watchglass.chemistry.heat import heat_capacity
-from watchglass.chemistry.moving import volume_to_move
+from watchglass.chemistry.moving import reagent_by_equation, volume_to_move
 from watchglass.chemistry.solutions import solid_to_weigh, solute_mass, solute_units
 from watchglass.chemistry.stoichiometry import (
     Limit,
@@ -267,11 +267,13 @@ def test_phenol_far_below_its_pka_is_neutral_though_nothing_else_is_known_of_it(
     assert found.parts[0] == Part(None, None, None, None, None)
     assert found.parts[1][:3] == (None, None, None)
     assert found.parts[1].charge == pytest.approx(0.0, abs=1e-6)
+    assert found.parts[1].fractions == pytest.approx((1.0, 0.0), abs=1e-6)
 
 
 def test_buffer_capacity_of_water_is_that_of_its_own_ions() -> None:
     # pH 4: ln 10 x (1e-4 + 1e-10) mol/L = 0.230 mol/m3.
     assert buffer_capacity([], 4.0) == pytest.approx(0.23026, rel=1e-4)
+    assert buffer_capacity([], 10.0) == pytest.approx(0.23026, rel=1e-4)
 
 
 def test_two_equal_pkas_buffer_by_three_states_alike() -> None:
@@ -280,6 +282,21 @@ def test_two_equal_pkas_buffer_by_three_states_alike() -> None:
 
 
 # ---------------------------------------------------------------- moving a share
+
+
+@pytest.mark.parametrize(
+    ("sites", "excess", "moles"), [(1, 1.0, 0.1), (2, 1.0, 0.2), (2, 1.5, 0.3), (1, 1.2, 0.12)]
+)
+def test_reagent_by_the_equation_is_amount_times_sites_times_excess(
+    sites: int, excess: float, moles: float
+) -> None:
+    found = reagent_by_equation(amount=0.1, sites=sites, excess=excess)
+
+    assert found == pytest.approx(moles)
+
+
+def test_reagent_by_the_equation_is_one_for_one_unless_it_is_said() -> None:
+    assert reagent_by_equation(amount=0.1) == pytest.approx(0.1)
 
 
 ETHER = PhaseSystem((Family((4.6,), 1, 0.01, 8.0),), 0.0, 20e-6, 50e-6)

@@ -60,6 +60,7 @@ def test_card_of_a_procedure_has_its_head() -> None:
         (":::instructor\n> See [it](x.md).\n:::", True),
         (":::instructor\n| a |\n|---|\n| [it](x.md) |\n:::", True),
         (":::instructor\n:::caution\nSee [it](x.md).\n:::\n:::", True),
+        ("Pour [from [it](x.md)]{5 mL water -> A}.", False),
         ("    code\n\n---\n\nSee [it](x.md).", False),
     ],
 )

@@ -153,3 +153,10 @@ def test_parting_takes_alkali_and_strong_acid_as_needed(name: str) -> None:
     usage = golden("oc-04").case.usage[name]
 
     assert (usage.totals, usage.as_needed) == ((), True)
+
+
+def test_half_of_what_is_provided_is_taken_in_every_pass() -> None:
+    # Three halves of 0.900 g, to the milligram that it is given to.
+    usage = used("mixture", "{half mixture -> A}", "{again 1, 2 more times}")
+
+    assert total(usage) == "1.350 g"

@@ -68,6 +68,7 @@ def test_handbook_has_the_pages_it_should(good: Path) -> None:
         "404.html",
         "courses.html",
         "css/handbook.css",
+        "css/plots.css",
         "css/figures.css",
         "css/print.css",
         "index.html",

@@ -17,8 +17,8 @@ if TYPE_CHECKING:
     from watchglass.run.bench.sweeps import Curve
 
 #: Size of the drawing and of its margins, in units of the drawing: a CSS pixel where there is room.
-WIDTH, HEIGHT = 460.0, 270.0
-_LEFT, _RIGHT, _TOP, _BOTTOM = 54.0, 136.0, 14.0, 46.0
+WIDTH, HEIGHT = 470.0, 270.0
+_LEFT, _RIGHT, _TOP, _BOTTOM = 54.0, 146.0, 14.0, 46.0
 _TEXT = 12.0
 #: Letters of a curve's name that fit beside the plot.
 _NAME = 20

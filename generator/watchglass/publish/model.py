@@ -342,6 +342,19 @@ class ExpectationLine:
     outcome: str
 
 
+@dataclass(frozen=True, slots=True)
+class SensitivityRow:
+    """An expectation, what it comes to, what it hangs on in words, and the inputs that matter.
+
+    `effects` has one entry an input: its words, and what is reached with less and with more of it.
+    """
+
+    expectation: str
+    reached: str
+    verdict: str
+    effects: tuple[tuple[str, str, str], ...]
+
+
 @dataclass(frozen=True, slots=True, kw_only=True)
 class InstructorPage:
     """A procedure as instructors see it; `bench` is what every vessel holds after every step."""
@@ -360,6 +373,7 @@ class InstructorPage:
     bench: tuple[BenchStep, ...] = ()
     flow: tuple[Figure, ...] = ()
     plots: tuple[Figure, ...] = ()
+    sensitivity: tuple[SensitivityRow, ...] = ()
 
 
 # ---------------------------------------------------------------- other pages

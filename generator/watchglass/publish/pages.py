@@ -146,6 +146,7 @@ def instructor_page(
         bench=bench_steps(run.opened.ledger, run.known) if run is not None else (),
         flow=flow_figures(builder.procedure, run, instructor=True),
         plots=_plots(run),
+        sensitivity=_sensitivity(run),
     )
 
 
@@ -156,6 +157,14 @@ def _plots(run: BenchRun | None) -> tuple[Figure, ...]:
 
     shown_run = run.opened
     return plot_figures(shown_run.case.procedure, shown_run.ledger, run.known)
+
+
+def _sensitivity(run: BenchRun | None) -> tuple[m.SensitivityRow, ...]:
+    if run is None or not run.case.procedure.expectations:
+        return ()
+    from watchglass.publish.sensitivity import sensitivity_rows  # noqa: PLC0415 - as above
+
+    return sensitivity_rows(run.opened)
 
 
 def _expectation(

@@ -18,7 +18,7 @@ ATTRIBUTES = frozenset(
     (
         *("class", "id", "role", "viewBox", "width", "height", "x", "y", "dx", "dy", "rx", "r"),
         *("cx", "cy", "x1", "x2", "y1", "y2", "d", "transform", "text-anchor", "href"),
-        *("aria-hidden", "aria-labelledby", "dominant-baseline", "fill", "stroke"),
+        *("aria-hidden", "aria-labelledby", "dominant-baseline", "fill", "stroke", "font-size"),
     )
 )
 

@@ -250,7 +250,7 @@ def _at_the_bench(case: Case, around: Surroundings, brought: Mapping[str, Vessel
     ledger = high = run_bench(*going, carried=brought)
     if has_open_amounts(case.procedure):
         high = run_bench(*going, carried=brought, high=True)
-    return Run(case, ledger, high, around.known, around.laboratory)
+    return Run(case, ledger, high, around.known, around.laboratory, carried=brought)
 
 
 def analyse_page(path: str, source: Source, around: Surroundings) -> JudgedPage:

@@ -12,7 +12,7 @@ import pytest
 from bench_runner import knowledge, outcomes, ran
 from run.bench.shelf import near
 from watchglass.run.bench.layers import Layers
-from watchglass.run.bench.ledger import Moved, NotAssessed, Reacted, Supposed, Taken
+from watchglass.run.bench.ledger import Moved, NotAssessed, Reacted, Supposed, Taken, Warmed
 
 if TYPE_CHECKING:
     from watchglass.run.bench.asked import Asked
@@ -30,6 +30,7 @@ materials:
   salt: sodium chloride
   silica: silica
   acid: 3.0 M hydrochloric acid
+  alkali: 3.0 M sodium hydroxide
   benzoic: benzoic acid
   sample: {contains: {benzoic-acid: 1 mol}, provided: 2.00 g}
   loose: {contains: {benzoic-acid: 1 mol}}
@@ -154,6 +155,24 @@ def test_portion_of_unknown_amount_hides_none_after_it() -> None:
     assert grams(asked, "A", "sodium-chloride") == near(1.0, rel=1e-4)
 
 
+def test_unknown_amount_poured_to_a_known_ph_leaves_it_unknown() -> None:
+    asked = bench("{20 mL acid -> A} {swirl A}", "{all loose -> A}")
+
+    assert vessel(asked, "A").ph is None
+    assert vessel(asked, "A").used
+
+
+def test_vessel_that_held_only_an_unknown_amount_is_not_clean() -> None:
+    assert vessel(bench("{all loose -> B}"), "B").used
+
+
+@pytest.mark.parametrize(("high", "millilitres"), [(False, 2.0), (True, 6.0)])
+def test_open_amount_is_run_at_one_end_or_the_other(high: bool, millilitres: float) -> None:
+    asked = ran("{2–6 mL water -> A}", front=FRONT, high=high)
+
+    assert vessel(asked, "A").volume == near(millilitres * 1e-6)
+
+
 def test_portion_that_cannot_be_worked_out_is_entered_with_its_reason() -> None:
     (taken,) = told(bench("{5 mL benzoic -> A}"), Taken)
 
@@ -182,7 +201,30 @@ def test_vessel_that_is_full_already_takes_nothing() -> None:
     assert vessel(asked, "A").volume == near(60e-6, rel=1e-4)
 
 
+def test_filling_a_vessel_of_no_known_size_is_not_assessed() -> None:
+    (found,) = told(bench("{fill paper with water}"), NotAssessed)
+
+    assert found.why == "how much it takes to fill it is not known"
+
+
 # ---------------------------------------------------------------- temperature
+
+
+def test_heat_of_neutralising_warms_the_vessel_by_what_is_told() -> None:
+    asked = bench("{50 mL acid -> A}", "{50 mL alkali -> A}")
+    (warmed,) = told(asked, Warmed)
+    room = asked.ledger.start.vessel("A").temperature
+
+    # 0.150 mol x 57.1 kJ/mol = 8.57 kJ in some 108 g at 4.18 J/(g K): 19 K.
+    assert warmed.rise == near(19.0, abs=0.5)
+    assert vessel(asked, "A").temperature == near(room + warmed.rise)
+
+
+def test_bath_takes_the_heat_up() -> None:
+    asked = bench("{50 mL acid -> A} {cool A to 5 °C with ice}", "{50 mL alkali -> A}")
+
+    assert [warmed.held for warmed in told(asked, Warmed)] == [True]
+    assert vessel(asked, "A").temperature == near(278.15)
 
 
 @pytest.mark.parametrize(
@@ -450,6 +492,12 @@ def test_solvent_taken_off_goes_into_the_air() -> None:
     assert told(asked, Moved) == [Moved("A", "air", "", near(20e-6))]
 
 
+def test_solvent_taken_off_may_leave_a_volume() -> None:
+    asked = bench("{20 mL ether -> A}", "{evaporate A at 40 °C, leaving 5 mL}")
+
+    assert vessel(asked, "A").volume == near(5e-6)
+
+
 def test_solvent_taken_off_to_a_volume_leaves_it() -> None:
     asked = bench("{20 mL ether -> A}", "{evaporate A to 5 mL}")
 
@@ -664,6 +712,16 @@ def test_share_supposed_gone_has_left_the_bench() -> None:
     assert sink(asked, "supposed").volume == 0.0
 
 
+def test_what_is_supposed_is_known_where_the_model_could_not_tell() -> None:
+    asked = bench(SUPPOSED)
+    assert vessel(asked, "funnel").mixed
+
+    after = suppose("80 %", "solid")
+
+    assert vessel(after, "funnel").doubt == frozenset()
+    assert vessel(after, "funnel").mixed is True
+
+
 def test_what_is_supposed_is_entered_with_its_reason() -> None:
     assert told(suppose("80 %", "solid"), Supposed) == [
         Supposed("benzoic-acid", near(0.8), "solid", "mean")
@@ -691,6 +749,18 @@ def test_material_may_be_supposed_by_its_local_name() -> None:
     )
 
     assert grams(asked, "A", "benzoic-acid") == near(0.5, rel=1e-4)
+
+
+# ---------------------------------------------------------------- layers that part
+
+
+def test_layers_have_parted_once_they_are_left_to_settle() -> None:
+    shaken = bench("{20 mL water -> A} {20 mL ether -> A} {shake A}")
+    settled = bench("{20 mL water -> A} {20 mL ether -> A} {shake A} {settle A}")
+
+    assert vessel(shaken, "A").settled is False
+    assert vessel(settled, "A").settled is True
+    assert [found.below for found in told(settled, Layers)] == ["aqueous"]
 
 
 # ---------------------------------------------------------------- of which vessel

@@ -273,6 +273,17 @@ def test_amine_of_unknown_ratio_is_kept_where_it_was_and_is_in_doubt() -> None:
     )
 
 
+def test_author_who_states_where_it_went_clears_the_doubt() -> None:
+    asked = odd(
+        "{20 mL ether -> A} {0.10 g plain -> A} {5 mL acid -> A} {shake A}",
+        "{suppose 90 % plain-amine in A is aqueous: by titration}",
+    )
+    held = asked.ledger.end.vessel("A")
+
+    assert held.doubt == frozenset()
+    assert held.aqueous.amounts["plain-amine"] == near(0.9 * 0.10 / 93.129, rel=1e-3)
+
+
 def test_doubt_is_kept_while_more_is_mixed_in() -> None:
     asked = odd(
         "{20 mL ether -> A} {0.10 g plain -> A} {5 mL acid -> A} {shake A}",
@@ -462,6 +473,17 @@ def test_solubility_by_mass_fraction_counts_the_water_in_it() -> None:
 
     assert cold == Solubility(near(100.0, rel=1e-3), near(293.15))
     assert hot == Solubility(near(0.25 * 998.2 / 0.16519, rel=1e-3), near(333.15))
+
+
+def test_solubility_without_a_temperature_is_taken_for_25_celsius() -> None:
+    files = {
+        "substances/mine.yml": (
+            "mine:\n  names: [mine]\n  formula: C9H11NO2\n  soluble: {water: [16.519 g/L]}\n"
+        )
+    }
+    (only,) = knowledge(files).thing("mine").soluble
+
+    assert only == Solubility(near(100.0, rel=1e-3), near(298.15))
 
 
 def test_amine_of_unknown_pka_is_told_from_a_neutral_substance() -> None:

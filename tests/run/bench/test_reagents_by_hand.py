@@ -23,6 +23,7 @@ materials:
   iodine: 0.010 M iodine
   thiosulfate: 0.050 M sodium thiosulfate
   phosphate: 0.10 M phosphoric acid
+  benzoic: benzoic acid
   loose: {contains: {benzoic-acid: 1 mol}}
 vessels:
   A: conical flask 250 mL
@@ -84,6 +85,27 @@ def test_liquid_without_an_aim_is_left_alone() -> None:
 
     assert outcomes(asked, Added) == []
     assert asked.ledger.end.vessel("A").volume == near(30e-6)
+
+
+def test_reagent_that_cannot_be_worked_out_says_why() -> None:
+    front = FRONT.replace("alkali: 6.0 M sodium hydroxide", "alkali: 10 % w/w sucrose in ethanol")
+    found = added(ran("{30 mL acid -> A}", "{adjust A to pH 7 with alkali}", front=front))
+
+    assert found == Added(
+        "alkali",
+        None,
+        7.0,
+        near(0.301, abs=1e-3),
+        why="the solution density of sucrose is not known",
+    )
+
+
+def test_solid_acid_takes_its_alkali_as_well() -> None:
+    # 1.2212 g of benzoic acid are 10.00 mmol, hardly dissolved in 10 mL; 1.67 mL of 6.0 M.
+    asked = bench("{10 mL water -> A} {1.2212 g benzoic -> A}", "{adjust A to pH 8 with alkali}")
+
+    assert added(asked).volume == near(10.0 / 6.0 * 1e-6, rel=2e-3)
+    assert asked.ledger.end.vessel("A").solid == {}
 
 
 def test_ether_has_no_ph_to_be_adjusted() -> None:
@@ -201,6 +223,13 @@ def test_titration_in_a_vessel_without_the_reactant_has_no_titre() -> None:
         None, "the vessel or the burette holds nothing that the reaction takes"
     )
     assert asked.ledger.end.vessel("burette").volume == near(50e-6)
+
+
+def test_titration_that_goes_nowhere_has_no_titre() -> None:
+    asked = titrated("10 mL vinegar", "titrant", "to salt")
+
+    assert asked.titre("end").value is None
+    assert asked.titre("end").why
 
 
 def test_titration_with_an_empty_burette_has_no_titre() -> None:

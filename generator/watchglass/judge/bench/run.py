@@ -8,7 +8,7 @@ from watchglass.base.findings import Related
 from watchglass.run.bench.asked import Asked
 
 if TYPE_CHECKING:
-    from collections.abc import Iterator
+    from collections.abc import Iterator, Mapping
 
     from watchglass.base.spans import Span
     from watchglass.judge.case import Case
@@ -36,6 +36,7 @@ class Run(NamedTuple):
         laboratory: Its limits and glassware.
         samples: How it went with each candidate, where there are secret samples: what they bring is
             then not known in `ledger`, from which students' pages are made.
+        carried: What the products of other procedures consist of, by local name.
     """
 
     case: Case
@@ -44,6 +45,7 @@ class Run(NamedTuple):
     known: Knowledge
     laboratory: Laboratory
     samples: tuple[Sample, ...] = ()
+    carried: Mapping[str, Vessel] = {}
 
     @property
     def opened(self) -> Run:

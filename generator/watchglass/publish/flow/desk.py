@@ -235,10 +235,10 @@ class Desk:
         holder.entries = self.drafts[node].entries
         return node
 
-    def stay(self, name: str, where: str) -> None:
+    def stay(self, node: int | None, where: str) -> None:
         """Let a drying agent stay on what the liquid runs through."""
-        node = self.new(Kind.WASTE, where, lines=["drying agent"])
-        self.lead(self.holders[name].node, node)
+        if node is not None:
+            self.lead(node, self.new(Kind.WASTE, where, lines=["drying agent"]))
 
     def leave(self, name: str) -> int | None:
         """Empty a vessel; give the box that its contents come from. None where it holds nothing."""

@@ -63,6 +63,8 @@ def drawn(flow: Flow) -> Shape:
             for node, box, place in zip(flow.nodes, boxes, layout.boxes, strict=True)
         ),
         class_="drawing flow-drawing",
+        text_anchor="middle",
+        font_size="12",
         viewBox=f"0 0 {wide} {high}",
         width=wide,
         height=high,

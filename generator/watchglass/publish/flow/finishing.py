@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from typing import TYPE_CHECKING
 
-from watchglass.publish.flow.graph import Flow, Kind, Node
+from watchglass.publish.flow.graph import KEPT, Flow, Kind, Node
 from watchglass.publish.flow.wording import (
     place_name,
     portion_words,
@@ -72,6 +72,7 @@ def _ends(desk: Desk) -> None:
 def _contracted(desk: Desk) -> set[int]:
     """Take out vessels in which nothing is done: what comes into them tells where it goes."""
     gone: set[int] = set()
+    told: set[int] = set()
     for place, draft in enumerate(desk.drafts):
         if draft.kind is not Kind.STAGE or draft.lines:
             continue
@@ -79,10 +80,11 @@ def _contracted(desk: Desk) -> set[int]:
         if len(starts) != 1:
             continue
         source = desk.drafts[starts[0]]
-        if source.kind not in (Kind.PART, Kind.CHARGE):
+        if source.kind not in (Kind.PART, Kind.CHARGE) or starts[0] in told:
             continue
         if sum(1 for s, _ in desk.edges if s == starts[0]) != 1:
             continue
+        told.add(starts[0])
         vessel = place_name(draft.place, desk.procedure)
         if source.kind is Kind.CHARGE:
             source.head = sentence_case(vessel)
@@ -142,7 +144,7 @@ def _node(draft: Draft, procedure: Procedure, components: tuple[str, ...], *, dr
         lines.append(f"{draft.times}{NBSP}portions")
     elif draft.times > 1 and draft.kind is Kind.STAGE:
         lines.append(f"done {times_words(draft.times)}")
-    fate = "kept" if draft.kept else ""
+    fate = KEPT if draft.kept else ""
     if draft.lets_go is not None:
         rest = "what is left" if drawn else "then"
         fate = f"{rest}: {_small(draft.lets_go.head)}"
@@ -154,7 +156,6 @@ def _node(draft: Draft, procedure: Procedure, components: tuple[str, ...], *, dr
         tuple(sorted(draft.steps or draft.came)),
         phase,
         components,
-        draft.kept,
         fate,
     )
 

@@ -5,6 +5,9 @@ from __future__ import annotations
 from enum import StrEnum
 from typing import NamedTuple
 
+#: What becomes of what is there at the end and is no waste.
+KEPT = "kept"
+
 
 class Kind(StrEnum):
     """What a box stands for."""
@@ -22,10 +25,9 @@ class Node(NamedTuple):
         kind: What it stands for.
         head: Its first words: a vessel, a part, a waste stream; empty for what is brought.
         lines: What follows: portions, acts, where it goes.
-        steps: Numbers of the steps it is of, ascending.
+        steps: Numbers of the steps it is of, ascending; one at least.
         phase: `aqueous`, `organic`, `solid`, or empty.
         components: What is in it, each with its share; only where that may be shown.
-        kept: Whether it is there at the end and is no waste.
         fate: What becomes of it where no arrow tells: `kept`, `then: aqueous-acid waste`; or empty.
     """
 
@@ -35,8 +37,12 @@ class Node(NamedTuple):
     steps: tuple[int, ...]
     phase: str = ""
     components: tuple[str, ...] = ()
-    kept: bool = False
     fate: str = ""
+
+    @property
+    def kept(self) -> bool:
+        """Whether it is there at the end and is no waste."""
+        return self.fate == KEPT
 
 
 class Flow(NamedTuple):

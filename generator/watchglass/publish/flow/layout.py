@@ -137,6 +137,10 @@ def _as_walked(
 ) -> list[list[int]]:
     """Begin with the order in which a walk along the arrows comes to the boxes."""
     met: dict[int, int] = {}
+    below = [0] * len(up)  # how long the way is that leads on from each
+    for row in reversed(rows):
+        for node in row:
+            below[node] = 1 + max([below[n] for n in down[node]], default=0)
     roots = [node for row in rows for node in row if not up[node]]
     for root in roots:
         walk = [root]
@@ -145,8 +149,8 @@ def _as_walked(
             if node in met:
                 continue
             met[node] = len(met)
-            walk += reversed(down[node])
             walk += [n for n in up[node] if n not in met]
+            walk += sorted(down[node], key=lambda n: (below[n], -n))
     return [sorted(row, key=met.__getitem__) for row in rows]
 
 

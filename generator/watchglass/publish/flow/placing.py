@@ -9,9 +9,12 @@ towards what it is joined with, never past its neighbours: so boxes never overla
 from __future__ import annotations
 
 from itertools import pairwise
+from operator import sub
 from typing import NamedTuple
 
 _SWEEPS = 8
+#: Trunks that move less than this, px, have come to rest.
+_STILL = 1.0
 #: A drawing wider than this, px, has trunks cut to make it narrower; so many at most.
 ROOM, _CUTS = 840.0, 8
 
@@ -65,6 +68,7 @@ def placed(
         low, high, right = _extremes(trunks)
     x = [(one + other) / 2 for one, other in zip(low, high, strict=True)]
     for sweep in range(_SWEEPS):
+        before = list(x)
         for trunk in trunks.order if sweep % 2 else reversed(trunks.order):
             joined = trunks.joined[trunk]
             if not joined:
@@ -75,6 +79,8 @@ def placed(
             least = max(least, trunks.half[trunk])
             most = max(min(most, right - trunks.half[trunk]), least)
             x[trunk] = min(max(wanted, least), most)
+        if max(map(abs, map(sub, x, before)), default=0.0) < _STILL:
+            break
     start = min((x[t] - trunks.half[t] for t in trunks.order), default=0.0)
     return [x[trunk] - start for trunk in trunks.of]
 

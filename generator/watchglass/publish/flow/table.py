@@ -24,22 +24,34 @@ def rows(flow: Flow) -> tuple[tuple[str, ...], ...]:
         after[start].append(end)
     made = []
     for place, node in enumerate(flow.nodes):
-        if node.kind is not Kind.STAGE:
-            continue
-        origin = "; ".join(dict.fromkeys(_origin(flow.nodes[n]) for n in before[place]))
-        to = "; ".join(_goal(n, flow, after) for n in after[place])
-        done = ": ".join(filter(None, (node.head, ", ".join((*node.lines, *node.components)))))
-        made.append(
-            (step_words(node.steps), origin, done, "; ".join(filter(None, (to, node.fate))))
+        to = "; ".join(
+            [*(_goal(n, flow, after) for n in after[place]), *filter(None, (node.fate,))]
         )
+        if node.kind is Kind.STAGE:
+            origin = "; ".join(dict.fromkeys(_origin(flow.nodes[n]) for n in before[place]))
+            done = ", ".join((*node.lines, *node.components))
+        elif node.kind is Kind.CHARGE and node.head and _parted(place, flow, after):
+            origin, done = _materials(node), ""
+        else:
+            continue
+        said = ": ".join(filter(None, (node.head, done)))
+        made.append((step_words(node.steps), origin, said, to))
     return tuple(made)
+
+
+def _parted(place: int, flow: Flow, after: list[list[int]]) -> bool:
+    """Tell whether something is taken of what stands in a vessel in which nothing else is done."""
+    return any(flow.nodes[n].kind is not Kind.STAGE for n in after[place])
 
 
 def _origin(node: Node) -> str:
     if node.kind is Kind.CHARGE:
-        words = "; ".join(line.removeprefix(f"+{NBSP}") for line in node.lines)
-        return f"{node.head}: {words}" if node.head else words
+        return ": ".join(filter(None, (node.head, _materials(node))))
     return node.head
+
+
+def _materials(node: Node) -> str:
+    return "; ".join(line.removeprefix(f"+{NBSP}") for line in node.lines)
 
 
 def _goal(place: int, flow: Flow, after: list[list[int]]) -> str:

@@ -213,9 +213,11 @@ class Tracer:
         by = f" through {place_name(through, self.procedure)}" if through else ""
         self.desk.act(name, event.verb + by)
         if on is None:
+            node = self.desk.leave(name)
+            self.desk.arrive(into, node)
             if name in self._driers:
-                self.desk.stay(name, f"Left on {place_name(through or 'filter', self.procedure)}")
-            self.desk.arrive(into, self.desk.leave(name))
+                self._driers.discard(name)
+                self.desk.stay(node, f"Left on {place_name(through or 'filter', self.procedure)}")
             return
         self.runs_into[on] = into
         solid = self.desk.part(name, "solid", "solid", on, self._where(on))
@@ -238,7 +240,9 @@ class Tracer:
             return
         self.desk.act(name, "pour the liquid off")
         liquid = self.desk.part(name, "liquid", "", into)
-        self.desk.holders[name].rest = ("what stays behind", "solid")
+        holder = self.desk.holders.get(name)
+        if holder is not None:
+            holder.rest = ("what stays behind", "solid")
         self.desk.arrive(into, liquid)
 
     def _evaporate(self, event: model.Operation, name: str) -> None:

@@ -41,6 +41,7 @@ def run_bench(
     *,
     high: bool = False,
     carried: Mapping[str, Vessel] | None = None,
+    factors: Mapping[str, float] | None = None,
 ) -> Ledger:
     """Run a procedure.
 
@@ -51,8 +52,16 @@ def run_bench(
         laboratory: Room temperature.
         high: Run open amounts (`2–6 mL … until`) at their high end, not at their low one.
         carried: What each material that another procedure made consists of, by local name.
+        factors: What the amounts charged of some materials are multiplied by, by local name.
     """
-    runner = Runner(procedure, known, laboratory.temperature, high=high, carried=carried or {})
+    runner = Runner(
+        procedure,
+        known,
+        laboratory.temperature,
+        high=high,
+        carried=carried or {},
+        factors=factors or {},
+    )
     for happening in course.happenings:
         runner.happen(happening)
     runner.leave_branches()
@@ -83,6 +92,7 @@ class Runner:
     room: float
     high: bool
     carried: Mapping[str, Vessel]
+    factors: Mapping[str, float]
     bench: Bench = field(init=False)
     start: Bench = field(init=False)
     entries: list[Entry] = field(default_factory=list)
@@ -287,6 +297,7 @@ class Runner:
                 self._not_measured(name, target)
                 continue
             dimension, value = amount
+            value *= self.factors.get(name, 1.0)
             self.bring(material, dimension, value, self.name(target), temperature)
 
     def _not_measured(self, name: str, target: str) -> None:

@@ -185,7 +185,8 @@ def share_by_ph(washing: Washing, ledger: Ledger, known: Knowledge) -> ShareByPh
     """Work out where the substances of a washing would lie at any pH.
 
     Nernst's distribution law over the neutral fraction of each family; what separates beyond its
-    solubility is not counted. Left out is what is here in traces only. None where no substance with a known ratio changes layers with pH.
+    solubility is not counted. Left out is what is here in traces only. None where no substance with
+    a known ratio changes layers with pH.
     """
     vessel = washing.drawn_from
     prepared = prepare(vessel.aqueous, vessel.organic, vessel.temperature, known)
