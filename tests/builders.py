@@ -152,8 +152,10 @@ def student(entry: Judged, files: Mapping[str, str] | None = None) -> StudentPag
     return student_page(entry.case, entry.path, ALONE, surroundings(files).catalogue)
 
 
-def instructor(entry: Judged, files: Mapping[str, str] | None = None) -> InstructorPage:
-    """Make the page that instructors see."""
+def instructor(
+    entry: Judged, files: Mapping[str, str] | None = None, *, bench: bool = False
+) -> InstructorPage:
+    """Make the page that instructors see; with all that the bench gives where asked."""
     settled = settle(entry.findings, entry.procedure.acceptances)
     return instructor_page(
         entry.case,
@@ -162,6 +164,7 @@ def instructor(entry: Judged, files: Mapping[str, str] | None = None) -> Instruc
         surroundings(files).catalogue,
         findings=settled.open,
         accepted=entry.accepted,
+        run=entry.run if bench else None,
     )
 
 

@@ -378,3 +378,29 @@ def test_missed_expectation_points_to_the_act_that_decided(expectation: str, act
 
     assert [r.span.text for r in missed.related] == [act]
     assert "decides it" in missed.related[0].message
+
+
+# ---------------------------------------------------------------- fractions
+
+
+FRACTIONS = """\
+materials:
+  blend: {contains: {ethyl-acetate: 1 mL, butyl-acetate: 1 mL}, provided: 30 mL}
+vessels:
+  still: round-bottom flask 50 mL
+  early: conical flask 25 mL
+  middle: conical flask 25 mL
+  spare: conical flask 25 mL
+"""
+
+
+def test_flask_between_two_fractions_may_be_emptied_though_the_bench_puts_nothing_there() -> None:
+    said = found(
+        "B123",
+        FRACTIONS,
+        "Put {30 mL blend -> still} into {still}; {distil still into early at 76–80 °C}.",
+        "{distil still into middle at 80–120 °C, leaving 1 mL}",
+        "{discard middle to non-halogenated-organic} {discard spare to non-halogenated-organic}",
+    )
+
+    assert said == ["`spare` is empty here: nothing comes out of it"]

@@ -40,7 +40,8 @@ _WORTH = 5e-7
 MODEL = (
     "Estimates of a model: layers in equilibrium after mixing, 25 °C, ideal, additive volumes; only"
     " neutral forms partition, by a measured ratio or else by octanol–water's; nothing is left"
-    " behind when a vessel is poured out."
+    " behind when a vessel is poured out; a still parts liquids by their boiling points without"
+    " overlap."
 )
 
 
@@ -212,10 +213,14 @@ def _layers(found: Layers) -> str:
 def _moved(moved: Moved) -> str:
     if moved.nothing:
         return f"nothing goes from {moved.origin} to {moved.target}: there is none of it"
-    part = f"{moved.part} layer" if moved.part in ("aqueous", "organic") else moved.part or "all"
-    size = f", {volume_words(moved.volume)}" if moved.volume > 0 else ""
+    part = f"{moved.part} layer" if moved.part in ("aqueous", "organic") else moved.part
+    if not part and moved.whole:
+        part = "all"
+    words = [part] if part else []
+    if moved.volume > 0 or not words:
+        words.append(volume_words(moved.volume) if moved.volume > 0 else "nothing")
     short = f"; {volume_words(moved.short)} less than asked for" if moved.short > 0 else ""
-    return f"{moved.origin} to {moved.target}: {part}{size}{short}"
+    return f"{moved.origin} to {moved.target}: {', '.join(words)}{short}"
 
 
 def _added(added: Added) -> str:

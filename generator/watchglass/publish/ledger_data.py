@@ -174,7 +174,7 @@ def _outcome(result: Result) -> Data:
                 "volume": _number(volume, "m3", "written"),
                 "why": why,
             }
-        case Moved(origin, target, part, volume, short, nothing):
+        case Moved(origin, target, part, volume, short, nothing, whole):
             return {
                 "kind": "moved",
                 "origin": origin,
@@ -183,6 +183,7 @@ def _outcome(result: Result) -> Data:
                 "volume": _number(volume, "m3", "additive"),
                 "short": _number(short, "m3", "additive"),
                 "nothing": nothing,
+                "whole": whole,
             }
         case Added(material, volume, wanted, before, stated, why):
             return {

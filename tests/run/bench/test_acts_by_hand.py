@@ -32,6 +32,7 @@ materials:
   acid: 3.0 M hydrochloric acid
   alkali: 3.0 M sodium hydroxide
   benzoic: benzoic acid
+  neutral: benzil
   sample: {contains: {benzoic-acid: 1 mol}, provided: 2.00 g}
   loose: {contains: {benzoic-acid: 1 mol}}
   alcohol: butan-1-ol
@@ -371,7 +372,7 @@ def test_aliquot_takes_its_share_of_what_is_dissolved() -> None:
 
     assert vessel(asked, "B").aqueous.amounts["Na^+"] == near(0.010)
     assert vessel(asked, "A").volume == near(30e-6)
-    assert told(asked, Moved) == [Moved("A", "B", "", near(10e-6))]
+    assert told(asked, Moved) == [Moved("A", "B", "", near(10e-6), whole=False)]
 
 
 def test_aliquot_of_more_than_there_is_takes_all_and_says_what_is_short() -> None:
@@ -489,7 +490,7 @@ def test_solvent_taken_off_goes_into_the_air() -> None:
 
     assert vessel(asked, "A").empty
     assert sink(asked, "air").volume == near(20e-6)
-    assert told(asked, Moved) == [Moved("A", "air", "", near(20e-6))]
+    assert told(asked, Moved) == [Moved("A", "air", "", near(20e-6), whole=False)]
 
 
 def test_solvent_taken_off_may_leave_a_volume() -> None:
@@ -514,7 +515,7 @@ def test_distillate_is_caught_and_what_boils_lower_is_the_forerun() -> None:
     assert sink(asked, "forerun").volume == near(20e-6)
     assert vessel(asked, "B").volume == near(28e-6)
     assert vessel(asked, "A").volume == near(2e-6)
-    assert told(asked, Moved) == [Moved("A", "B", "", near(28e-6))]
+    assert told(asked, Moved) == [Moved("A", "B", "", near(28e-6), whole=False)]
 
 
 def test_distillation_up_to_a_temperature_begins_at_the_start() -> None:
@@ -866,3 +867,36 @@ def test_names_are_exchanged_for_a_pass() -> None:
 
     assert vessel(asked, "A").volume == near(10e-6)
     assert vessel(asked, "B").volume == near(10e-6)
+
+
+STATED = (
+    "{0.50 g neutral -> A} {20 mL spirit -> A}",
+    "{swirl A, open} {suppose 80 % benzil in A is solid: by trial}",
+)
+
+
+def test_solid_that_is_stated_stays_solid_in_the_cold_and_on_the_paper() -> None:
+    asked = bench(
+        *STATED,
+        "{chill A to 5 °C with ice} {filter A on paper into filtrate}",
+        "{5 mL spirit -> paper}",
+    )
+
+    whole = 0.50e-3 / 0.210232  # mol; molar mass of benzil 210.232 g/mol
+    assert vessel(asked, "paper").solid["benzil"] == near(0.8 * whole)
+    assert vessel(asked, "filtrate").organic.amounts["benzil"] == near(0.2 * whole)
+
+
+@pytest.mark.parametrize(
+    "act", ["{heat A to 60 °C}", "{10 mL spirit -> A} {swirl A, open}", "{dissolve A}"]
+)
+def test_solid_that_is_stated_goes_when_heated_or_in_more_liquid(act: str) -> None:
+    asked = bench(*STATED, act)
+
+    assert not vessel(asked, "A").solid
+
+
+def test_solid_that_is_stated_stays_one_when_it_is_poured_over() -> None:
+    asked = bench(*STATED, "{A -> B} {swirl B, open}")
+
+    assert vessel(asked, "B").solid["benzil"] == near(0.8 * 0.50e-3 / 0.210232)

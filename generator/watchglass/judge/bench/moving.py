@@ -49,6 +49,7 @@ def drawn_from_nothing(run: Run) -> Iterator[Finding]:
             if moved.origin not in told:
                 yield finding
             told |= {moved.origin, moved.target}
+        told |= _receiver(moment)
         name = _needing(run, moment)
         if name and not moves and name not in told:
             told.add(name)
@@ -77,6 +78,21 @@ def _drawn(moment: Moment, moved: Moved) -> Finding | None:
             help="take less, or charge more before",
         )
     return None
+
+
+def _receiver(moment: Moment) -> set[str]:
+    """Give the flask a distillation goes into.
+
+    The bench knows no overlap: where it gives nothing, as between two fractions, something comes.
+    """
+    event = moment.entry.happening.event
+    if not isinstance(event, model.Operation) or event.verb != "distil":
+        return set()
+    return {
+        moment.entry.happening.name(clause.value.name.text)
+        for clause in event.clauses
+        if clause.word == "into" and isinstance(clause.value, syntax.Place)
+    }
 
 
 def _needing(run: Run, moment: Moment) -> str:

@@ -7,6 +7,6 @@ them to equilibrium; the other modules are the acts, each a function from a benc
 
 The model and its limits: layers are in equilibrium after mixing, at 25 °C, ideal, with additive
 volumes; only neutral forms partition, by a measured ratio or by octanol–water's; a salt dissolves
-up to its solubility; carbon dioxide leaves above its own. Transfers leave nothing behind. Where a
-constant is missing the figure is unknown, with its reason, and offends nobody further on.
+up to its solubility; carbon dioxide leaves above its own. Transfers leave nothing behind. A still
+parts liquids by their boiling points, without overlap and without azeotropes. Where a constant is missing the figure is unknown, with its reason, and offends nobody further on.
 """

@@ -83,7 +83,10 @@ def _object(runner: Runner, event: model.Operation) -> Vessel:
 def _mix(runner: Runner, event: model.Operation, _said: Said) -> None:
     vessel = _object(runner, event)
     runner.charge(event.portions, vessel.name)
-    runner.mix(runner.bench.vessel(vessel.name))
+    vessel = runner.bench.vessel(vessel.name)
+    if event.verb == "dissolve":
+        vessel = vessel._replace(stated=frozenset())
+    runner.mix(vessel)
 
 
 def _temperature(runner: Runner, event: model.Operation, said: Said) -> None:
@@ -101,7 +104,8 @@ def _temperature(runner: Runner, event: model.Operation, said: Said) -> None:
         kelvin = 273.15
     cooled = event.verb in ("cool", "chill")
     held = bath.name.text if bath is not None else ("" if not cooled else vessel.bath)
-    vessel = vessel._replace(temperature=kelvin, bath=held, mixed=False)
+    stated = vessel.stated if kelvin <= vessel.temperature else frozenset()
+    vessel = vessel._replace(temperature=kelvin, bath=held, mixed=False, stated=stated)
     runner.put(vessel)
     if not vessel.empty:
         runner.mix(vessel)
@@ -189,6 +193,7 @@ def _filter(runner: Runner, event: model.Operation, said: Said) -> None:
             temperature=vessel.temperature,
             doubt=paper.doubt | kept.doubt,
             unknown=paper.unknown | kept.unknown,
+            stated=paper.stated | kept.stated,
             used=True,
         )
         runner.put(paper)
@@ -245,7 +250,7 @@ def _goes_over(runner: Runner, vessel: Vessel, parted: separating.Parted, said: 
         runner.bench = runner.bench.to_sink(
             "forerun" if into else "air", liquids=(fore.aqueous, fore.organic)
         )
-    runner.say(vessel.name, Moved(vessel.name, target, "", over.volume))
+    runner.say(vessel.name, Moved(vessel.name, target, "", over.volume, whole=False))
     if into is None:
         runner.bench = runner.bench.to_sink("air", liquids=(over.aqueous, over.organic))
     else:
@@ -350,12 +355,14 @@ def _as_stated(
             return vessel, f"there is no {runner.known.thing(key).name} in it"
         there = share * whole
         rest = whole - there
-        vessel = _without(vessel, key)
+        vessel = _without(vessel, key)._replace(stated=vessel.stated - {key})
         if outcome == "gone":
             runner.bench = runner.bench.to_sink("supposed", liquids=(Phase({key: there}, 0.0),))
             vessel = _dissolved(vessel, key, rest)
         elif outcome == "solid":
-            vessel = vessel._replace(solid=added(vessel.solid, {key: there}))
+            vessel = vessel._replace(
+                solid=added(vessel.solid, {key: there}), stated=vessel.stated | {key}
+            )
             vessel = _dissolved(vessel, key, rest)
         elif outcome == "dissolved":
             vessel = vessel._replace(solid=added(vessel.solid, {key: rest}))

@@ -266,6 +266,9 @@ class Runner:
         meets = bool(vessel.aqueous) and not vessel.organic and not vessel.mixed
         self.put(vessel)
         if below is not None and name != below:
+            vessel = vessel._replace(
+                stated=before.stated | coming.stated
+            )  # a wash takes none of it
             if not vessel.organic:
                 vessel = self.mix(vessel)  # a wash takes up what it dissolves; another displaces
             vessel, through = run_through(vessel)
@@ -436,7 +439,14 @@ class Runner:
         self.put(left)
         self.say(
             origin.name,
-            Moved(origin.name, target, which, drawn.volume, max(wanted - whole * (1 + 1e-9), 0.0)),
+            Moved(
+                origin.name,
+                target,
+                which,
+                drawn.volume,
+                max(wanted - whole * (1 + 1e-9), 0.0),
+                whole=wanted >= whole,
+            ),
         )
         self.pour(target, drawn)
 
@@ -458,6 +468,7 @@ def _untouched(vessel: Vessel, before: Vessel) -> bool:
         and vessel.solid is before.solid
         and vessel.temperature == before.temperature
         and vessel.unknown == before.unknown
+        and vessel.stated == before.stated
     )
 
 

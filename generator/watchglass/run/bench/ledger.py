@@ -41,6 +41,7 @@ class Moved(NamedTuple):
         volume: Of the liquid, m3.
         short: How much less there was than was asked for, m3.
         nothing: Whether there was nothing at all.
+        whole: Whether it was all of the part; else a measured share, or what boils over.
     """
 
     origin: str
@@ -49,6 +50,7 @@ class Moved(NamedTuple):
     volume: float
     short: float = 0.0
     nothing: bool = False
+    whole: bool = True
 
 
 class Added(NamedTuple):

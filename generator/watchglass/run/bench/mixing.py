@@ -92,7 +92,7 @@ def dissolve(vessel: Vessel, known: Knowledge) -> tuple[Vessel, dict[str, float]
         salt = len(components) > 1 or thing.molar_mass is None
         goes = 0.0
         into_water = False
-        if _inert_solid(thing, salt=salt):
+        if key in vessel.stated or _inert_solid(thing, salt=salt):
             pass
         elif salt:
             if aqueous:

@@ -27,6 +27,7 @@ class Drawn(NamedTuple):
         temperature: K.
         ph: Of the aqueous layer, where it is known.
         mixed: Whether it was in equilibrium.
+        stated: Solids of which the author said that they are.
     """
 
     aqueous: Phase = EMPTY
@@ -37,6 +38,7 @@ class Drawn(NamedTuple):
     temperature: float = 298.15
     ph: float | None = None
     mixed: bool = True
+    stated: frozenset[str] = frozenset()
 
     @property
     def volume(self) -> float:
@@ -79,6 +81,7 @@ def pour(vessel: Vessel, coming: Drawn, known: Knowledge) -> Vessel:
         mixed=coming.mixed and alone,
         used=True,
         remains="",
+        stated=coming.stated if alone else vessel.stated if not coming.volume else frozenset(),
     )
 
 
@@ -118,6 +121,7 @@ def draw(vessel: Vessel, part: str, share: float = 1.0) -> tuple[Vessel, Drawn]:
         vessel.temperature,
         vessel.ph,
         vessel.mixed,
+        vessel.stated if solid else frozenset(),
     )
     left = vessel._replace(
         aqueous=_less(vessel.aqueous, aqueous),

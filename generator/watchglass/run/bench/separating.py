@@ -48,7 +48,9 @@ def run_through(vessel: Vessel) -> tuple[Vessel, Drawn]:
         vessel.ph,
         vessel.mixed,
     )
-    kept = vessel.emptied()._replace(solid=vessel.solid, doubt=vessel.doubt)
+    kept = vessel.emptied()._replace(
+        solid=vessel.solid, doubt=vessel.doubt - vessel.stated, stated=vessel.stated
+    )
     return kept, liquid
 
 

@@ -92,6 +92,8 @@ class Vessel(NamedTuple):
         used: Whether it ever held anything: it is not clean.
         remains: `upper` or `lower` where the other of two layers was drawn off and nothing has been
             poured in since; else empty.
+        stated: Solids of which the author said that they are solid: they stay so until the contents
+            are heated, or come together with another liquid.
     """
 
     name: str
@@ -110,6 +112,7 @@ class Vessel(NamedTuple):
     settled: bool = True
     used: bool = False
     remains: str = ""
+    stated: frozenset[str] = frozenset()
 
     @property
     def empty(self) -> bool:
@@ -133,6 +136,7 @@ class Vessel(NamedTuple):
             mixed=True,
             settled=True,
             remains="",
+            stated=frozenset(),
         )
 
 

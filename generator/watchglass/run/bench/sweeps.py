@@ -6,6 +6,7 @@ Where substances lie against pH, how much of them portions move, and pH against 
 from __future__ import annotations
 
 from dataclasses import dataclass, field
+from itertools import pairwise
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import dimensions as dim
@@ -333,8 +334,8 @@ def _titration(
     if held.spoilt or coming.spoilt or unknown_ratios(held.system):
         return None
     volume = added.volume or 0.0
-    xs = _volumes(held.system, coming.system, volume)
-    ys = tuple(_ph(held.system, coming.system, x) for x in xs)
+    points = _points(held.system, coming.system, volume)
+    xs, ys = tuple(x for x, _ in points), tuple(y for _, y in points)
     return PhByVolume(
         entry.happening.step,
         event.verb,
@@ -365,21 +366,40 @@ def _reagent(
     return None if brought.why else brought.liquid
 
 
-def _volumes(held: PhaseSystem, coming: PhaseSystem, volume: float) -> tuple[float, ...]:
-    """Give volumes up to half as much again, closer where the pH is steep."""
-    coarse = [volume * 1.5 * i / _COARSE for i in range(_COARSE + 1)]
-    phs = [_ph(held, coming, x) for x in coarse]
-    found = [coarse[0]]
-    for place in range(_COARSE):
-        rise = abs(phs[place + 1] - phs[place])
-        parts = min(max(1, round(rise / _FINE)), _MOST_PARTS)
-        low, high = coarse[place], coarse[place + 1]
-        found += [low + (high - low) * part / parts for part in range(1, parts + 1)]
+def _points(
+    held: PhaseSystem, coming: PhaseSystem, volume: float
+) -> tuple[tuple[float, float], ...]:
+    """Give volumes up to half as much again with their pH, closer where it is steep."""
+    points = [
+        (x, _ph(held, coming, x)) for x in (volume * 1.5 * i / _COARSE for i in range(_COARSE))
+    ]
+    points.append((volume * 1.5, _ph(held, coming, volume * 1.5)))
+    found = points[:1]
+    for before, after in pairwise(points):
+        found += _between(held, coming, before, after, _HALVINGS)
     return tuple(found)
 
 
-#: Intervals looked at first; change of pH that is shown in one stroke; strokes in an interval at most.
-_COARSE, _FINE, _MOST_PARTS = 20, 0.5, 16
+#: Intervals looked at first; change of pH that is shown in one stroke; how often one is halved at most.
+_COARSE, _FINE, _HALVINGS = 20, 0.5, 6
+
+
+def _between(
+    held: PhaseSystem,
+    coming: PhaseSystem,
+    before: tuple[float, float],
+    after: tuple[float, float],
+    halvings: int,
+) -> list[tuple[float, float]]:
+    """Give the points after one up to the next, with halves between them where it is steep."""
+    if not halvings or abs(after[1] - before[1]) <= _FINE:
+        return [after]
+    half = (before[0] + after[0]) / 2
+    middle = half, _ph(held, coming, half)
+    return [
+        *_between(held, coming, before, middle, halvings - 1),
+        *_between(held, coming, middle, after, halvings - 1),
+    ]
 
 
 def _ph(held: PhaseSystem, coming: PhaseSystem, volume: float) -> float:
