@@ -497,3 +497,31 @@ def test_amine_of_unknown_pka_is_told_from_a_neutral_substance() -> None:
 
     assert not known.thing("mine").pkas_known
     assert known.thing("other").pkas_known
+
+
+# ---------------------------------------------------------------- liquids dissolved in liquids
+
+
+def test_liquid_that_is_only_dissolved_in_a_layer_parts_between_both() -> None:
+    # 2.0 mL of butan-1-ol (log P 0.84) in 40 mL of ether, shaken with 40 mL of water: by Nernst
+    # P V(org) / (P V(org) + V(aq)) stays in the ether.
+    asked = bench(
+        "{40 mL ether -> A} {2.0 mL alcohol -> A} {40 mL water -> A} {shake A, stoppered}"
+    )
+    vessel = asked.ledger.end.vessel("A")
+    ratio = 10**0.84
+    stays = vessel.organic.amounts["butan-1-ol"]
+    whole = stays + vessel.aqueous.amounts["butan-1-ol"]
+
+    assert whole == near(2.0 * 0.8097 / 74.12, rel=2e-3)  # density 0.8097 g/mL at 20 °C
+    # The engine takes the volumes before the alcohol has moved: 42 and 40 mL.
+    assert stays / whole == near(ratio * 42 / (ratio * 42 + 40), rel=1e-6)
+    assert vessel.volume == near(82e-6, rel=1e-9)
+    assert "tert-butyl-methyl-ether" not in vessel.aqueous.amounts, "the solvent keeps to its layer"
+
+
+def test_second_solvent_keeps_to_its_layer() -> None:
+    # A quarter of the layer is no solute: mutual solubility is outside the model.
+    asked = bench("{30 mL ether -> A} {10 mL alcohol -> A} {40 mL water -> A} {shake A, stoppered}")
+
+    assert "butan-1-ol" not in asked.ledger.end.vessel("A").aqueous.amounts

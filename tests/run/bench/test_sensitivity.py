@@ -110,6 +110,36 @@ def test_missed_expectation_is_a_finding_and_not_looked_into() -> None:
     assert any(f.code.number in ("X101", "X102", "X103", "X104") for f in entry.findings)
 
 
+def test_amounts_count_in_expectations_that_ask_no_vessel() -> None:
+    front = """\
+materials:
+  acid: benzoic acid
+  base: 1.0 M sodium hydroxide
+vessels:
+  A: beaker 50 mL
+expect:
+  - moles(base) / moles(acid) in 0.95–1.15
+"""
+    # 1.00 g of benzoic acid is 8.19 mmol: 1.01 equivalents of base.
+    entry = judged(steps("{1.00 g acid -> A} {8.3 mL base -> A} {stir A}"), front)
+    (found,) = looked_into(entry)
+    ends = {
+        kind: effect(found, kind, of)
+        for kind, of in (("amount", "acid"), ("amount", "base"), ("strength", "base"))
+        if not (kind == "amount" and of == "acid")
+    }
+
+    for changed in ends.values():
+        assert changed.low.value is not None
+        assert changed.low.value.si == pytest.approx(0.9 * 1.0136, rel=1e-3)
+        assert changed.low.holds is False
+        assert changed.high.holds is True
+    acid = effect(found, "amount", "acid")
+    assert acid.low.value is not None
+    assert acid.low.value.si == pytest.approx(1.0136 / 0.9, rel=1e-3)
+    assert acid.high.holds is False
+
+
 def test_table_says_what_it_hangs_on_or_that_it_is_robust() -> None:
     weak = instructor(wash(strength="1.00 M", least="60"), bench=True).sensitivity
     strong = instructor(wash(strength="6.00 M", least="40"), bench=True).sensitivity

@@ -95,7 +95,16 @@ class BenchEvaluator(Evaluator):
             )
         if name == "titre" and arguments:
             return self._answer(self.asked.titre(_text(arguments[0])), dim.VOLUME, TITRE_FIGURES)
-        return Evaluator._call(self, node)  # noqa: SLF001 - the class above
+        reached = Evaluator._call(self, node)  # noqa: SLF001 - the class above
+        if name == "moles" and isinstance(reached, NotKnown) and len(arguments) == 1:
+            return self._brought(arguments[0], reached)
+        return reached
+
+    def _brought(self, of: Expression, otherwise: NotKnown) -> Result:
+        """Give the amount of a substance that was brought in all, as with a product of another day."""
+        component = self.asked.component(_text(of))
+        amount = self.asked.ledger.charged.get(component, 0.0) if component is not None else 0.0
+        return Value(amount, dim.AMOUNT, SHARE_FIGURES) if amount > 0 else otherwise
 
     def _after(self, operand: Expression, state: Expression) -> Result:
         bench = self._state(state)

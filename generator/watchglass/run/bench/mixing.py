@@ -181,6 +181,17 @@ def _weight(amounts: Mapping[str, float], known: Knowledge) -> float:
     return total
 
 
+#: Share of a layer's volume below which a liquid in it is dissolved there, and no solvent [-]. Judgement.
+_DISSOLVED = 0.2
+
+
+def _solute(thing: Thing, amount: float, layer: Phase, solvent: Thing | None) -> bool:
+    """Tell whether a liquid that could be a layer of its own is only dissolved in this one."""
+    if thing is solvent or thing.ratio is None or thing.volume is None:
+        return False
+    return amount * thing.volume < _DISSOLVED * layer.volume
+
+
 def prepare(aqueous: Phase, organic: Phase, temperature: float, known: Knowledge) -> Prepared:
     """Put two layers into the engine's terms."""
     solvent = carrier(organic, known) if organic else None
@@ -203,7 +214,12 @@ def prepare(aqueous: Phase, organic: Phase, temperature: float, known: Knowledge
             inert[key] = in_water + in_other
             strong += thing.charge * (in_water + in_other) if key != PROTON else 0.0
             continue
-        if thing.layers and not thing.pkas and two:
+        if (
+            thing.layers
+            and not thing.pkas
+            and two
+            and not _solute(thing, in_other, organic, solvent)
+        ):
             kept[key] = in_water + in_other
             continue
         if not thing.pkas_known and in_water + in_other > _SLIGHT * weight:

@@ -22,6 +22,7 @@ from watchglass.run.evaluate import Value
 if TYPE_CHECKING:
     from collections.abc import Iterator, Mapping
 
+    from watchglass.base.quantities import Quantity
     from watchglass.resolve.laboratory import Laboratory
     from watchglass.run.bench.ledger import Ledger
     from watchglass.run.bench.state import Vessel
@@ -168,7 +169,9 @@ def _parting(ledger: Ledger, known: Knowledge) -> tuple[str, ...]:
         if source in ("measured", "log P")
     )
     return tuple(
-        key for key in dict.fromkeys(keys) if not (known.thing(key).liquid or known.thing(key).gas)
+        key
+        for key in dict.fromkeys(keys)
+        if not known.thing(key).gas and (not known.thing(key).liquid or known.thing(key).layers)
     )
 
 
@@ -184,19 +187,33 @@ def _run(bench: Bench, factors: Mapping[str, float] | None = None) -> Ledger:
 
 
 def _with_amount(bench: Bench, name: str, factor: float) -> _Run:
-    return bench, _run(bench, {name: factor})
+    ledger = _run(bench, {name: factor})
+    used = bench.usage.get(name)
+    if used is not None:
+        bench = bench._replace(usage={**bench.usage, name: _used(used, factor)})
+    return bench, ledger
+
+
+def _used(used: Usage, factor: float) -> Usage:
+    """Give what is used of a material, so much more or less of it."""
+    uses = (u._replace(quantity=_times(u.quantity, factor)) if u.quantity else u for u in used.uses)
+    totals = (t._replace(low=t.low * factor, high=t.high * factor) for t in used.totals)
+    return used._replace(uses=tuple(uses), totals=tuple(totals))
+
+
+def _times(quantity: Quantity, factor: float) -> Quantity:
+    """Multiply a quantity; its figures stay."""
+    number, second = quantity.number, quantity.second
+    return quantity._replace(
+        number=number._replace(value=number.value * factor),
+        second=second._replace(value=second.value * factor) if second is not None else None,
+    )
 
 
 def _with_strength(bench: Bench, material: model.Material, factor: float) -> _Run:
     composition = material.composition
     assert isinstance(composition, model.Solution)  # noqa: S101 - told before
-    quantity = composition.strength.quantity
-    number = quantity.number._replace(value=quantity.number.value * factor)
-    second = quantity.second
-    changed = quantity._replace(
-        number=number,
-        second=second._replace(value=second.value * factor) if second is not None else None,
-    )
+    changed = _times(composition.strength.quantity, factor)
     other = material._replace(
         composition=composition._replace(strength=composition.strength._replace(quantity=changed))
     )

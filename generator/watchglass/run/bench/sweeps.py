@@ -197,7 +197,7 @@ def share_by_ph(washing: Washing, ledger: Ledger, known: Knowledge) -> ShareByPh
     for key, family in zip(prepared.keys, system.families, strict=True):
         thing = known.thing(key)
         whole = ledger.charged.get(key, 0.0) + ledger.formed.get(key, 0.0)
-        if not family.ratio or family.amount < _MUCH * whole or thing.gas or thing.liquid:
+        if not family.ratio or family.amount < _MUCH * whole or thing.gas or thing.miscible:
             continue
         ys = []
         for ph in xs:
