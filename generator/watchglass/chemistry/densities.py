@@ -9,6 +9,7 @@ its slope jumps. Points left out one by one come back within 0.3 %, half of them
 
 from __future__ import annotations
 
+from functools import lru_cache
 from typing import TYPE_CHECKING, NamedTuple
 
 if TYPE_CHECKING:
@@ -35,6 +36,7 @@ class DensityTable(NamedTuple):
         return self.points[-1][0]
 
 
+@lru_cache(maxsize=512)
 def density_at(table: DensityTable, fraction: float) -> float | None:
     """Give the density of a solution.
 
@@ -78,6 +80,7 @@ def _volume(fraction: float, points: Sequence[tuple[float, float]]) -> float:
     return volume
 
 
+@lru_cache(maxsize=512)
 def fraction_of_concentration(
     table: DensityTable, concentration: float, molar_mass: float
 ) -> float | None:

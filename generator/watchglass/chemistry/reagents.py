@@ -23,7 +23,7 @@ if TYPE_CHECKING:
 MOST = 1e4
 #: The first portion tried, in the same measure [-].
 _LEAST = 1e-9
-_HALVINGS = 60
+_HALVINGS = 50
 #: A charge below this share of the ions that make it up is rounding [-].
 _ROUNDING = 1e-14
 

@@ -226,16 +226,13 @@ def _calls(case: Case) -> Iterator[Call]:
 
 def _values(node: object) -> Iterator[syntax.ValueAct]:
     """Give the figures that the body shows, from whatever node they stand in."""
-    match node:
-        case Span() | str() | int() | None:
-            pass
-        case syntax.ValueAct():
+    waiting = [node]
+    while waiting:
+        node = waiting.pop()
+        if isinstance(node, syntax.ValueAct):
             yield node
-        case tuple():
-            for child in node:
-                yield from _values(child)
-        case _:
-            pass
+        elif isinstance(node, tuple) and not isinstance(node, Span):
+            waiting.extend([child for child in node if isinstance(child, tuple)][::-1])
 
 
 def _in_expression(node: Expression) -> Iterator[Call]:

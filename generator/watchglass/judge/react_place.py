@@ -53,12 +53,12 @@ def reactant_not_in_vessel(case: Case) -> Iterator[Finding]:
     """Report `react` acts in vessels that a reactant never reaches."""
     reported: set[int] = set()
     vessels = _Vessels(case)
-    if case.faulty or case.course.cut is not None:
+    if case.faulty or case.course.cut is not None or not any(map(_reacts, case.course.happenings)):
         return
     for happening in case.course.happenings:
         _happens(case, happening, vessels)
         event = happening.event
-        if not isinstance(event, model.Operation) or event.verb != "react":
+        if not isinstance(event, model.Operation) or not _reacts(happening):
             continue
         reaction = case.procedure.reactions.get(event.reaction)
         name = _vessel_of(event)
@@ -79,6 +79,11 @@ def reactant_not_in_vessel(case: Case) -> Iterator[Finding]:
             ),
             help=f"charge it into `{vessel}` before, or name the vessel that holds it",
         )
+
+
+def _reacts(happening: Happening) -> bool:
+    event = happening.event
+    return isinstance(event, model.Operation) and event.verb == "react"
 
 
 def _vessel_of(event: model.Operation) -> str:

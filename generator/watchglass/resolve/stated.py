@@ -71,14 +71,10 @@ def taken(acts: Iterable[syntax.Act]) -> tuple[syntax.Amount, ...]:
     """Give the amounts that a mark takes of materials, stated and proportional ones left out."""
     found: list[syntax.Amount] = []
     for act in acts:
-        match act:
-            case syntax.ChargeAct(amounts, _, clauses, _):
-                found += amounts
-                found += _with(clauses)
-            case syntax.VerbAct(_, _, _, clauses, _, _):
-                found += _with(clauses)
-            case _:
-                pass
+        if isinstance(act, syntax.ChargeAct):
+            found += act.amounts
+        if isinstance(act, syntax.ChargeAct | syntax.VerbAct):
+            found += _with(act.clauses)
     return tuple(amount for amount in found if amount.per is None)
 
 
@@ -90,8 +86,10 @@ def _with(clauses: Iterable[syntax.Clause]) -> Iterator[syntax.Amount]:
 
 def in_words(marked: syntax.Marked, measures: Mapping[str, float | None]) -> tuple[Stated, ...]:
     """Find what the words of a mark state of its portions in another measure."""
+    if marked.words is None:
+        return ()
     amounts = taken(marked.acts)
-    if marked.words is None or not amounts:
+    if not amounts:
         return ()
     has = tuple(carried(marked.acts))
     by_amount = any(quantity.dimension == dim.AMOUNT for quantity in _quantities(amounts))

@@ -6,7 +6,7 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding
-from watchglass.judge.bench.run import Moment, Run, at, filled_by, moments
+from watchglass.judge.bench.run import Run, at, filled_by
 from watchglass.resolve import model
 from watchglass.run.bench.figures import share_words
 from watchglass.run.bench.ledger import Moved
@@ -15,6 +15,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from watchglass.run.bench.knowledge import Thing
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 #: Difference of pKa from which a milder reagent tells two acids apart.
@@ -31,7 +32,7 @@ def goes_along(run: Run) -> Iterator[Finding]:
     """
     seen: set[int] = set()
     mixtures = _mixtures(run)
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Transfer) or moment.span.start in seen:
             continue

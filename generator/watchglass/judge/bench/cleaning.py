@@ -11,14 +11,14 @@ from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding
-from watchglass.judge.bench.run import Run, at, moments
+from watchglass.judge.bench.run import Run, at
 from watchglass.resolve import model
 from watchglass.run.bench.liquids import carrier
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
-    from watchglass.judge.bench.run import Moment
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 
@@ -35,7 +35,7 @@ def vessel_not_clean(run: Run) -> Iterator[Finding]:
     dried: set[str] = set()
     seen: set[str] = set()
     turn = 0
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         happening, event = moment.entry.happening, moment.entry.happening.event
         if happening.fresh and happening.turn > turn:
             turn = happening.turn

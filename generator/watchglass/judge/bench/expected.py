@@ -18,7 +18,6 @@ from watchglass.base.findings import Finding, Related
 from watchglass.catalogue.components import WATER
 from watchglass.judge.bench.ends import names_in
 from watchglass.judge.bench.mending import Washing, mended
-from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.judge.expected import at_desk
 from watchglass.read.syntax import Name, Words
 from watchglass.read.terms import After, Call, Compare, Held, Within
@@ -34,8 +33,9 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from watchglass.catalogue.substances import Substance
+    from watchglass.judge.bench.run import Run
     from watchglass.read.terms import Expression
-    from watchglass.run.bench.ledger import Ledger
+    from watchglass.run.bench.ledger import Ledger, Moment
     from watchglass.run.bench.state import Vessel
 
 
@@ -137,7 +137,7 @@ def _decided_at(run: Run, miss: Missed) -> Moment | None:
     held = _held(miss.line.expression)
     component = run.asked(miss.ledger).component(held[0]) if held is not None else None
     last = None
-    for moment in moments(miss.ledger):
+    for moment in miss.ledger.moments:
         if moment.place >= until:
             break
         if not vessels and isinstance(event := moment.entry.happening.event, model.Operation):
@@ -195,7 +195,7 @@ def _culprit(run: Run, miss: Missed) -> Finding | None:
     until = miss.ledger.labels.get(label, len(miss.ledger.entries))
     draws = [
         moment
-        for moment in moments(miss.ledger)
+        for moment in miss.ledger.moments
         if moment.place < until and _drawn_into(moment, vessel)
     ]
     weak = _too_weak(run, miss, draws, component)
@@ -279,7 +279,7 @@ def _reagents(run: Run, draws: list[Moment]) -> list[tuple[Moment, str]]:
         if isinstance(event := moment.entry.happening.event, model.Transfer | model.Aliquot)
     }
     found: dict[str, Moment] = {}
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         if moment.place > draws[-1].place:
             break
         event = moment.entry.happening.event

@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING, NamedTuple
 from watchglass.base import codes
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding, Related
-from watchglass.judge.bench.run import Moment, Run, filled_by, moments
+from watchglass.judge.bench.run import Run, filled_by
 from watchglass.resolve import model
 from watchglass.run.bench.figures import volume_words
 from watchglass.run.bench.mixing import gas_volume_of
@@ -15,7 +15,7 @@ from watchglass.run.bench.mixing import gas_volume_of
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
-    from watchglass.run.bench.ledger import Ledger
+    from watchglass.run.bench.ledger import Ledger, Moment
     from watchglass.run.bench.state import Vessel
 
 _SHAKEN = frozenset(("shake",))
@@ -35,7 +35,7 @@ def overfilled(run: Run) -> Iterator[Finding]:
     """Report the first time that a vessel holds more than its nominal volume, one a vessel."""
     ledger = run.high
     seen: set[str] = set()
-    for moment in moments(ledger):
+    for moment in ledger.moments:
         for was, after in moment.vessels():
             size = after.capacity
             if size is None or after.name in seen or after.volume <= size * (1 + 1e-6):
@@ -69,7 +69,7 @@ def too_full(run: Run) -> Iterator[Finding]:
     ledger = run.high
     seen: set[str] = set()
     gassing = _gassing(run, ledger)
-    for moment in moments(ledger):
+    for moment in ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Operation) or event.object is None:
             continue
@@ -108,7 +108,7 @@ def _limit(run: Run, verb: str, vessel: Vessel, *, gas: bool) -> Limit | None:
 def _gassing(run: Run, ledger: Ledger) -> set[tuple[str, int]]:
     """Give vessel and entry wherever gas worth a word comes off."""
     found = set()
-    for moment in moments(ledger):
+    for moment in ledger.moments:
         for result in moment.entry.results:
             if gas_volume_of(result.outcome) >= run.limit("gas-worth-a-word"):
                 found.add((result.vessel, moment.place))

@@ -7,16 +7,16 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding
-from watchglass.judge.bench.run import Run, moments
 from watchglass.resolve import model
 from watchglass.run.bench.figures import share_words
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
-    from watchglass.judge.bench.run import Moment
+    from watchglass.judge.bench.run import Run
     from watchglass.read import syntax
     from watchglass.run.bench.knowledge import Thing
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 _FUNNEL = "separatory-funnel"
@@ -32,7 +32,7 @@ _SOAPY = 1.0
 def solid_in_funnel(run: Run) -> Iterator[Finding]:
     """Report a layer that is drawn from a separatory funnel while a solid stands in it."""
     seen: set[str] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         place = _drawn_from(moment)
         name = moment.entry.happening.name(place.name.text) if place is not None else ""
         if place is None or not place.part or name in seen or not _is_funnel(run, name):
@@ -71,7 +71,7 @@ def _solids(run: Run, vessel: Vessel) -> list[tuple[str, float]]:
 def emulsion_to_expect(run: Run) -> Iterator[Finding]:
     """Report two layers that are shaken with a soap between them."""
     seen: set[str] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Operation) or event.verb != "shake" or event.object is None:
             continue

@@ -6,13 +6,14 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding
-from watchglass.judge.bench.run import Moment, Run, at, filled_by, moments
+from watchglass.judge.bench.run import Run, at, filled_by
 from watchglass.run.bench.figures import volume_words
 from watchglass.run.bench.mixing import gas_volume_of
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 CLOSED = frozenset(("stoppered",))
@@ -22,7 +23,7 @@ def gas_in_closed_vessel(run: Run) -> Iterator[Finding]:
     """Report gas that comes off while its vessel is stoppered; one a place."""
     seen: set[int] = set()
     for ledger in run.ledgers:
-        for moment in moments(ledger):
+        for moment in ledger.moments:
             for result in moment.entry.results:
                 gas = gas_volume_of(result.outcome)
                 vessel = moment.entry.bench.vessel(result.vessel)

@@ -8,14 +8,15 @@ from watchglass.base import codes
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding
 from watchglass.judge.bench.gas import CLOSED
-from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.resolve import model
 from watchglass.run.bench.ledger import Warmed
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
+    from watchglass.judge.bench.run import Run
     from watchglass.run.bench.knowledge import Thing
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 _HEATING = frozenset(("heat", "warm", "boil", "reflux", "distil", "evaporate"))
@@ -27,7 +28,7 @@ _WARM = 303.15
 def heated_while_closed(run: Run) -> Iterator[Finding]:
     """Report stoppered vessels that are heated."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event, vessel = _heated(moment)
         if event is None or vessel is None or moment.span.start in seen:
             continue
@@ -44,7 +45,7 @@ def heated_while_closed(run: Run) -> Iterator[Finding]:
 def hotter_than_it_boils(run: Run) -> Iterator[Finding]:
     """Report liquids heated above the boiling point of a main part of them without a condenser."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event, vessel = _heated(moment)
         if (
             event is None
@@ -70,7 +71,7 @@ def hotter_than_it_boils(run: Run) -> Iterator[Finding]:
 def heat_without_cooling(run: Run) -> Iterator[Finding]:
     """Report acts that warm their vessel more than is left to itself, with no bath to take it up."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         for result in moment.entry.results:
             warmed = result.outcome
             if not isinstance(warmed, Warmed) or moment.span.start in seen:

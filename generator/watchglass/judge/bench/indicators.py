@@ -15,7 +15,6 @@ from watchglass.base.figures import shown
 from watchglass.base.findings import Finding
 from watchglass.chemistry.equilibrium import solve, unknown_ratios
 from watchglass.chemistry.reagents import volume_to_ph, with_reagent
-from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.read import syntax
 from watchglass.resolve import model
 from watchglass.run.bench.figures import volume_words
@@ -29,12 +28,14 @@ if TYPE_CHECKING:
     from watchglass.base.quantities import Quantity
     from watchglass.catalogue.stocks import Indicator
     from watchglass.chemistry.equilibrium import PhaseSystem
+    from watchglass.judge.bench.run import Run
+    from watchglass.run.bench.ledger import Moment
 
 
 def indicator_elsewhere(run: Run) -> Iterator[Finding]:
     """Report titrations whose indicator changes before or after the equivalence point, or slowly."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Operation) or event.verb != "titrate":
             continue
@@ -46,9 +47,9 @@ def indicator_elsewhere(run: Run) -> Iterator[Finding]:
             continue
         if added.stated or event.object is None:
             continue
+        seen.add(moment.span.start)  # further passes are like the first
         finding = _elsewhere(run, moment, event, indicator, added.volume)
         if finding is not None:
-            seen.add(moment.span.start)
             yield finding
 
 

@@ -6,7 +6,6 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding
-from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.read import syntax
 from watchglass.resolve import model
 from watchglass.run.bench.figures import volume_words
@@ -16,6 +15,8 @@ from watchglass.run.bench.ledger import Moved
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
+    from watchglass.judge.bench.run import Run
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 #: Less than is missing by rounding, m3 (1 µL).
@@ -39,7 +40,7 @@ def drawn_from_nothing(run: Run) -> Iterator[Finding]:
     before: what would have come from there, or a titre that took more than the burette had.
     """
     told: set[str] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         told |= _overdrawn(moment)
         moves = [r.outcome for r in moment.entry.results if isinstance(r.outcome, Moved)]
         for moved in moves:
@@ -134,7 +135,7 @@ def _delivers(run: Run, name: str) -> bool:
 def no_such_layer(run: Run) -> Iterator[Finding]:
     """Report a layer that is named where there is one liquid only, or two that cannot be told apart."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         place = _place(moment)
         if place is None or place.part not in _LAYERED or moment.span.start in seen:
             continue

@@ -6,7 +6,7 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding
-from watchglass.judge.bench.run import Run, at, filled_by, moments
+from watchglass.judge.bench.run import Run, at, filled_by
 from watchglass.resolve import model
 from watchglass.run.bench.figures import ph_words
 from watchglass.run.bench.mixing import mix
@@ -21,7 +21,7 @@ _ACID, _NOT_ACID = 3.0, 6.5
 def opposites_poured_together(run: Run) -> Iterator[Finding]:
     """Report layers drawn from an extraction into a vessel that holds the opposite."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Transfer) or event.origin.part is None:
             continue

@@ -6,7 +6,6 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Related
-from watchglass.judge.bench.run import Run, moments
 from watchglass.resolve import model
 from watchglass.run.bench.ledger import Taken
 
@@ -14,6 +13,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from watchglass.base.spans import Span
+    from watchglass.judge.bench.run import Run
     from watchglass.run.bench.state import Vessel
 
 _CONCENTRATED = frozenset(("evaporate", "distil"))
@@ -29,7 +29,7 @@ def peroxide_former_concentrated(run: Run) -> Iterator[Finding]:
     """
     brought: dict[str, Span] = {}
     told: set[str] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         for result in moment.entry.results:
             if isinstance(result.outcome, Taken):

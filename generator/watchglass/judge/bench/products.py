@@ -8,7 +8,6 @@ from watchglass.base import codes
 from watchglass.base.findings import Finding, Related
 from watchglass.catalogue.components import WATER
 from watchglass.judge.bench.ends import asked_for, kept
-from watchglass.judge.bench.run import Run, moments
 from watchglass.resolve import model
 from watchglass.run.bench.figures import share_words
 from watchglass.run.bench.ledger import Moved, Reacted
@@ -16,7 +15,8 @@ from watchglass.run.bench.ledger import Moved, Reacted
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
-    from watchglass.judge.bench.run import Moment
+    from watchglass.judge.bench.run import Run
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Sink, Vessel
 
 #: Sinks from which a product may still be had: passes whose vessels were set aside.
@@ -60,7 +60,7 @@ def product_not_collected(run: Run) -> Iterator[Finding]:
 def _made(run: Run) -> dict[str, tuple[Moment, tuple[str, ...]]]:
     """Give, for each preparation that ran, the moment and its organic products."""
     made: dict[str, tuple[Moment, tuple[str, ...]]] = {}
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         for result in moment.entry.results:
             done = result.outcome
             if not isinstance(done, Reacted) or done.why or not done.extent:
@@ -126,7 +126,7 @@ def _speaks_of_ends(run: Run) -> bool:
 
 def _last_into(run: Run, place: str) -> Moment | None:
     found = None
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         for result in moment.entry.results:
             if isinstance(result.outcome, Moved) and result.outcome.target == place:
                 found = moment

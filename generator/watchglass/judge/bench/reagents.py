@@ -7,7 +7,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.findings import Finding
 from watchglass.catalogue.components import PROTON, WATER
-from watchglass.judge.bench.run import Moment, Run, at, filled_by, moments
+from watchglass.judge.bench.run import Run, at, filled_by
 from watchglass.resolve import model
 from watchglass.run.bench.figures import ph_words
 from watchglass.run.bench.ledger import Added, Taken
@@ -15,6 +15,7 @@ from watchglass.run.bench.ledger import Added, Taken
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
+    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Phase
 
 _NO_AMOUNT = "no amount of it"
@@ -23,7 +24,7 @@ _NO_AMOUNT = "no amount of it"
 def adjusts_the_wrong_way(run: Run) -> Iterator[Finding]:
     """Report an adjustment that no amount of the reagent brings about."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         for result in moment.entry.results:
             added = result.outcome
             if (
@@ -49,7 +50,7 @@ def no_test_after_adjusting(run: Run) -> Iterator[Finding]:
     """Report adjusted vessels whose pH is never tested afterwards."""
     waiting: dict[str, Moment] = {}
     tested: set[str] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Operation) or event.object is None:
             continue
@@ -71,7 +72,7 @@ def no_test_after_adjusting(run: Run) -> Iterator[Finding]:
 def water_into_acid(run: Run) -> Iterator[Finding]:
     """Report water or a dilute solution that is poured into a concentrated acid or base."""
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Charge) or moment.span.start in seen:
             continue

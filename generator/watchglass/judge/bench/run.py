@@ -8,14 +8,13 @@ from watchglass.base.findings import Related
 from watchglass.run.bench.asked import Asked
 
 if TYPE_CHECKING:
-    from collections.abc import Iterator, Mapping
+    from collections.abc import Mapping
 
-    from watchglass.base.spans import Span
     from watchglass.judge.case import Case
     from watchglass.resolve.laboratory import Laboratory
     from watchglass.run.bench.knowledge import Knowledge
-    from watchglass.run.bench.ledger import Entry, Ledger
-    from watchglass.run.bench.state import Bench, Vessel
+    from watchglass.run.bench.ledger import Ledger, Moment
+    from watchglass.run.bench.state import Vessel
 
 
 class Sample(NamedTuple):
@@ -66,34 +65,6 @@ class Run(NamedTuple):
         return self.laboratory.limit(name)
 
 
-class Moment(NamedTuple):
-    """An entry with the bench before it and its place in the ledger."""
-
-    place: int
-    entry: Entry
-    before: Bench
-
-    @property
-    def span(self) -> Span:
-        """Where its event is written."""
-        return self.entry.happening.event.span
-
-    def vessels(self) -> Iterator[tuple[Vessel, Vessel]]:
-        """Give the vessels that the event changed: as they were, and as they are."""
-        for name, after in self.entry.bench.vessels.items():
-            was = self.before.vessels.get(name)
-            if after is not was:
-                yield was if was is not None else after.emptied(), after
-
-
-def moments(ledger: Ledger) -> Iterator[Moment]:
-    """Go through a ledger with the bench before each entry."""
-    before = ledger.start
-    for place, entry in enumerate(ledger.entries):
-        yield Moment(place, entry, before if entry.since is None else entry.since)
-        before = entry.bench
-
-
 def at(moment: Moment, words: str) -> Related:
     """Point to the event of a moment."""
     return Related(moment.span, words)
@@ -102,7 +73,7 @@ def at(moment: Moment, words: str) -> Related:
 def filled_by(ledger: Ledger, index: int, vessel: str) -> tuple[Moment, ...]:
     """Give the moments at which something came into a vessel, since it was last empty."""
     found: list[Moment] = []
-    for moment in moments(ledger):
+    for moment in ledger.moments:
         if moment.place > index:
             break
         for was, after in moment.vessels():

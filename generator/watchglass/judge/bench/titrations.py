@@ -6,7 +6,6 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Related
-from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.read import syntax
 from watchglass.resolve import model
 from watchglass.run.bench.figures import share_words, volume_words
@@ -15,12 +14,15 @@ from watchglass.run.bench.ledger import Added
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
+    from watchglass.judge.bench.run import Run
+    from watchglass.run.bench.ledger import Moment
+
 
 def titre_out_of_range(run: Run) -> Iterator[Finding]:
     """Report titres that a burette cannot give in one filling, or only with a poor reading."""
     seen: set[int] = set()
     for ledger in run.ledgers:
-        for moment in moments(ledger):
+        for moment in ledger.moments:
             event = moment.entry.happening.event
             if not isinstance(event, model.Operation) or event.verb != "titrate":
                 continue

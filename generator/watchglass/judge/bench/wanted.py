@@ -6,7 +6,6 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding, Related
-from watchglass.judge.bench.run import Moment, Run, moments
 from watchglass.read.terms import After, Binary, Call, Compare, Held, Name, Negative, Within, Words
 from watchglass.resolve import model
 from watchglass.run.bench.figures import share_words
@@ -16,14 +15,16 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from watchglass.base.spans import Span
+    from watchglass.judge.bench.run import Run
     from watchglass.read.terms import Expression
+    from watchglass.run.bench.ledger import Moment
 
 
 def wanted_is_discarded(run: Run) -> Iterator[Finding]:
     """Report discarded layers with a share of what a later record or expectation asks for."""
     wanted = dict(_wanted(run))
     seen: set[int] = set()
-    for moment in moments(run.ledger):
+    for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Operation) or event.verb != "discard":
             continue

@@ -12,7 +12,16 @@ from watchglass.run.bench import acts, heat
 from watchglass.run.bench.branches import Branch, Branches, Kept, branches_at, dropped_branches
 from watchglass.run.bench.bringing import bring, carried_portion
 from watchglass.run.bench.layers import layers
-from watchglass.run.bench.ledger import Entry, Ledger, Moved, NotAssessed, Result, Taken, Warmed
+from watchglass.run.bench.ledger import (
+    Entry,
+    Ledger,
+    Moved,
+    NotAssessed,
+    Result,
+    Taken,
+    Warmed,
+    moments,
+)
 from watchglass.run.bench.liquids import mass_held, mass_of
 from watchglass.run.bench.mixing import Mixed, mix
 from watchglass.run.bench.pouring import Drawn, draw, drawn_from, pour
@@ -131,6 +140,7 @@ class Runner:
             tuple(self.titres),
             self.benches,
             self.bench,
+            tuple(moments(self.start, self.entries)),
         )
 
     # ------------------------------------------------------------------ events

@@ -7,11 +7,12 @@ from typing import TYPE_CHECKING, NamedTuple
 from watchglass.run.bench.state import NOTHING
 
 if TYPE_CHECKING:
-    from collections.abc import Mapping
+    from collections.abc import Iterable, Iterator, Mapping
 
+    from watchglass.base.spans import Span
     from watchglass.run.bench.layers import Layers
     from watchglass.run.bench.mixing import Mixed
-    from watchglass.run.bench.state import Bench
+    from watchglass.run.bench.state import Bench, Vessel
     from watchglass.run.passes import Happening
 
 
@@ -150,6 +151,34 @@ class Entry(NamedTuple):
     since: Bench | None = None
 
 
+class Moment(NamedTuple):
+    """An entry with the bench before it and its place in the ledger."""
+
+    place: int
+    entry: Entry
+    before: Bench
+
+    @property
+    def span(self) -> Span:
+        """Where its event is written."""
+        return self.entry.happening.event.span
+
+    def vessels(self) -> Iterator[tuple[Vessel, Vessel]]:
+        """Give the vessels that the event changed: as they were, and as they are."""
+        for name, after in self.entry.bench.vessels.items():
+            was = self.before.vessels.get(name)
+            if after is not was:
+                yield was if was is not None else after.emptied(), after
+
+
+def moments(start: Bench, entries: Iterable[Entry]) -> Iterator[Moment]:
+    """Go through entries with the bench before each."""
+    before = start
+    for place, entry in enumerate(entries):
+        yield Moment(place, entry, before if entry.since is None else entry.since)
+        before = entry.bench
+
+
 class Ledger(NamedTuple):
     """All that happened, oldest first.
 
@@ -164,6 +193,7 @@ class Ledger(NamedTuple):
         titres: Volume that each titration took, m3, with the number of entries before its end.
         benches: The bench at each label.
         final: The bench at the end, branches that are dropped left aside; None: after the last entry.
+        moments: The entries once more, each with the bench before it.
     """
 
     start: Bench
@@ -174,6 +204,7 @@ class Ledger(NamedTuple):
     titres: tuple[tuple[int, str, float | None], ...] = ()
     benches: Mapping[str, Bench] = {}
     final: Bench | None = None
+    moments: tuple[Moment, ...] = ()
 
     @property
     def end(self) -> Bench:
