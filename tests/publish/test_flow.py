@@ -249,6 +249,19 @@ def test_measured_share_has_a_box_of_its_own() -> None:
     assert ("10 mL of it", "Flask B") in arrows(found)
 
 
+def test_portions_from_a_burette_are_counted_beside_the_vessel() -> None:
+    found = flow(
+        step(
+            "Put {50 mL acid -> burette} in; weigh {0.5 g salt -> A}, add {20 mL water -> A}, {swirl A}.",
+            "Run in {2.50 mL from burette -> A}, {2.50 mL from burette -> A}, {5.00 mL from burette -> A};"
+            " {swirl A}, pour {A -> B}, {swirl B}.",
+        )
+    )
+
+    assert "2 × 2.50 mL from the burette | + 5.00 mL from the burette" in boxes(found)
+    assert [head for head, _ in arrows(found)].count("Burette") == 1
+
+
 def test_branch_that_is_dropped_is_not_drawn() -> None:
     found = flow(
         judged(

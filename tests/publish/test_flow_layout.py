@@ -198,6 +198,14 @@ def test_what_is_brought_in_late_stands_just_above_its_vessel() -> None:
     assert layout.boxes[3][1] == layout.boxes[1][1]
 
 
+def test_boxes_side_by_side_keep_their_order_but_for_the_longest_way() -> None:
+    # 0 leads to 1, 2 and 3; of these 1 and 3 lead on: 1 first, then as they come.
+    layout = laid_out([(50.0, 20.0)] * 6, [(0, 1), (0, 2), (0, 3), (1, 4), (3, 5)])
+    lefts = [layout.boxes[n][0] for n in (1, 2, 3)]
+
+    assert lefts == sorted(lefts)
+
+
 def test_drawing_of_nothing_is_empty() -> None:
     assert laid_out([], []).boxes == ()
 

@@ -5,6 +5,7 @@ from __future__ import annotations
 from typing import TYPE_CHECKING
 
 from watchglass.publish.model import SensitivityRow
+from watchglass.publish.text import NBSP
 from watchglass.run.bench.evaluator import reached_words
 from watchglass.run.bench.sensitivity import Bench, sensitivities
 
@@ -55,7 +56,7 @@ def _words(effect: Effect) -> str:
 
 
 def _input(effect: Effect) -> str:
-    change = "∓ 0.5 in log P" if effect.kind == "log P" else "∓ 10 %"
+    change = f"∓{NBSP}0.5 in log{NBSP}P" if effect.kind == "log P" else f"∓{NBSP}10{NBSP}%"
     return f"{_words(effect)}, {change}"
 
 

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections import Counter
 from typing import TYPE_CHECKING
 
 from watchglass.publish.flow.graph import KEPT, Flow, Kind, Node
@@ -131,7 +132,7 @@ def _in_order(desk: Desk, gone: set[int]) -> list[int]:
 def _node(draft: Draft, procedure: Procedure, components: tuple[str, ...], *, drawn: bool) -> Node:
     lines = [_brought(brought, procedure) for brought in draft.brought]
     if draft.kind is Kind.CHARGE:
-        lines += draft.lines
+        lines += _counted(draft.lines)
         lines = [*lines[:1], *(f"+{NBSP}{line}" for line in lines[1:])]
     head = draft.head
     if draft.kind is Kind.STAGE and draft.lines:
@@ -158,6 +159,12 @@ def _node(draft: Draft, procedure: Procedure, components: tuple[str, ...], *, dr
         components,
         fate,
     )
+
+
+def _counted(lines: Iterable[str]) -> list[str]:
+    """Count what is said several times over: `4 × 2.50 mL from the burette`."""
+    counts = Counter(lines)
+    return [f"{n}{NBSP}×{NBSP}{line}" if n > 1 else line for line, n in counts.items()]
 
 
 def _small(words: str) -> str:

@@ -150,7 +150,8 @@ def _as_walked(
                 continue
             met[node] = len(met)
             walk += [n for n in up[node] if n not in met]
-            walk += sorted(down[node], key=lambda n: (below[n], -n))
+            longest = max(down[node], key=lambda n: (below[n], -n), default=-1)
+            walk += sorted(down[node], key=lambda n: (n == longest, -n))  # the trunk first
     return [sorted(row, key=met.__getitem__) for row in rows]
 
 

@@ -29,6 +29,7 @@ from watchglass.run.bench.ledger import Added
 if TYPE_CHECKING:
     from collections.abc import Callable, Iterable
 
+    from watchglass.base.quantities import Quantity
     from watchglass.publish.flow.desk import Draft
     from watchglass.resolve.model import Procedure
     from watchglass.run.bench.ledger import Entry
@@ -53,6 +54,7 @@ class Tracer:
         self.desk = Desk(procedure)
         self.runs_into: dict[str, str] = {}
         self._driers: set[str] = set()
+        self._delivered: set[tuple[str, str]] = set()
         self._happening: Happening
         self._entry: Entry
 
@@ -112,6 +114,8 @@ class Tracer:
                 self._charge(event, self._name(target))
             case model.Transfer(origin, target, _, _):
                 self._transfer(event, origin, self._name(target))
+            case model.Aliquot(quantity, origin, target, _, _) if self._delivers(origin):
+                self._deliver(self._name(origin), self._name(target), quantity)
             case model.Aliquot(quantity, origin, target, _, _):
                 name = self._name(origin)
                 words = f"{plain(quantity_words(quantity))} of it"
@@ -125,6 +129,24 @@ class Tracer:
                     act(self, event, self._name(place))
             case _:
                 pass
+
+    def _delivers(self, origin: syntax.Place) -> bool:
+        """Tell whether portions come out of a burette or its like."""
+        vessel = self.procedure.vessels.get(self._name(origin))
+        type_ = vessel.type if vessel is not None else None
+        return type_ is not None and type_.type.measures == "delivers"
+
+    def _deliver(self, name: str, target: str, quantity: Quantity) -> None:
+        """Let a portion run in from a burette: told beside the vessel, with one arrow in all."""
+        holder = self.desk.holders.get(name)
+        if holder is None:
+            return
+        words = f"{plain(quantity_words(quantity))} from {place_name(name, self.procedure)}"
+        self.desk.say(target, words)
+        holder.drawn = True
+        if (name, target) not in self._delivered:
+            self._delivered.add((name, target))
+            self.desk.lead(holder.node, self.desk.opened(target))
 
     def _charge(self, event: model.Charge, target: str) -> None:
         below = self.runs_into.get(target)
