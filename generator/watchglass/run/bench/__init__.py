@@ -2,8 +2,8 @@
 
 `state` holds what a vessel is and holds; `knowledge` what is known of each component; `bringing`
 turns portions of materials into components; `liquids` sorts liquids into layers; `mixing` brings
-them to equilibrium; the other modules are the acts, each a function from a bench to a bench.
-`bench.run_bench` goes through a procedure's events and gives the `ledger`.
+them to equilibrium; `runner` is what acts are made of, `acts` has one function a verb, `said` what
+stands beside it. `bench.run_bench` goes through a procedure's events and gives the `ledger`.
 
 The model and its limits: layers are in equilibrium after mixing, at 25 °C, ideal, with additive
 volumes; only neutral forms partition, by a measured ratio or by octanol–water's; a liquid that makes

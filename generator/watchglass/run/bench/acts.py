@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING, NamedTuple
+from typing import TYPE_CHECKING
 
 from watchglass.base import dimensions as dim
 from watchglass.read import syntax
@@ -11,44 +11,17 @@ from watchglass.run.bench import adjusting, reacting, separating
 from watchglass.run.bench.layers import layers
 from watchglass.run.bench.ledger import Moved, NotAssessed, Reacted, Result, Supposed
 from watchglass.run.bench.pouring import draw, pour
+from watchglass.run.bench.said import Said
 from watchglass.run.bench.state import NOTHING, Phase, added
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping
 
-    from watchglass.base.quantities import Quantity
     from watchglass.resolve import model
-    from watchglass.run.bench.bench import Runner
+    from watchglass.run.bench.runner import Runner
     from watchglass.run.bench.state import Vessel
 
 _FLAMES = ("on steam", "with flame", "on hot plate")
-
-
-class Said(NamedTuple):
-    """The clauses of an operation by word."""
-
-    clauses: Mapping[str, syntax.ClauseValue]
-
-    def quantity(self, *words: str) -> Quantity | None:
-        """Give the quantity of the first of some clauses that has one."""
-        for word in words:
-            value = self.clauses.get(word)
-            if isinstance(value, syntax.Measured):
-                return value.quantity
-        return None
-
-    def place(self, *words: str) -> syntax.Place | None:
-        """Give the place that the first of some clauses names."""
-        for word in words:
-            value = self.clauses.get(word)
-            if isinstance(value, syntax.Place):
-                return value
-        return None
-
-    def words(self, word: str) -> str:
-        """Give the words of a clause, or nothing."""
-        value = self.clauses.get(word)
-        return value.text if isinstance(value, syntax.Words) else ""
 
 
 def act(runner: Runner, event: model.Operation) -> None:

@@ -19,9 +19,9 @@ if TYPE_CHECKING:
     from collections.abc import Mapping
 
     from watchglass.resolve import model
-    from watchglass.run.bench.acts import Said
-    from watchglass.run.bench.bench import Runner
     from watchglass.run.bench.mixing import Prepared
+    from watchglass.run.bench.runner import Runner
+    from watchglass.run.bench.said import Said
     from watchglass.run.bench.state import Phase, Vessel
 
 #: No more of a reagent is tried than this times what the vessel holds [-].
