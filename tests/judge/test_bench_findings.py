@@ -404,3 +404,36 @@ def test_flask_between_two_fractions_may_be_emptied_though_the_bench_puts_nothin
     )
 
     assert said == ["`spare` is empty here: nothing comes out of it"]
+
+
+# ---------------------------------------------------------------- gases of declared reactions
+
+
+GASES = """\
+materials:
+  acid: 2.0 M hydrochloric acid
+  zinc: zinc
+  peroxide: 3.0 % w/w hydrogen peroxide
+vessels:
+  A: conical flask 100 mL
+reactions:
+  hydrogen: "Zn + 2 H^+ -> Zn^2+ + H2"
+  oxygen: "2 H2O2 -> 2 H2O + O2"
+"""
+
+
+@pytest.mark.parametrize(
+    ("written", "volume"),
+    [
+        # 1.0 g of zinc (65.38 g/mol) gives 15.3 mmol of hydrogen: 374 mL at 25 °C.
+        ("{1.0 g zinc -> A} {30 mL acid -> A} {react hydrogen in A}", "370 mL"),
+        # 30 mL of 3.0 % w/w peroxide (1.01 g/mL) hold 26.7 mmol: half as much oxygen, 327 mL.
+        ("{30 mL peroxide -> A} {react oxygen in A}", "330 mL"),
+    ],
+)
+def test_hydrogen_and_oxygen_of_a_declared_reaction_are_gas(written: str, volume: str) -> None:
+    closed = written.replace("} {react", "} {swirl A, stoppered} {react")
+
+    (said,) = found("B122", GASES, closed + " {collect A}")
+    assert volume in said
+    assert found("B122", GASES, written + " {collect A}") == []

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import pytest
 
+from bench_runner import ran
 from builders import judged, steps
 
 FRONT = """\
@@ -145,3 +146,34 @@ def test_boiling_drives_carbon_dioxide_out() -> None:
     assert entry.run is not None
     air = entry.run.ledger.end.sinks["air"].liquids["carbon-dioxide"]
     assert air == pytest.approx(4.99e-3, abs=0.03e-3)
+
+
+SILVER = """\
+materials:
+  sample: sodium chloride
+  silver: 0.20 M silver nitrate
+  water: water
+vessels:
+  A: beaker 400 mL
+  paper: Hirsch funnel 60 mm
+  filtrate: filter flask 500 mL
+reactions:
+  fall: "NaCl + AgNO3 -> AgCl + NaNO3"
+"""
+
+
+@pytest.mark.parametrize("volume", [20, 100])
+def test_precipitate_is_counted_as_the_solid_whatever_else_brings_its_ions(volume: int) -> None:
+    # 0.2000 g of NaCl (58.44 g/mol) is 3.422 mmol, as AgCl (143.32 g/mol) 0.4905 g.
+    asked = ran(
+        f"{{0.2000 g sample -> A}} {{150 mL water -> A}} {{{volume} mL silver -> A}} {{react fall in A}}",
+        "{filter A on paper into filtrate}",
+        front=SILVER,
+    )
+    end = asked.ledger.end
+    share, mass = (f("silver-chloride", "paper", end) for f in (asked.share, asked.recovered))
+
+    assert share.value == pytest.approx(1.0, abs=2e-3)
+    assert mass.value == pytest.approx(0.4905e-3, rel=2e-3)  # a little stays dissolved
+    rest = asked.share("silver-chloride", "filtrate", end)
+    assert rest.value == 0.0

@@ -18,6 +18,10 @@ if TYPE_CHECKING:
     from watchglass.run.bench.ledger import Moment
 
 
+#: The last bits of a float decide nothing.
+_BIT = 1 - 1e-9
+
+
 def titre_out_of_range(run: Run) -> Iterator[Finding]:
     """Report titres that a burette cannot give in one filling, or only with a poor reading."""
     seen: set[int] = set()
@@ -36,7 +40,7 @@ def titre_out_of_range(run: Run) -> Iterator[Finding]:
                 if not isinstance(added, Added) or added.volume is None:
                     continue
                 least = run.limit("titre-least") * size
-                if least <= added.volume <= size or moment.span.start in seen:
+                if least * _BIT <= added.volume <= size / _BIT or moment.span.start in seen:
                     continue
                 seen.add(moment.span.start)
                 small = added.volume < least

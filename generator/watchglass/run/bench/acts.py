@@ -118,6 +118,8 @@ def _react(runner: Runner, event: model.Operation, said: Said) -> None:
     for key, amount in done.made.items():
         for part, count in runner.known.parts(key).items():
             runner.formed[part] = runner.formed.get(part, 0.0) + count * amount
+        if key not in runner.known.parts(key):  # a salt: its ions may come with others as well
+            runner.formed[key] = runner.formed.get(key, 0.0) + amount
     runner.put(done.vessel)
     runner.say(vessel.name, Reacted(reaction.name, done.extent, done.limiting, done.why))
     if not done.why:

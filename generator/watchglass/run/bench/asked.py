@@ -61,6 +61,10 @@ class Asked(NamedTuple):
         held = self._held(component, bench.vessel(vessel))
         if held.value is None:
             return held
+        salt = self._formed_salt(what)
+        if salt is not None:
+            there = bench.vessel(vessel).solid.get(salt, 0.0)
+            return Answer(there / self.ledger.formed[salt])
         whole = self.ledger.charged.get(component, 0.0) + self.ledger.formed.get(component, 0.0)
         if whole <= 0:
             return Answer(None, f"no {self.known.thing(component).name} was brought or formed")
@@ -72,7 +76,10 @@ class Asked(NamedTuple):
         if component is None:
             return Answer(None, f"`{what}` is not one substance")
         held = self._held(component, bench.vessel(vessel))
-        molar_mass = self.known.thing(component).molar_mass
+        salt = self._formed_salt(what)
+        if salt is not None and held.value is not None:
+            held = Answer(bench.vessel(vessel).solid.get(salt, 0.0))
+        molar_mass = self.known.thing(salt or component).molar_mass
         if held.value is None or molar_mass is None:
             return held if held.value is None else Answer(None, "its formula is not known")
         return Answer(held.value * molar_mass)
@@ -120,6 +127,13 @@ class Asked(NamedTuple):
         if component in vessel.doubt:
             return Answer(None, f"where the {name} went cannot be told: a constant is missing")
         return Answer(amount_in(component, vessel, self.known))
+
+    def _formed_salt(self, what: str) -> str | None:
+        """Give the key of a salt that a reaction forms: it is counted as the solid, not by its ions."""
+        substance = self.known.catalogue.find(what)
+        if substance is None or self.ledger.formed.get(substance.key, 0.0) <= 0:
+            return None
+        return None if substance.key in self.known.parts(substance.key) else substance.key
 
     def component(self, what: str) -> str | None:
         """Give the one component, no ion and no water, that a substance or material stands for."""

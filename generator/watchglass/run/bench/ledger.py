@@ -189,7 +189,7 @@ class Ledger(NamedTuple):
         charged: Moles of each component and of each solid substance that were brought, by key of
             the substance as its components (`H^+` included).
         formed: Theoretical yield of each product, mol: what its reaction would give if it ran to
-            the end on what was there.
+            the end on what was there; by its components, and of a salt by its key as well.
         titres: Volume that each titration took, m3, with the number of entries before its end.
         benches: The bench at each label.
         final: The bench at the end, branches that are dropped left aside; None: after the last entry.

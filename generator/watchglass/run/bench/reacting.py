@@ -71,7 +71,7 @@ def react(vessel: Vessel, reaction: model.Reaction, conversion: float, known: Kn
     """
     left, right = terms(reaction.left, known), terms(reaction.right, known)
     if left is None or right is None or not reaction.balanced:
-        return Run(vessel, 0.0, 0.0, "", {}, "a substance of its equation is not known")
+        return Run(vessel, 0.0, 0.0, "", {}, _why_not(reaction, known))
     there = added(vessel.aqueous.amounts, vessel.organic.amounts)
     limiting, whole = "", float("inf")
     for key, coefficient, parts in left:
@@ -95,6 +95,15 @@ def react(vessel: Vessel, reaction: model.Reaction, conversion: float, known: Kn
         gained = added(gained, parts, coefficient * extent - falls)
     after = _given(vessel, gained, known)
     return Run(after._replace(solid=added(after.solid, fallen)), extent, whole, limiting, made)
+
+
+def _why_not(reaction: model.Reaction, known: Knowledge) -> str:
+    """Say which substance of an equation the bench does not know."""
+    terms_of = (*reaction.left, *reaction.right)
+    missing = [f"`{term.written}`" for term in terms_of if key_of(term, known) is None]
+    if not missing:
+        return "its equation does not balance"
+    return f"the catalogue does not know {' and '.join(missing)} of its equation"
 
 
 def _falls(
