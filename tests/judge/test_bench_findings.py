@@ -437,3 +437,40 @@ def test_hydrogen_and_oxygen_of_a_declared_reaction_are_gas(written: str, volume
     (said,) = found("B122", GASES, closed + " {collect A}")
     assert volume in said
     assert found("B122", GASES, written + " {collect A}") == []
+
+
+# ---------------------------------------------------------------- what comes in by pouring; the order of tests
+
+
+STRONG = """\
+materials:
+  acid: 98 % w/w sulfuric acid
+  weak: 1.0 M hydrochloric acid
+  base: 1.0 M sodium hydroxide
+  water: water
+vessels:
+  A: beaker 250 mL
+  B: beaker 250 mL
+"""
+
+
+def test_water_poured_over_from_another_vessel_into_acid_is_found() -> None:
+    said = found("B131", STRONG, "{20 mL acid -> A} {50 mL water -> B} {B -> A} {collect A}")
+
+    assert said == ["water is poured into concentrated sulfuric acid in `A`"]
+
+
+def test_acid_poured_over_into_water_is_in_order() -> None:
+    assert not found("B131", STRONG, "{20 mL acid -> A} {50 mL water -> B} {A -> B} {collect B}")
+
+
+@pytest.mark.parametrize(
+    ("written", "wrong"),
+    [
+        ("{test A ph} {adjust A to pH 7 with base}", True),
+        ("{adjust A to pH 7 with base} {test A ph}", False),
+        ("{adjust A to pH 5 with base} {test A ph} {adjust A to pH 7 with base}", True),
+    ],
+)
+def test_ph_is_tested_after_the_adjustment_and_not_before(written: str, *, wrong: bool) -> None:
+    assert bool(found("X106", STRONG, "{20 mL weak -> A}", written + " {collect A}")) is wrong

@@ -7,6 +7,7 @@ from __future__ import annotations
 
 import pytest
 
+from bench_runner import ran
 from run.bench.shelf import LITRE, REAL, SHELF, litres
 from watchglass.run.bench.layers import aqueous_density, layers, organic_density
 from watchglass.run.bench.liquids import carrier, liquid_volume, mass_of, sort
@@ -61,10 +62,36 @@ def test_solute_in_twice_the_volume_counts_half() -> None:
     assert aqueous_density(thin, SHELF) == pytest.approx(998.2 + 25.0, abs=0.01)
 
 
-def test_acid_counts_by_its_anion_alone() -> None:
+def test_hydrogen_ion_makes_water_lighter_and_hydroxide_heavier() -> None:
     acid = Phase({**LITRE.amounts, "H^+": 5.0}, 1e-3)
+    alkali = Phase({**LITRE.amounts, "H^+": -5.0}, 1e-3)
 
-    assert aqueous_density(acid, SHELF) == pytest.approx(998.2)
+    assert aqueous_density(acid, SHELF) == pytest.approx(998.2 - 35.0)
+    assert aqueous_density(alkali, SHELF) == pytest.approx(998.2 + 87.5)
+
+
+@pytest.mark.parametrize(
+    ("written", "published"),
+    [
+        # g/mL at 20 °C; CRC Handbook, the last two from memory.
+        ("6.0 M sodium hydroxide", 1.216),
+        ("10 % w/w sodium hydroxide", 1.109),
+        ("40 % w/w sodium hydroxide", 1.430),
+        ("6.0 M hydrochloric acid", 1.098),
+        ("3.0 M hydrochloric acid", 1.049),
+        ("6.0 M ammonia", 0.955),
+        ("saturated sodium chloride", 1.197),
+        ("5.0 % w/v sodium hydrogencarbonate", 1.034),
+        ("20 % w/w potassium carbonate", 1.190),
+        ("1.0 M ammonium chloride", 1.014),
+    ],
+)
+def test_density_of_a_solution_is_near_the_published_one(written: str, published: float) -> None:
+    front = f"materials: {{x: {written}}}\nvessels: {{A: beaker 100 mL}}\n"
+    asked = ran("{50 mL x -> A} {swirl A, open}", front=front)
+
+    found = aqueous_density(asked.ledger.end.vessel("A").aqueous, asked.known)
+    assert found / 1000 == pytest.approx(published, abs=0.04)
 
 
 def test_spirit_thins_water_by_volume() -> None:

@@ -10,7 +10,7 @@ from watchglass.catalogue.components import PROTON, WATER
 from watchglass.judge.bench.run import Run, at, filled_by
 from watchglass.resolve import model
 from watchglass.run.bench.figures import ph_words
-from watchglass.run.bench.ledger import Added, Taken
+from watchglass.run.bench.ledger import Added, Moved, Taken
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
@@ -49,18 +49,18 @@ def adjusts_the_wrong_way(run: Run) -> Iterator[Finding]:
 def no_test_after_adjusting(run: Run) -> Iterator[Finding]:
     """Report adjusted vessels whose pH is never tested afterwards."""
     waiting: dict[str, Moment] = {}
-    tested: set[str] = set()
+    tested: dict[str, int] = {}
     for moment in run.ledger.moments:
         event = moment.entry.happening.event
         if not isinstance(event, model.Operation) or event.object is None:
             continue
         name = moment.entry.happening.name(event.object.name.text)
         if event.verb == "adjust":
-            waiting.setdefault(name, moment)
+            waiting[name] = moment
         elif event.verb == "test" and event.subject == "ph":
-            tested.add(name)
+            tested[name] = moment.place
     for name, moment in waiting.items():
-        if name not in tested:
+        if tested.get(name, -1) < moment.place:
             yield Finding(
                 code=codes.NO_PH_TEST,
                 span=moment.span,
@@ -74,12 +74,15 @@ def water_into_acid(run: Run) -> Iterator[Finding]:
     seen: set[int] = set()
     for moment in run.ledger.moments:
         event = moment.entry.happening.event
-        if not isinstance(event, model.Charge) or moment.span.start in seen:
+        if (
+            not isinstance(event, model.Charge | model.Transfer | model.Aliquot)
+            or moment.span.start in seen
+        ):
             continue
         name = moment.entry.happening.name(event.target.name.text)
         vessel = moment.before.vessel(name)
         what = _concentrated(run, vessel.aqueous) or _concentrated(run, vessel.organic)
-        if not what or not any(isinstance(r.outcome, Taken) for r in moment.entry.results):
+        if not what or not any(isinstance(r.outcome, Taken | Moved) for r in moment.entry.results):
             continue
         after = moment.entry.bench.vessel(name)
         brought = after.aqueous.plus(after.organic).amounts.get(WATER, 0.0) - (
@@ -87,7 +90,12 @@ def water_into_acid(run: Run) -> Iterator[Finding]:
         )
         if brought * 18.015e-3 < 0.2e-3:
             continue
-        if event.portions and _concentrated_portion(run, event.portions[0]):
+        if isinstance(event, model.Charge):
+            if event.portions and _concentrated_portion(run, event.portions[0]):
+                continue
+        elif _concentrated(
+            run, moment.before.vessel(moment.entry.happening.name(event.origin.name.text)).aqueous
+        ):
             continue
         seen.add(moment.span.start)
         yield Finding(

@@ -25,6 +25,9 @@ _ORGANIC_SOLUTE = 0.3
 _AQUEOUS_SOLUTE = 0.5
 #: Ions add more than molecules: about their mass less the volume they take.
 _ION_SOLUTE = 0.68
+#: What a hydroxide ion adds and a hydrogen ion takes, kg/mol, and ammonia takes per mass [-]: fitted
+#: to the densities of 6 M sodium hydroxide, hydrochloric acid and ammonia (`densities.yml`).
+_HYDROXIDE, _HYDROGEN, _AMMONIA = 0.0175, 0.007, 0.42
 #: Expansion, kg/m3/K: most liquids; liquids denser than water with halogen.
 _EXPANSION, _HALOGENATED = 1.1, 1.9
 
@@ -85,13 +88,18 @@ def aqueous_density(phase: Phase, known: Knowledge) -> float:
     liquids, raised = water / 998.2, 0.0
     mass = water
     for key, amount in phase.amounts.items():
-        if key in (WATER, PROTON):
+        if key == WATER:
+            continue
+        if key == PROTON:
+            raised -= amount * (_HYDROXIDE if amount < 0 else _HYDROGEN)
             continue
         thing = known.thing(key)
         weight = amount * (thing.molar_mass or 0.0)
         if thing.liquid and thing.density:
             liquids += weight / thing.density
             mass += weight
+        elif key == "ammonia":
+            raised -= weight * _AMMONIA
         else:
             raised += weight * (_ION_SOLUTE if thing.ion else _AQUEOUS_SOLUTE)
     if not liquids:
