@@ -900,3 +900,27 @@ def test_solid_that_is_stated_stays_one_when_it_is_poured_over() -> None:
     asked = bench(*STATED, "{A -> B} {swirl B, open}")
 
     assert vessel(asked, "B").solid["benzil"] == near(0.8 * 0.50e-3 / 0.210232)
+
+
+def test_layer_that_is_not_poured_through_a_filter_stays() -> None:
+    asked = bench(
+        "{20 mL water -> funnel} {20 mL ether -> funnel} {shake funnel; settle funnel}",
+        "{funnel.organic through cotton -> A}",
+    )
+
+    assert vessel(asked, "A").volume == near(20e-6)
+    assert vessel(asked, "funnel").volume == near(20e-6)
+
+
+def test_salt_gone_dry_is_not_adjusted() -> None:
+    asked = bench("{20 mL brine -> A} {evaporate A}", "{adjust A to pH 3 with acid}")
+
+    assert vessel(asked, "A").volume == 0
+
+
+def test_what_warms_itself_by_dissolving_is_mixed_anew() -> None:
+    # Sodium chloride takes next to no heat; benzoic acid dissolves at the temperature there is.
+    once = bench("{50 mL water -> A} {1.0 g benzoic -> A} {stir A}")
+    twice = bench("{50 mL water -> A} {1.0 g benzoic -> A} {stir A}", "{stir A}")
+
+    assert vessel(twice, "A").solid["benzoic-acid"] == near(vessel(once, "A").solid["benzoic-acid"])

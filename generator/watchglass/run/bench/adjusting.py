@@ -134,7 +134,7 @@ def _volume(
     runner: Runner, vessel: Vessel, reagent: Phase, wanted: float
 ) -> tuple[float | None, str]:
     """Give the volume of a reagent to a pH, or why it cannot be told."""
-    if not vessel.aqueous:
+    if vessel.aqueous.volume <= 0:
         return None, "there is no aqueous liquid in it"
     if vessel.unknown:
         return None, f"what {', '.join(sorted(vessel.unknown))} brings is not known"

@@ -152,10 +152,16 @@ class _Course(Runner):
             _, kept = self._kept.pop()
             self.bench, self.charged, self.formed = kept.bench, kept.charged, kept.formed
             self.runs_into, self.taken = dict(kept.runs_into), dict(kept.taken)
+            del self.titres[kept.titres :]
             self._since = self.bench
         for branch in path[common:]:
             kept = Kept(
-                self.bench, self.charged, dict(self.formed), dict(self.runs_into), dict(self.taken)
+                self.bench,
+                self.charged,
+                dict(self.formed),
+                dict(self.runs_into),
+                dict(self.taken),
+                len(self.titres),
             )
             self._kept.append((branch, kept))
 

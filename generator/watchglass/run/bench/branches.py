@@ -38,6 +38,7 @@ class Kept(NamedTuple):
     formed: dict[str, float]
     runs_into: dict[str, str]
     taken: dict[tuple[str, Dimension], float]
+    titres: int
 
 
 def dropped_branches(blocks: Iterable[syntax.Block]) -> Branches:

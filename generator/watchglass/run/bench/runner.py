@@ -113,12 +113,13 @@ class Runner:
         if last is not None and _untouched(vessel, last[0]):
             return self._mixed_again(vessel, *last)
         vessel, mixed = mix(vessel, self.known)
+        settled = vessel
         if mixed.dissolved and vessel.aqueous:
             vessel = self._warm(vessel, heat.on_dissolving(vessel, mixed.dissolved, self.known))
         if mixed.gas:
             self.bench = self.bench.to_sink(AIR, liquids=(Phase(mixed.gas, 0.0),))
         self.put(vessel)
-        self._mixed[vessel.name] = vessel, mixed
+        self._mixed[vessel.name] = settled, mixed  # warmed by itself, it is mixed anew
         self.results.append(Result(vessel.name, mixed))
         return vessel
 
@@ -281,7 +282,7 @@ class Runner:
         left, drawn = draw(origin, "liquid" if keep_solids and not which else which)
         if keep_solids:
             self.bench = self.bench.to_sink("filter", solids=left.solid)
-            left = left.emptied()
+            left = left._replace(solid=NOTHING) if left.volume else left.emptied()
         nothing = not (drawn.aqueous or drawn.organic or drawn.solid or drawn.unknown)
         if found is not None and found.below and which in ("aqueous", "organic"):
             left = left._replace(remains="upper" if which == found.below else "lower")
