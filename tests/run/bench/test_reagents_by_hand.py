@@ -257,3 +257,18 @@ def test_titre_of_a_label_before_any_titration_is_unknown() -> None:
 
     assert asked.titre("begin") == Answer(None, "nothing is titrated before `begin`")
     assert asked.titre("nowhere") == Answer(None, "`nowhere` is never reached")
+
+
+def test_reagent_that_brings_more_of_what_is_there_reaches_its_ph() -> None:
+    # Benzoic acid lies at the bottom: what the reagent brings counts with it, under one solubility.
+    front = """\
+materials: {salt: 0.50 M sodium benzoate, acid: 1.0 M hydrochloric acid, thin: 0.10 M sodium benzoate}
+vessels: {A: beaker 1000 mL}
+"""
+    asked = ran(
+        "{20 mL salt -> A} {10 mL acid -> A} {stir A}",
+        "{adjust A to pH 5 with thin} {stir A}",
+        front=front,
+    )
+
+    assert asked.ledger.end.vessel("A").ph == pytest.approx(5.0, abs=1e-6)

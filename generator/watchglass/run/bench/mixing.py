@@ -250,7 +250,13 @@ def prepare(aqueous: Phase, organic: Phase, temperature: float, known: Knowledge
         )
         families.append(
             Family(
-                pkas=thing.pkas, top=thing.top, amount=total, ratio=ratio, cap=cap, gas=thing.gas
+                pkas=thing.pkas,
+                top=thing.top,
+                amount=total,
+                ratio=ratio,
+                cap=cap,
+                gas=thing.gas,
+                key=key,
             )
         )
         keys.append(key)
