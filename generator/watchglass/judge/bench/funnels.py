@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING
 from watchglass.base import codes
 from watchglass.base.figures import shown
 from watchglass.base.findings import Finding
+from watchglass.judge.bench.run import drawn_from
 from watchglass.resolve import model
 from watchglass.run.bench.figures import share_words
 
@@ -14,9 +15,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from watchglass.judge.bench.run import Run
-    from watchglass.read import syntax
     from watchglass.run.bench.knowledge import Thing
-    from watchglass.run.bench.ledger import Moment
     from watchglass.run.bench.state import Vessel
 
 _FUNNEL = "separatory-funnel"
@@ -33,7 +32,7 @@ def solid_in_funnel(run: Run) -> Iterator[Finding]:
     """Report a layer that is drawn from a separatory funnel while a solid stands in it."""
     seen: set[str] = set()
     for moment in run.ledger.moments:
-        place = _drawn_from(moment)
+        place = drawn_from(moment)
         name = moment.entry.happening.name(place.name.text) if place is not None else ""
         if place is None or not place.part or name in seen or not _is_funnel(run, name):
             continue
@@ -105,16 +104,6 @@ def _soap(thing: Thing, ph: float | None) -> bool:
     if not acid or aromatic or ph is None or (thing.ratio or 0.0) < _SOAP_RATIO:
         return False
     return ph > thing.pkas[0] + 1
-
-
-def _drawn_from(moment: Moment) -> syntax.Place | None:
-    match moment.entry.happening.event:
-        case model.Transfer(origin, _, _, _) | model.Aliquot(_, origin, _, _, _):
-            return origin
-        case model.Operation("discard", place):
-            return place
-        case _:
-            return None
 
 
 def _is_funnel(run: Run, name: str) -> bool:

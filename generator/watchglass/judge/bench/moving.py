@@ -6,6 +6,7 @@ from typing import TYPE_CHECKING
 
 from watchglass.base import codes
 from watchglass.base.findings import Finding
+from watchglass.judge.bench.run import drawn_from
 from watchglass.read import syntax
 from watchglass.resolve import model
 from watchglass.run.bench.figures import volume_words
@@ -136,7 +137,7 @@ def no_such_layer(run: Run) -> Iterator[Finding]:
     """Report a layer that is named where there is one liquid only, or two that cannot be told apart."""
     seen: set[int] = set()
     for moment in run.ledger.moments:
-        place = _place(moment)
+        place = drawn_from(moment)
         if place is None or place.part not in _LAYERED or moment.span.start in seen:
             continue
         vessel = moment.before.vessel(moment.entry.happening.name(place.name.text))
@@ -163,16 +164,6 @@ def _only(vessel: Vessel, part: str) -> bool:
     if part in ("upper", "lower"):
         return part == vessel.remains
     return bool(vessel.organic if part == "organic" else vessel.aqueous)
-
-
-def _place(moment: Moment) -> syntax.Place | None:
-    match moment.entry.happening.event:
-        case model.Transfer(origin, _, _, _) | model.Aliquot(_, origin, _, _, _):
-            return origin
-        case model.Operation("discard", place):
-            return place
-        case _:
-            return None
 
 
 def _one_liquid(run: Run, vessel: Vessel, place: syntax.Place) -> Finding:

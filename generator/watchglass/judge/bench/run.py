@@ -5,12 +5,14 @@ from __future__ import annotations
 from typing import TYPE_CHECKING, NamedTuple
 
 from watchglass.base.findings import Related
+from watchglass.resolve import model
 from watchglass.run.bench.asked import Asked
 
 if TYPE_CHECKING:
     from collections.abc import Mapping
 
     from watchglass.judge.case import Case
+    from watchglass.read import syntax
     from watchglass.resolve.laboratory import Laboratory
     from watchglass.run.bench.knowledge import Knowledge
     from watchglass.run.bench.ledger import Ledger, Moment
@@ -84,3 +86,14 @@ def filled_by(ledger: Ledger, index: int, vessel: str) -> tuple[Moment, ...]:
             if after.volume > was.volume + 1e-12:
                 found.append(moment)
     return tuple(found)
+
+
+def drawn_from(moment: Moment) -> syntax.Place | None:
+    """Give the vessel, and the part of it, that an act takes something out of."""
+    match moment.entry.happening.event:
+        case model.Transfer(origin, _, _, _) | model.Aliquot(_, origin, _, _, _):
+            return origin
+        case model.Operation("discard", place):
+            return place
+        case _:
+            return None
